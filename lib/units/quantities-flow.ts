@@ -1,0 +1,3 @@
+import type { Quantity } from "./quantities"
+
+export const flowQuantities = {} as const satisfies Record<string, Quantity>
