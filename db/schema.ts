@@ -1,0 +1,199 @@
+import type { ColumnType, Generated, JSONColumnType } from "kysely"
+
+/** The tables as the newest migration leaves them. */
+export interface Schema {
+  account: Account
+  app_user: AppUser
+  membership: Membership
+  session: Session
+  one_time_token: OneTimeToken
+  sign_in_failure: SignInFailure
+  api_key: ApiKey
+  usage_event: UsageEvent
+  usage_counter: UsageCounter
+  usage_hour: UsageHour
+  subscription: Subscription
+  invoice: Invoice
+  stripe_event: StripeEvent
+  widget: Widget
+  audit_log: AuditLog
+}
+
+export type AccountStatus = "active" | "suspended" | "closing"
+export type Role = "owner" | "developer" | "merchandiser" | "viewer"
+export type KeyKind = "server" | "browser"
+export type KeyMode = "live" | "sandbox"
+
+type Json = JSONColumnType<Record<string, unknown>>
+type CreatedAt = ColumnType<Date, Date | undefined, never>
+
+interface Account {
+  id: string
+  slug: string
+  name: string
+  plan: Generated<string>
+  /** Units that the account may spend in its current period: what is included, and what its owner allows beyond. */
+  unit_cap: Generated<number>
+  /** First instant of the subscription's first period; null: calendar months in UTC. */
+  period_anchor: Date | null
+  /** Most that the owner lets the account spend beyond its plan in a period, in cents. */
+  overage_cap_minor: Generated<number>
+  status: Generated<AccountStatus>
+  status_reason: string | null
+  stripe_customer_id: string | null
+  created_at: CreatedAt
+}
+
+interface AppUser {
+  id: string
+  email: string
+  name: string
+  password_hash: string | null
+  email_verified_at: Date | null
+  is_admin: Generated<boolean>
+  preferences: ColumnType<Record<string, unknown>, string | undefined, string>
+  created_at: CreatedAt
+}
+
+interface Membership {
+  account_id: string
+  user_id: string
+  role: Role
+  created_at: CreatedAt
+}
+
+interface Session {
+  token_digest: Buffer
+  id: string
+  user_id: string
+  created_at: CreatedAt
+  last_seen_at: Generated<Date>
+  expires_at: Date
+  stepped_up_at: Date | null
+  ip: string | null
+  user_agent: string | null
+}
+
+interface OneTimeToken {
+  digest: Buffer
+  purpose: "verify_email" | "reset_password" | "sign_in" | "invite"
+  email: string
+  payload: ColumnType<Record<string, unknown>, string | undefined, string>
+  created_at: CreatedAt
+  expires_at: Date
+  used_at: Date | null
+}
+
+interface SignInFailure {
+  id: Generated<number>
+  email: string
+  ip: string | null
+  at: Generated<Date>
+}
+
+interface ApiKey {
+  account_id: string
+  id: string
+  kind: KeyKind
+  mode: KeyMode
+  name: string
+  digest: Buffer
+  pepper_version: number
+  last4: string
+  scopes: string[]
+  origins: Generated<string[]>
+  cidrs: Generated<string[]>
+  created_by: string | null
+  created_at: CreatedAt
+  expires_at: Date | null
+  last_used_at: Date | null
+  revoked_at: Date | null
+  revoked_by: string | null
+  revoked_reason: string | null
+  successor_id: string | null
+}
+
+interface UsageEvent {
+  account_id: string
+  at: Generated<Date>
+  id: string
+  key_id: string
+  mode: KeyMode
+  operation: string
+  units: number
+  engine_version: string
+  request_id: string
+}
+
+interface UsageCounter {
+  account_id: string
+  mode: KeyMode
+  period_start: Date
+  period_end: Date
+  units: Generated<number>
+}
+
+interface UsageHour {
+  account_id: string
+  hour: Date
+  mode: KeyMode
+  operation: string
+  key_id: string
+  calls: number
+  units: number
+}
+
+interface Subscription {
+  account_id: string
+  stripe_subscription_id: string
+  plan: string
+  status: string
+  current_period_start: Date
+  current_period_end: Date
+  cancel_at_period_end: Generated<boolean>
+  updated_at: Generated<Date>
+}
+
+interface Invoice {
+  account_id: string
+  id: string
+  number: string | null
+  status: string
+  amount_minor: number
+  currency: string
+  hosted_url: string | null
+  issued_at: Date
+}
+
+interface StripeEvent {
+  id: string
+  type: string
+  payload: Json
+  received_at: Generated<Date>
+  processed_at: Date | null
+}
+
+interface Widget {
+  account_id: string
+  id: string
+  calculator: string
+  name: string
+  origins: Generated<string[]>
+  settings: ColumnType<Record<string, unknown>, string | undefined, string>
+  created_at: CreatedAt
+  updated_at: Generated<Date>
+  disabled_at: Date | null
+}
+
+interface AuditLog {
+  account_id: string
+  id: string
+  at: Generated<Date>
+  actor_kind: "user" | "admin" | "key" | "system"
+  actor_id: string | null
+  action: string
+  target: string | null
+  detail: ColumnType<Record<string, unknown>, string | undefined, never>
+  ip: string | null
+  request_id: string | null
+}
