@@ -46,3 +46,40 @@ export function surfaceTension(temperature_c: number): number {
 export function co2Diffusivity(temperature_c: number): number {
   return 5.019e-6 * Math.exp(-19510 / (8.314462618 * (temperature_c + 273.15)))
 }
+
+/** Density in kg/L, the unit of the carbonate equations. See {@link waterDensity}. */
+export function waterDensityKgL(temperature_c: number): number {
+  return waterDensity(temperature_c) / 1000
+}
+
+/**
+ * Relative permittivity at 1 atm (1.01325 bar).
+ *
+ * @source bradleyPitzer1979, eqs 1 and 2. 78.384 at 25 °C; 0.11 % above Malmberg & Maryott 1956.
+ */
+export function dielectric(temperature_c: number): number {
+  const T = temperature_c + 273.15
+  const d = 342.79 * Math.exp(-5.0866e-3 * T + 9.469e-7 * T * T)
+  const c = -2.0525 + 3115.9 / (T - 182.89)
+  const b = -8032.5 + 4.2142e6 / T + 2.1417 * T
+  return d + c * Math.log((b + 1.01325) / (b + 1000))
+}
+
+/**
+ * Vapour pressure over fresh water, atm.
+ *
+ * @source weissPrice1980, eq. 10 at zero salinity. 0.03125 atm at 25 °C.
+ */
+export function waterVapourPressureAtm(temperature_c: number): number {
+  const t100 = (temperature_c + 273.15) / 100
+  return Math.exp(24.4543 - 67.4509 / t100 - 4.8489 * Math.log(t100))
+}
+
+/**
+ * Mean air pressure at a height above the sea, atm.
+ *
+ * @source iso2533, eq. 12 of the troposphere: (1 - 0.0065 h/288.15)^5.25588. Weather moves it by about 3 %.
+ */
+export function airPressureAtm(altitude_m: number): number {
+  return (1 - (0.0065 * altitude_m) / 288.15) ** 5.25588
+}

@@ -24,7 +24,7 @@ export interface RootProblem {
 /**
  * The x in [low, high] where f crosses zero, to within `tolerance`.
  *
- * @source Brent 1973, Algorithms for Minimization without Derivatives, chapter 4: bisection, secant and inverse quadratic steps; never slower than bisection squared.
+ * @source brent1973, chapter 4: bisection, secant and inverse quadratic steps; never slower than bisection squared.
  *
  * Throws {@link NotConverged} when the ends do not bracket a root, when f is not a number, or after
  * `maxIterations` (100) steps.

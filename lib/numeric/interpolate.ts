@@ -15,7 +15,7 @@ export function interpolateLinear(table: Table, at: number): number {
 /**
  * The slope at each row that keeps a cubic through monotone data monotone.
  *
- * @source Fritsch & Carlson 1980, SIAM J. Numer. Anal. 17:238, with the weighted harmonic mean inside and the limited three-point rule at the ends.
+ * @source fritschCarlson1980, with the weighted harmonic mean inside and the limited three-point rule at the ends.
  */
 export function monotoneSlopes({ x, y }: Table): number[] {
   const n = x.length
