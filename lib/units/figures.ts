@@ -1,0 +1,9 @@
+/**
+ * A number as it stands in a sentence: so many significant digits, no exponent, no trailing zeros.
+ * `figures(567.65, 3)` is "568", `figures(0.0456, 2)` is "0.046".
+ */
+export function figures(value: number, digits: number): string {
+  const rounded = Number(value.toPrecision(digits))
+  const decimals = rounded === 0 ? 0 : Math.max(0, digits - 1 - Math.floor(Math.log10(Math.abs(rounded))))
+  return String(Number(rounded.toFixed(Math.min(decimals, 20))))
+}
