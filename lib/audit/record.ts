@@ -1,0 +1,47 @@
+import type { Trx } from "@/db"
+import type { Ctx } from "@/lib/context"
+import { newId } from "@/lib/id"
+
+/** One act that changed something. `detail` holds what changed, never a secret. */
+export interface Act {
+  readonly action: Action
+  /** Id of what was acted on. */
+  readonly target?: string
+  readonly detail?: Readonly<Record<string, unknown>>
+}
+
+/** Every act that is recorded, with the words by which the audit trail names it. */
+export const actionNames = {
+  "account.created": "Account opened",
+  "account.renamed": "Account renamed",
+  "person.password_reset": "Password set anew",
+  "key.created": "Key created",
+  "key.rotated": "Key rotated",
+  "key.revoked": "Key revoked",
+  "widget.created": "Widget created",
+  "widget.changed": "Widget changed",
+  "billing.checkout_started": "Checkout opened",
+  "billing.portal_opened": "Billing portal opened",
+  "subscription.changed": "Subscription changed",
+} as const
+
+export type Action = keyof typeof actionNames
+
+/** Appends an act to the audit trail, in the transaction of the act itself: neither exists without the other. */
+export async function recordAct(trx: Trx, ctx: Ctx, act: Act): Promise<void> {
+  await trx
+    .insertInto("audit_log")
+    .values({
+      account_id: ctx.account_id,
+      id: newId("audit"),
+      at: ctx.now,
+      actor_kind: ctx.actor.kind,
+      actor_id: ctx.actor.id,
+      action: act.action,
+      target: act.target ?? null,
+      detail: JSON.stringify(act.detail ?? {}),
+      ip: ctx.ip ?? null,
+      request_id: ctx.request_id ?? null,
+    })
+    .execute()
+}

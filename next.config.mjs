@@ -1,0 +1,21 @@
+/** @type {import("next").NextConfig} */
+export default {
+  poweredByHeader: false,
+  reactStrictMode: true,
+  // Loaded by Node from node_modules: native code, or a pool that must be one for all bundles of the process.
+  serverExternalPackages: ["@node-rs/argon2", "pg", "nodemailer", "pino", "graphile-worker"],
+  // `forbidden()` gives a role that may not see a page a real 403.
+  experimental: { authInterrupts: true },
+  async headers() {
+    return [{ source: "/:path*", headers: securityHeaders }]
+  },
+}
+
+// The content security policy carries a nonce for each answer and is set in proxy.ts.
+const securityHeaders = [
+  { key: "Strict-Transport-Security", value: "max-age=63072000; includeSubDomains" },
+  { key: "X-Content-Type-Options", value: "nosniff" },
+  { key: "Referrer-Policy", value: "strict-origin" },
+  { key: "Cross-Origin-Opener-Policy", value: "same-origin" },
+  { key: "Permissions-Policy", value: "camera=(), geolocation=(), microphone=(), payment=(), usb=()" },
+]
