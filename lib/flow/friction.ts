@@ -38,7 +38,8 @@ export function colebrook(reynolds: number, relativeRoughness: number): number {
     const inside = rough + smooth * x
     const change = (x + TWO_OVER_LN10 * Math.log(inside)) / (1 + (TWO_OVER_LN10 * smooth) / inside)
     x -= change
-    if (Math.abs(change) < 1e-14 * x) break
+    // Newton squares its error, so what is left after such a step is below the last digit.
+    if (Math.abs(change) < 1e-7 * x) break
   }
   return 1 / (x * x)
 }

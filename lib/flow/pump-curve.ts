@@ -27,13 +27,11 @@ export const CURVE_EXPONENT = { low: 1, typical: 1.5, high: 2 }
  * @source engineeringJudgement for n = 1.5; n = 1 to 2 spans the curves of small centrifugal pumps, and n = 2 is
  * EPANET's curve from one point.
  */
-export function advertisedCurve(p: {
-  readonly max_flow_l_h: number
-  readonly max_head_m: number
-  readonly exponent: number
-}): PumpCurve {
-  const { max_head_m, exponent } = p
-  const maxFlow_m3_s = p.max_flow_l_h * M3_S_PER_L_H
+export function advertisedCurve(
+  { max_flow_l_h, max_head_m }: { readonly max_flow_l_h: number; readonly max_head_m: number },
+  exponent: number,
+): PumpCurve {
+  const maxFlow_m3_s = max_flow_l_h * M3_S_PER_L_H
   return {
     shutOff_m: max_head_m,
     maxFlow_m3_s,
