@@ -2,6 +2,7 @@ import { Kysely, PostgresDialect, sql, type Transaction } from "kysely"
 import pg from "pg"
 import { env } from "@/lib/env"
 import type { Schema } from "./schema"
+import { orUnavailable } from "./unavailable"
 
 export type Trx = Transaction<Schema>
 
@@ -40,6 +41,15 @@ export async function closePools(): Promise<void> {
   await Promise.all(open.map((each) => each.end()))
 }
 
+/** One statement outside any transaction, prepared once a connection under `name`: for the paths of every call. */
+export async function statement<Row extends pg.QueryResultRow>(
+  role: DatabaseRole,
+  query: { name: string; text: string; values: unknown[] },
+): Promise<Row[]> {
+  const { rows } = await orUnavailable(() => pool(role).query<Row>(query))
+  return rows
+}
+
 /** Runs `work` in one transaction that sees the rows of one account, and no other's. */
 export function withTenant<T>(account_id: string, work: (trx: Trx) => Promise<T>): Promise<T> {
   return inTransaction("app", { "app.account": account_id }, work)
@@ -70,14 +80,16 @@ function inTransaction<T>(
   settings: Record<string, string>,
   work: (trx: Trx) => Promise<T>,
 ): Promise<T> {
-  return database(role)
-    .transaction()
-    .execute(async (trx) => {
-      for (const [name, value] of Object.entries(settings)) {
-        await sql`select set_config(${name}, ${value}, true)`.execute(trx)
-      }
-      return work(trx)
-    })
+  return orUnavailable(() =>
+    database(role)
+      .transaction()
+      .execute(async (trx) => {
+        for (const [name, value] of Object.entries(settings)) {
+          await sql`select set_config(${name}, ${value}, true)`.execute(trx)
+        }
+        return work(trx)
+      }),
+  )
 }
 
 const databases = new WeakMap<pg.Pool, Kysely<Schema>>()

@@ -1,0 +1,74 @@
+import type { z } from "zod"
+import type { Ctx } from "@/lib/context"
+import type { ErrorCode } from "@/lib/errors"
+
+/** What a server key may be allowed to do. A browser key has `calculate` alone. */
+export const scopes = [
+  "calculate",
+  "reports",
+  "catalog",
+  "usage",
+  "enquiries",
+  "insights",
+  "webhooks",
+] as const
+export type Scope = (typeof scopes)[number]
+
+/** Who may call: anybody, a key with the scope, or a widget from one of its origins. */
+export type Access =
+  | { readonly kind: "public" }
+  | { readonly kind: "key"; readonly scope: Scope }
+  | { readonly kind: "widget" }
+
+/** What `run` is given besides its parsed input. */
+export interface Caller {
+  /** Absent where the operation is public. */
+  readonly ctx: Ctx
+  /** Origin header of the call, where a browser sent one. */
+  readonly origin: string | undefined
+  /** Performs another operation as the same caller: validated, metered and refused in the same way. */
+  perform(path: string, body: unknown): Promise<{ status: number; body: unknown }>
+}
+
+export interface Operation<Request extends z.ZodType = z.ZodType, Response extends z.ZodType = z.ZodType> {
+  /** Unique, camelCase: the operationId of the document and the name in the ledger. */
+  readonly id: string
+  readonly method: "GET" | "POST" | "PATCH" | "DELETE"
+  /** Below `/api/v1`; a parameter stands in braces, `/catalog/items/{item_id}`. */
+  readonly path: string
+  readonly tag: string
+  readonly summary: string
+  readonly description?: string
+  readonly access: Access
+  /** Units of one successful call; 0 is not metered. */
+  readonly units: number
+  /** Body of a POST or PATCH, query of a GET or DELETE, joined with the path's parameters. */
+  readonly request: Request
+  readonly response: Response
+  /** Status of success. */
+  readonly status: 200 | 201 | 204
+  /** Refusals of its own, beyond those that every operation with its access shares. */
+  readonly problems: readonly ErrorCode[]
+  /** A request that works. `computed`: running it gives the response, so the document runs it. */
+  readonly example: { readonly request: z.input<Request>; readonly response: "computed" | z.output<Response> }
+  /** Dates of RFC 9745 and RFC 8594, with the page that says what to do. */
+  readonly deprecation?: { readonly since: Date; readonly sunset: Date; readonly page: string }
+  // A method, so that operations of different shapes fit one registry.
+  run(call: { input: z.output<Request>; caller: Caller }): Promise<z.output<Response>> | z.output<Response>
+}
+
+export type AnyOperation = Operation
+
+type Defaults = "access" | "status" | "problems"
+
+/** Declares an endpoint. Returns data: `serve` gives it a life, `openapi/build` a page, the contract suite a test. */
+export function defineOperation<Request extends z.ZodType, Response extends z.ZodType>(
+  operation: Omit<Operation<Request, Response>, Defaults> & Partial<Pick<Operation, Defaults>>,
+): Operation<Request, Response> {
+  return {
+    access: { kind: "key", scope: "calculate" },
+    status: 200,
+    problems: [],
+    ...operation,
+  } as Operation<Request, Response>
+}
