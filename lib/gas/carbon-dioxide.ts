@@ -1,7 +1,9 @@
+import { CO2_MG_PER_MOL } from "@/lib/units/chemistry"
+
 /** J/(mol·K), exact since the SI of 2019. */
 export const GAS_CONSTANT = 8.314462618
-/** kg/mol, from C 12.011 and O 15.999 (exact to the digits). */
-export const MOLAR_MASS_KG_MOL = 0.0440095
+/** kg/mol. */
+export const MOLAR_MASS_KG_MOL = CO2_MG_PER_MOL / 1e6
 /** K. @source spanWagner1996, eq. 3.3 */
 export const CRITICAL_TEMPERATURE_K = 304.1282
 /** Pa. @source spanWagner1996, eq. 3.4 */
