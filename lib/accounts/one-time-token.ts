@@ -1,0 +1,101 @@
+import { createHash, randomBytes } from "node:crypto"
+import type { Schema, Trx } from "@/db"
+
+export type Purpose = Schema["one_time_token"]["purpose"]
+
+// @source PLATFORM 5.5
+const validFor_min: Record<Purpose, number> = {
+  verify_email: 24 * 60,
+  reset_password: 30,
+  sign_in: 15,
+  invite: 72 * 60,
+}
+
+/** Letters with a link that one address gets in an hour, so that nobody can fill another's mailbox through us. */
+const lettersAnHour = 5
+
+export interface NewToken {
+  readonly purpose: Purpose
+  readonly email: string
+  readonly payload?: Readonly<Record<string, unknown>>
+  readonly now: Date
+}
+
+/**
+ * A new single-use token of 256 bits, of which the digest is kept. An earlier one of the same purpose for the same
+ * address is void. Undefined when the address has had its letters for this hour.
+ */
+export async function mintToken(
+  trx: Trx,
+  { purpose, email, payload, now }: NewToken,
+): Promise<string | undefined> {
+  const recent = await trx
+    .selectFrom("one_time_token")
+    .select((select) => select.fn.countAll<number>().as("count"))
+    .where("email", "=", email)
+    .where("created_at", ">", new Date(now.getTime() - 3_600_000))
+    .executeTakeFirstOrThrow()
+  if (recent.count >= lettersAnHour) return undefined
+
+  await trx
+    .updateTable("one_time_token")
+    .set({ used_at: now })
+    .where("email", "=", email)
+    .where("purpose", "=", purpose)
+    .where("used_at", "is", null)
+    .execute()
+  const token = randomBytes(32).toString("base64url")
+  await trx
+    .insertInto("one_time_token")
+    .values({
+      digest: digestOf(token),
+      purpose,
+      email,
+      payload: JSON.stringify(payload ?? {}),
+      created_at: now,
+      expires_at: new Date(now.getTime() + validFor_min[purpose] * 60_000),
+      used_at: null,
+    })
+    .execute()
+  return token
+}
+
+export interface TokenContent {
+  readonly email: string
+  readonly payload: Record<string, unknown>
+}
+
+/** Uses a token up and says what it stood for; undefined when it is unknown, used or too old. */
+export async function consumeToken(
+  trx: Trx,
+  { purpose, token, now }: { purpose: Purpose; token: string; now: Date },
+): Promise<TokenContent | undefined> {
+  return trx
+    .updateTable("one_time_token")
+    .set({ used_at: now })
+    .where("digest", "=", digestOf(token))
+    .where("purpose", "=", purpose)
+    .where("used_at", "is", null)
+    .where("expires_at", ">", now)
+    .returning(["email", "payload"])
+    .executeTakeFirst()
+}
+
+/** What a token stands for, without using it up. */
+export async function peekToken(
+  trx: Trx,
+  { purpose, token, now }: { purpose: Purpose; token: string; now: Date },
+): Promise<TokenContent | undefined> {
+  return trx
+    .selectFrom("one_time_token")
+    .select(["email", "payload"])
+    .where("digest", "=", digestOf(token))
+    .where("purpose", "=", purpose)
+    .where("used_at", "is", null)
+    .where("expires_at", ">", now)
+    .executeTakeFirst()
+}
+
+function digestOf(token: string): Buffer {
+  return createHash("sha256").update(token).digest()
+}
