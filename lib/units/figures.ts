@@ -7,3 +7,8 @@ export function figures(value: number, digits: number): string {
   const decimals = rounded === 0 ? 0 : Math.max(0, digits - 1 - Math.floor(Math.log10(Math.abs(rounded))))
   return String(Number(rounded.toFixed(Math.min(decimals, 20))))
 }
+
+/** The value to so many significant digits, as a number: what the API and the files carry. */
+export function roundSignificant(value: number, digits = 6): number {
+  return value === 0 ? 0 : Number(value.toPrecision(digits))
+}

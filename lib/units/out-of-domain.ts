@@ -15,3 +15,17 @@ export class OutOfDomain extends Error {
     this.name = "OutOfDomain"
   }
 }
+
+/**
+ * Runs a function whose inputs have other names here, and reports its {@link OutOfDomain} under the name that the
+ * person used: `withFields({ ph: "tank_ph" }, …)`.
+ */
+export function withFields<T>(names: Readonly<Record<string, string>>, run: () => T): T {
+  try {
+    return run()
+  } catch (error) {
+    const name = error instanceof OutOfDomain ? names[error.field] : undefined
+    if (name === undefined) throw error
+    throw new OutOfDomain(name, (error as OutOfDomain).detail)
+  }
+}
