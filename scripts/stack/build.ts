@@ -3,6 +3,7 @@ import { createHash } from "node:crypto"
 import { existsSync, mkdirSync, readdirSync, readFileSync, rmSync, writeFileSync } from "node:fs"
 import os from "node:os"
 import path from "node:path"
+import { environment } from "./environment"
 import type { Report } from "./progress"
 import { runOnce } from "./run-once"
 
@@ -92,6 +93,5 @@ function ownerLives(lock: string): boolean {
 }
 
 async function run(root: string, args: readonly string[], signal: AbortSignal): Promise<void> {
-  const env = { ...process.env, NODE_ENV: "production" as const, NEXT_TELEMETRY_DISABLED: "1" }
-  await runOnce({ root, args, env, signal })
+  await runOnce({ root, args, env: environment({ NEXT_TELEMETRY_DISABLED: "1" }), signal })
 }

@@ -3,6 +3,7 @@ import { type ChildProcess, spawn } from "node:child_process"
 import { createWriteStream, readFileSync, type WriteStream } from "node:fs"
 import path from "node:path"
 import { pathToFileURL } from "node:url"
+import { environment } from "./environment"
 import { type Report, SetupError } from "./progress"
 
 export interface ChildSpec {
@@ -33,7 +34,7 @@ export interface Child {
 }
 
 const READY_WITHIN_MS = 60_000
-const STOP_WITHIN_MS = 10_000
+const STOP_WITHIN_MS = 28_000
 
 /**
  * Starts one process and resolves when it is ready.
@@ -91,7 +92,7 @@ function launch(spec: ChildSpec, root: string, log: WriteStream): ChildProcess {
   const leash = pathToFileURL(path.join(root, "scripts/stack/leash.mjs")).href
   const child = spawn(process.execPath, ["--import", leash, "--import", "tsx", spec.script], {
     cwd: root,
-    env: { ...inherited(), ...spec.env },
+    env: environment(spec.env),
     stdio: ["ignore", "pipe", "pipe", "ipc"],
     // A group of its own: Ctrl-C in a terminal reaches the start command alone, which ends its children in order.
     detached: true,
@@ -99,16 +100,6 @@ function launch(spec: ChildSpec, root: string, log: WriteStream): ChildProcess {
   child.stdout?.pipe(log, { end: false })
   child.stderr?.pipe(log, { end: false })
   return child
-}
-
-/** What a process gets from the shell: where programs are and how to speak, none of its secrets. */
-export function inherited(): Record<string, string> {
-  const names = ["PATH", "HOME", "LANG", "TZ", "TMPDIR", "REDIS_URL"]
-  const kept = names.flatMap((name) => {
-    const value = process.env[name]
-    return value === undefined ? [] : [[name, value] as const]
-  })
-  return Object.fromEntries(kept)
 }
 
 async function ready(

@@ -22,6 +22,7 @@ import {
 import os from "node:os"
 import path from "node:path"
 import { promisify } from "node:util"
+import { environment } from "./environment"
 import { SetupError } from "./progress"
 
 const run = promisify(execFile)
@@ -169,7 +170,7 @@ async function asServer(cluster: Cluster, program: string, options: string[]): P
   const command = [...dropPrivileges(), path.join(cluster.binDir, program), ...options]
   await run(command[0]!, command.slice(1), {
     cwd: cluster.dir,
-    env: { PATH: process.env.PATH, LC_ALL: "C.UTF-8" },
+    env: environment({ LC_ALL: "C.UTF-8" }),
   })
 }
 

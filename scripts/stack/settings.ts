@@ -94,13 +94,12 @@ export function processSettings(secrets: Secrets, ports: Ports, withNext: boolea
   return {
     web: {
       ...product,
-      NODE_ENV: "production",
       HOST: "127.0.0.1",
       PORT: String(ports.app),
       NEXTAUTH_URL: appUrl,
       ...(withNext ? {} : { TARN_API_ONLY: "1" }),
     },
-    worker: { ...product, NODE_ENV: "production" },
+    worker: product,
     stripe: {
       PORT: String(ports.stripe),
       WEBHOOK_URL: `${appUrl}/api/stripe/webhook`,

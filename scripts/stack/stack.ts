@@ -12,8 +12,9 @@
 import { existsSync, mkdirSync, readFileSync } from "node:fs"
 import path from "node:path"
 import { ensureBuild } from "./build"
-import { type Child, type ChildSpec, inherited, startChild } from "./children"
+import { type Child, type ChildSpec, startChild } from "./children"
 import { ensureDatabase } from "./database"
+import { environment } from "./environment"
 import { keepLocalEnv } from "./local-env"
 import { lockDataDir } from "./lock"
 import { choosePorts, freePort, isFree } from "./ports"
@@ -163,7 +164,7 @@ async function prepareData(setting: Setting): Promise<{ cluster: Cluster; demo: 
   }
   keepLocalEnv(dataDir, kept)
   const script = (file: string, env: Record<string, string>) =>
-    runOnce({ root, args: ["--import", "tsx", file], env: { ...inherited(), ...env }, signal })
+    runOnce({ root, args: ["--import", "tsx", file], env: environment(env), signal })
   report(`migrations: ${(await script("scripts/migrate.ts", kept)).trim()}`)
 
   const demoFile = path.join(dataDir, "demo.json")

@@ -1,0 +1,70 @@
+import { describe, expect, it } from "vitest"
+import { type Mail, renderMail } from "@/lib/mail"
+
+const url = "http://127.0.0.1:3000/verify?token=abc&from=mail"
+
+/** One mail of each letter, with text that people typed where people may type. */
+const mails: Mail[] = [
+  { template: "verify_email", to: "a@shop.test", data: { name: "<b>Ada</b>", url } },
+  { template: "already_signed_up", to: "a@shop.test", data: { name: "<b>Ada</b>", sign_in_url: url } },
+  { template: "reset_password", to: "a@shop.test", data: { name: "<b>Ada</b>", url } },
+  { template: "password_changed", to: "a@shop.test", data: { name: "<b>Ada</b>", reset_url: url } },
+  {
+    template: "invitation",
+    to: "a@shop.test",
+    data: { inviter_name: "<b>Ada</b>", account_name: "<b>Shop</b>", role: "viewer", url },
+  },
+  {
+    template: "key_revoked",
+    to: "a@shop.test",
+    data: {
+      account_name: "<b>Shop</b>",
+      key_name: "<b>k</b>",
+      last4: "a1b2",
+      reason: "<b>leaked</b>",
+      keys_url: url,
+    },
+  },
+  {
+    template: "usage_threshold",
+    to: "a@shop.test",
+    data: {
+      account_name: "<b>Shop</b>",
+      percent: 80,
+      units: 800,
+      unit_cap: 1000,
+      period_end: "2027-01-01T00:00:00Z",
+      usage_url: url,
+    },
+  },
+]
+
+describe.each(mails)("the letter $template", (mail) => {
+  const { subject, text, html } = renderMail(mail)
+
+  it("shows what people typed as text, never as HTML", () => {
+    expect(html).toContain("&lt;b&gt;")
+    expect(html).not.toContain("<b>")
+  })
+
+  it("carries its link unbroken in both forms", () => {
+    expect(text.split("\n")).toContain(url)
+    expect(html).toContain(`href="${url.replace("&", "&amp;")}"`)
+  })
+
+  it("says in the foot why it came", () => {
+    expect(text).toMatch(/\n--\nTarnwright\. .+\.\n$/)
+    expect(subject).not.toBe("")
+  })
+})
+
+describe("a subject", () => {
+  it("stays one line when a name holds a line break, so that no header can be smuggled in", () => {
+    const { subject } = renderMail({
+      template: "invitation",
+      to: "a@shop.test",
+      data: { inviter_name: "Ada", account_name: "Shop\r\nBcc: all@shop.test", role: "viewer", url },
+    })
+    expect(subject).toBe("Join Shop Bcc: all@shop.test on Tarnwright")
+  })
+})
