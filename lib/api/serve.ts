@@ -1,18 +1,16 @@
 import type { z } from "zod"
-import { planOf } from "@/lib/billing/plans"
-import { ENGINE_VERSION } from "@/lib/chemistry/engine-version"
 import type { Ctx } from "@/lib/context"
 import { TarnwrightError } from "@/lib/errors"
 import { newId } from "@/lib/id"
-import type { Access } from "@/lib/keys"
-import { commitUsage, rateLimiter, SANDBOX_UNITS_A_DAY, type UsageReceipt } from "@/lib/usage"
 import { admit } from "./admit"
-import { corsHeaders, preflight } from "./cors"
+import { preflight } from "./cors"
 import type { AnyOperation, Caller } from "./define-operation"
+import { charge, limitRate } from "./limits"
 import { parseBody, parseInput } from "./parse"
 import { problemOf, refusalOf } from "./problem"
-import { type LimitState, rateHeaders } from "./rate-headers"
+import type { Progress } from "./progress"
 import type { ApiRequest, ApiResponse } from "./request"
+import { refusal, success } from "./respond"
 import { createRouter, type Match } from "./router"
 
 export interface ServeOptions {
@@ -24,16 +22,6 @@ export interface ServeOptions {
 }
 
 export type Serve = (request: ApiRequest) => Promise<ApiResponse>
-
-/** What is learned on the way through a call, so that a refusal half-way can say it too. */
-interface Progress {
-  readonly requestId: string
-  readonly limits: LimitState[]
-  access?: Access
-  corsOrigin?: string
-  charged: number
-  receipt?: UsageReceipt
-}
 
 /**
  * Gives the operations of a registry their life: request id → route → key, origin, scope, address → rate limit →
@@ -51,9 +39,9 @@ export function createServe({ registry, publicUrl, onFault }: ServeOptions): Ser
       const ctx = await admitCaller(match, request, progress)
       const input = parseInput(operation, match, request, await bodyOf(operation, request))
       const output = await run(operation, input, ctx, request, progress)
-      return success(operation, output, progress)
+      return success(operation, output, request, progress)
     } catch (error) {
-      return refusal(error, progress)
+      return refusal(reported(error, progress), publicUrl, progress)
     }
   }
 
@@ -131,29 +119,16 @@ export function createServe({ registry, publicUrl, onFault }: ServeOptions): Ser
       const input = parseInput(operation, match, request, body)
       return { status: operation.status, body: await run(operation, input, ctx, request, progress) }
     } catch (error) {
-      const refused = refusalOf(error)
-      if (refused.code === "unavailable" || refused.code === "internal") throw error
-      const problem = problemOf(refused, publicUrl, progress.requestId)
+      const problem = problemOf(reported(error, progress), publicUrl, progress.requestId)
       return { status: problem.status, body: problem }
     }
   }
 
-  function refusal(error: unknown, progress: Progress): ApiResponse {
+  /** The refusal that an error stands for; where the fault is ours, `onFault` is told its cause. */
+  function reported(error: unknown, { requestId }: Progress): TarnwrightError {
     const refused = refusalOf(error)
-    if (refused.code === "internal" || refused.code === "unavailable")
-      onFault?.(refused.cause, progress.requestId)
-    const problem = problemOf(refused, publicUrl, progress.requestId)
-    return {
-      status: problem.status,
-      headers: {
-        ...commonHeaders(progress),
-        "content-type": "application/problem+json",
-        "cache-control": "no-store",
-        ...(problem.status === 401 && { "www-authenticate": 'Bearer error="invalid_token"' }),
-        ...(refused.retryAfterS !== undefined && { "retry-after": String(refused.retryAfterS) }),
-      },
-      body: JSON.stringify(problem),
-    }
+    if (refused.code === "internal" || refused.code === "unavailable") onFault?.(refused.cause, requestId)
+    return refused
   }
 }
 
@@ -164,96 +139,4 @@ function requestIdOf(request: ApiRequest): string {
 
 async function bodyOf(operation: AnyOperation, request: ApiRequest): Promise<unknown> {
   return operation.method === "POST" || operation.method === "PATCH" ? parseBody(request) : undefined
-}
-
-async function limitRate(access: Access, progress: Progress): Promise<void> {
-  const points = access.mode === "sandbox" ? 5 : planOf(access.plan).calls_per_s
-  const state = await rateLimiter().take(`${access.account_id}:${access.mode}`, { points, window_s: 1 })
-  progress.limits.push({ name: "burst", quota: points, window_s: 1, ...state })
-  if (!state.allowed) {
-    throw new TarnwrightError(
-      "rate_limited",
-      `You may call ${points} times a second. Wait a second and try again.`,
-      {
-        retryAfterS: Math.max(1, state.reset_s),
-      },
-    )
-  }
-}
-
-/** Makes the usage durable; until then nothing may be answered. */
-async function charge(operation: AnyOperation, progress: Progress): Promise<void> {
-  const { access } = progress
-  if (!access || operation.units === 0) return
-  const receipt = await commitUsage({
-    account_id: access.account_id,
-    key_id: access.key_id,
-    mode: access.mode,
-    operation: operation.id,
-    units: operation.units,
-    request_id: progress.requestId,
-  })
-  progress.receipt = receipt
-  if (!receipt.admitted) throw capReached(access, receipt)
-  progress.charged += operation.units
-}
-
-function capReached(access: Access, { cap, resets_at }: UsageReceipt): TarnwrightError {
-  const until = resets_at.toISOString()
-  if (access.mode === "sandbox") {
-    return new TarnwrightError(
-      "rate_limited",
-      `The sandbox gives ${SANDBOX_UNITS_A_DAY} units a day, until ${until}.`,
-      {
-        retryAfterS: Math.max(1, Math.ceil((resets_at.getTime() - Date.now()) / 1000)),
-      },
-    )
-  }
-  return new TarnwrightError(
-    "quota_reached",
-    `This call does not fit into the ${cap} units of the period that ends at ${until}. The account's owner can ` +
-      "choose a larger plan, or allow spending beyond it, on the billing page of the portal.",
-  )
-}
-
-function success(operation: AnyOperation, output: unknown, progress: Progress): ApiResponse {
-  return {
-    status: operation.status,
-    headers: {
-      ...commonHeaders(progress),
-      "content-type": "application/json",
-      "cache-control": "no-store",
-      ...(progress.access && { "tarnwright-units": String(progress.charged) }),
-      ...(operation.deprecation && {
-        deprecation: `@${Math.floor(operation.deprecation.since.getTime() / 1000)}`,
-        sunset: operation.deprecation.sunset.toUTCString(),
-        link: `<${operation.deprecation.page}>; rel="deprecation"; type="text/html"`,
-      }),
-    },
-    body: operation.status === 204 ? null : JSON.stringify(output),
-  }
-}
-
-function commonHeaders(progress: Progress): Record<string, string> {
-  const { receipt, access } = progress
-  const limits = [...progress.limits]
-  if (receipt && access) {
-    const reset_s = Math.max(0, Math.ceil((receipt.resets_at.getTime() - Date.now()) / 1000))
-    const sandbox = access.mode === "sandbox"
-    limits.push({
-      name: sandbox ? "day" : "period",
-      quota: receipt.cap,
-      window_s: sandbox ? 86_400 : 2_592_000,
-      remaining: receipt.cap - receipt.used,
-      reset_s,
-    })
-  }
-  return {
-    "x-request-id": progress.requestId,
-    "x-content-type-options": "nosniff",
-    "tarnwright-method": ENGINE_VERSION,
-    ...(receipt && { "tarnwright-units-remaining": String(Math.max(0, receipt.cap - receipt.used)) }),
-    ...rateHeaders(limits),
-    ...corsHeaders(progress.corsOrigin),
-  }
 }

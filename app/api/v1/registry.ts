@@ -1,0 +1,17 @@
+import type { AnyOperation } from "@/lib/api/define-operation"
+import { carbonateCo2 } from "./carbonate/co2/operation"
+import { carbonateKh } from "./carbonate/kh/operation"
+import { carbonatePh } from "./carbonate/ph/operation"
+import { health } from "./health/operation"
+import { openapi } from "./openapi.json/operation"
+import { openWidgetSession } from "./widgets/[widget_id]/sessions/operation"
+
+/** Every operation of the API, a line each. The document, the tests and both mounts read it. */
+export const registry: readonly AnyOperation[] = [
+  carbonateCo2,
+  carbonatePh,
+  carbonateKh,
+  openWidgetSession,
+  health,
+  openapi,
+]

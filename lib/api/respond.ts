@@ -1,0 +1,85 @@
+import { createHash } from "node:crypto"
+import { ENGINE_VERSION } from "@/lib/chemistry/engine-version"
+import type { TarnwrightError } from "@/lib/errors"
+import { corsHeaders } from "./cors"
+import type { AnyOperation } from "./define-operation"
+import { problemOf } from "./problem"
+import type { Progress } from "./progress"
+import { rateHeaders } from "./rate-headers"
+import type { ApiRequest, ApiResponse } from "./request"
+
+/** The answer to a call that succeeded. What everybody may read carries an ETag and can be answered by 304. */
+export function success(
+  operation: AnyOperation,
+  output: unknown,
+  request: ApiRequest,
+  progress: Progress,
+): ApiResponse {
+  const body = operation.status === 204 ? null : JSON.stringify(output)
+  const headers = {
+    ...commonHeaders(progress),
+    "content-type": "application/json",
+    ...(progress.access && { "tarnwright-units": String(progress.charged) }),
+    ...deprecationHeaders(operation),
+  }
+  if (operation.access.kind !== "public" || body === null) {
+    return { status: operation.status, headers: { ...headers, "cache-control": "no-store" }, body }
+  }
+  const etag = `"${createHash("sha256").update(body).digest("base64url")}"`
+  const unchanged = request.header("if-none-match") === etag
+  return {
+    status: unchanged ? 304 : operation.status,
+    headers: { ...headers, etag, "cache-control": "no-cache" },
+    body: unchanged ? null : body,
+  }
+}
+
+/** The answer to a call that was refused: a problem document. */
+export function refusal(refused: TarnwrightError, publicUrl: string, progress: Progress): ApiResponse {
+  const problem = problemOf(refused, publicUrl, progress.requestId)
+  return {
+    status: problem.status,
+    headers: {
+      ...commonHeaders(progress),
+      "content-type": "application/problem+json",
+      "cache-control": "no-store",
+      ...(problem.status === 401 && { "www-authenticate": 'Bearer error="invalid_token"' }),
+      ...(refused.retryAfterS !== undefined && { "retry-after": String(refused.retryAfterS) }),
+    },
+    body: JSON.stringify(problem),
+  }
+}
+
+/** @source RFC 9745 section 2.1 (a structured-field date) and RFC 8594 section 3 (an HTTP date). */
+function deprecationHeaders({ deprecation }: AnyOperation): Record<string, string> {
+  if (!deprecation) return {}
+  return {
+    deprecation: `@${Math.floor(deprecation.since.getTime() / 1000)}`,
+    sunset: deprecation.sunset.toUTCString(),
+    link: `<${deprecation.page}>; rel="deprecation"; type="text/html"`,
+  }
+}
+
+function commonHeaders(progress: Progress): Record<string, string> {
+  const { receipt, access } = progress
+  const limits = [...progress.limits]
+  if (receipt && access) {
+    const reset_s = Math.max(0, Math.ceil((receipt.resets_at.getTime() - Date.now()) / 1000))
+    const sandbox = access.mode === "sandbox"
+    limits.push({
+      name: sandbox ? "day" : "period",
+      quota: receipt.cap,
+      window_s: sandbox ? 86_400 : 2_592_000,
+      remaining: receipt.cap - receipt.used,
+      reset_s,
+    })
+  }
+  return {
+    "x-request-id": progress.requestId,
+    "x-content-type-options": "nosniff",
+    "tarnwright-method": ENGINE_VERSION,
+    ...(receipt && { "tarnwright-units-remaining": String(Math.max(0, receipt.cap - receipt.used)) }),
+    ...rateHeaders(limits),
+    ...corsHeaders(progress.corsOrigin),
+  }
+}
