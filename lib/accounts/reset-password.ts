@@ -9,7 +9,7 @@ import { hashPassword } from "./password"
 import { passwordProblem } from "./password-policy"
 import { normaliseEmail, type Visit } from "./person"
 import { endSessionsOf } from "./session"
-import { forgetFailures } from "./throttle"
+import { forgetFailures, mayWriteTo } from "./throttle"
 
 /** Sends a link to set a new password when the address is known; says nothing either way. */
 export async function requestPasswordReset({
@@ -17,6 +17,7 @@ export async function requestPasswordReset({
   input,
 }: Visit<{ readonly email: string }>): Promise<void> {
   const email = normaliseEmail(input.email)
+  if (!(await mayWriteTo(email, visitor))) return
   await withoutTenant(async (trx) => {
     const person = await trx
       .selectFrom("app_user")
@@ -25,7 +26,6 @@ export async function requestPasswordReset({
       .executeTakeFirst()
     if (!person) return
     const token = await mintToken(trx, { purpose: "reset_password", email, now: visitor.now })
-    if (!token) return
     await enqueueMail(trx, {
       template: "reset_password",
       to: email,

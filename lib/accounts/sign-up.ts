@@ -6,6 +6,7 @@ import { mintToken } from "./one-time-token"
 import { hashPassword } from "./password"
 import { passwordProblem } from "./password-policy"
 import { normaliseEmail, type Visit } from "./person"
+import { mayWriteTo } from "./throttle"
 
 export interface NewPerson {
   readonly name: string
@@ -40,35 +41,21 @@ export async function signUp({ visitor, input }: Visit<NewPerson>): Promise<void
     organisation: input.organisation,
     password_hash: await hashPassword(input.password),
   }
+  if (!(await mayWriteTo(email, visitor))) return
   await withoutTenant(async (trx) => {
     const known = await trx
       .selectFrom("app_user")
       .select("name")
       .where("email", "=", email)
       .executeTakeFirst()
-    const token = await mintToken(trx, {
-      purpose: known ? "reset_password" : "verify_email",
-      email,
-      payload: known ? {} : { ...pending },
-      now: visitor.now,
-    })
-    if (!token) return
     if (known) {
-      await enqueueMail(trx, {
-        template: "already_signed_up",
-        to: email,
-        data: {
-          name: known.name,
-          sign_in_url: `${env().PUBLIC_URL}/signin`,
-          reset_url: `${env().PUBLIC_URL}/reset/set?token=${token}`,
-        },
-      })
-    } else {
-      await enqueueMail(trx, {
-        template: "verify_email",
-        to: email,
-        data: { name: input.name, url: `${env().PUBLIC_URL}/verify?token=${token}` },
-      })
+      const data = { name: known.name, sign_in_url: `${env().PUBLIC_URL}/signin` }
+      await enqueueMail(trx, { template: "already_signed_up", to: email, data })
+      return
     }
+    const payload = { ...pending }
+    const token = await mintToken(trx, { purpose: "verify_email", email, payload, now: visitor.now })
+    const data = { name: input.name, url: `${env().PUBLIC_URL}/verify?token=${token}` }
+    await enqueueMail(trx, { template: "verify_email", to: email, data })
   })
 }

@@ -1,6 +1,7 @@
 import { sql } from "kysely"
 import type { Trx } from "@/db"
 import { TarnwrightError } from "@/lib/errors"
+import { rateLimiter } from "@/lib/usage"
 import type { Visitor } from "./person"
 
 // @source PLATFORM 5.6: 5 tries for an address from a place, then a wait that doubles up to 15 minutes; 50 failures
@@ -55,6 +56,20 @@ export async function admitTry(trx: Trx, visitor: Visitor, email: string): Promi
 /** Forgets the failures of an address: someone signed in, or proved by letter that the address is theirs. */
 export async function forgetFailures(trx: Trx, email: string): Promise<void> {
   await trx.deleteFrom("sign_in_failure").where("email", "=", email).execute()
+}
+
+// Nobody fills another's mailbox through us, or asks for a thousand accounts.
+const letters = { points: 5, window_s: 3600 }
+const lettersFromHere = { points: 100, window_s: 3600 }
+
+/** Whether one more letter may go to an address that has not proved who it is. The visitor is not told. */
+export async function mayWriteTo(email: string, visitor: Visitor): Promise<boolean> {
+  const limiter = rateLimiter()
+  const [address, place] = await Promise.all([
+    limiter.take(`letter-to:${email}`, letters),
+    limiter.take(`letter-from:${visitor.ip ?? ""}`, lettersFromHere),
+  ])
+  return address.allowed && place.allowed
 }
 
 function refuseUntil(until: Date, now: Date): void {
