@@ -35,7 +35,8 @@ export function checkFile(file: string, formats: readonly ReferenceFormat[]): Fi
   return { file, format: format.name, rows: rows.length, deviations, problems }
 }
 
-function readRows(file: string): Row[] {
+/** The rows of a reference file. Throws {@link BadRow} when it cannot be read. */
+export function readRows(file: string): Row[] {
   let rows: Row[]
   try {
     rows = parse(readFileSync(file), {

@@ -16,6 +16,7 @@ export interface EpanetLoop {
 }
 
 const FLOW = 8
+const RELATIVE_ERROR = 1
 const L_MIN_PER_L_H = 1 / 60
 
 /** A solver that keeps one EPANET workspace open: `(loop) => flow in L/h`. */
@@ -27,6 +28,7 @@ export async function epanet(): Promise<(loop: EpanetLoop) => number> {
     const model = new Project(workspace)
     model.open("loop.inp", "loop.rpt", "loop.out")
     model.solveH()
+    if (model.getStatistic(RELATIVE_ERROR) > 1e-5) throw new Error("EPANET did not converge")
     const flow = model.getLinkValue(1, FLOW) / L_MIN_PER_L_H
     model.close()
     return flow
