@@ -6,6 +6,8 @@ export default {
   serverExternalPackages: ["@node-rs/argon2", "pg", "nodemailer", "pino", "graphile-worker"],
   // `forbidden()` gives a role that may not see a page a real 403.
   experimental: { authInterrupts: true },
+  // `npm run check` looks at the types of the whole project; a start need not do it again.
+  typescript: { ignoreBuildErrors: true },
   async headers() {
     return [{ source: "/:path*", headers: securityHeaders }]
   },
