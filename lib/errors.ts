@@ -1,6 +1,7 @@
 /** Every way in which a verb can refuse, by its stable code. `lib/api/problem.ts` gives each its HTTP form. */
 export type ErrorCode =
   | "malformed_json"
+  | "session_missing"
   | "key_missing"
   | "key_unknown"
   | "key_revoked"

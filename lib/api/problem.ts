@@ -5,6 +5,7 @@ import { OutOfDomain } from "@/lib/units/out-of-domain"
 export const problems: Record<ErrorCode, { status: number; title: string }> = {
   malformed_json: { status: 400, title: "The body is not JSON" },
   key_in_url: { status: 400, title: "A key stands in the address" },
+  session_missing: { status: 401, title: "Nobody is signed in" },
   key_missing: { status: 401, title: "No key was sent" },
   key_unknown: { status: 401, title: "The key is not known" },
   key_revoked: { status: 401, title: "The key was revoked" },
