@@ -101,12 +101,16 @@ export function lossOf(element: ElementInput, hose_mm: number, index: number): L
   }
   const bore_mm =
     known.bore === "own" ? own_mm : known.bore === "narrower" ? Math.min(own_mm, hose_mm) : hose_mm
-  const k = count * (known.fromGeometry?.(element, hose_mm) ?? known.k)
-  const measured = known.fromGeometry !== undefined && geometryGiven(element)
+  const fromGeometry = known.fromGeometry?.(element, hose_mm)
+  if (fromGeometry === undefined) {
+    return { k: count * known.k, low: count * known.low, high: count * known.high, bore_mm }
+  }
+  const k = count * fromGeometry
+  const guessed = element.kind === "spray_bar" && !holesGiven(element)
   return {
     k,
-    low: measured ? k : (k * known.low) / known.k,
-    high: measured ? k : (k * known.high) / known.k,
+    low: guessed ? (k * known.low) / known.k : k,
+    high: guessed ? (k * known.high) / known.k : k,
     bore_mm,
   }
 }
@@ -140,10 +144,8 @@ function boreRatio(element: ElementInput, hose_mm: number): number | undefined {
   return Math.min(other_mm, hose_mm) / Math.max(other_mm, hose_mm)
 }
 
-function geometryGiven(element: ElementInput): boolean {
-  return [element.inner_diameter_mm, element.hole_count, element.hole_diameter_mm].some(
-    (x) => x !== undefined,
-  )
+function holesGiven({ hole_count, hole_diameter_mm }: ElementInput): boolean {
+  return hole_count !== undefined || hole_diameter_mm !== undefined
 }
 
 function fromRatio(lossAt: (boreRatio: number) => number): ElementRow["fromGeometry"] {
