@@ -14,7 +14,7 @@ const rooms: { room: RegExp; ours: RegExp; packages: RegExp | "any" }[] = [
   { room: /^lib\/flow\//, ours: /^lib\/(units|numeric|chemistry|gas|flow)\//, packages: /^$/ },
   { room: /^lib\/plan\//, ours: /^lib\/(units|numeric|chemistry|gas|flow|plan)\//, packages: /^$/ },
   {
-    room: /^lib\/api\/(define-|problem|quantity|router|rate-headers|request)/,
+    room: /^lib\/api\/(define-|problem|quantity|router|rate-headers|request|field-errors)/,
     ours: /^lib\/(api|units|chemistry\/(answer|engine-version)|errors|context)/,
     packages: /^zod$/,
   },

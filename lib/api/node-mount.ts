@@ -1,5 +1,6 @@
 import type { IncomingMessage, RequestListener } from "node:http"
 import { TarnwrightError } from "@/lib/errors"
+import { BODY_LIMIT_BYTES } from "./parse"
 import type { ApiRequest } from "./request"
 import type { Serve } from "./serve"
 
@@ -14,12 +15,12 @@ export interface NodeMountOptions {
 export function nodeMount(serve: Serve, { behindProxy = false }: NodeMountOptions = {}): RequestListener {
   return async (incoming, outgoing) => {
     const response = await serve(requestOf(incoming, behindProxy))
+    const drained = drain(incoming)
     const bytes = response.body === null ? undefined : Buffer.from(response.body)
     outgoing.writeHead(response.status, {
       ...response.headers,
       ...(bytes && { "content-length": bytes.byteLength }),
-      // What was not read of a refused body must not be taken for the next request.
-      ...(!incoming.complete && { connection: "close" }),
+      ...(!drained && { connection: "close" }),
     })
     outgoing.end(bytes)
   }
@@ -46,6 +47,13 @@ function requestOf(incoming: IncomingMessage, behindProxy: boolean): ApiRequest 
     readBody: (limit) => readStream(incoming, limit),
     address: forwarded ?? incoming.socket.remoteAddress ?? "",
   }
+}
+
+/** Lets go of what a refusal left unread, so that the connection can serve again; false where that could be long. */
+function drain(incoming: IncomingMessage): boolean {
+  if (incoming.complete) return true
+  incoming.resume()
+  return Number(incoming.headers["content-length"] ?? Number.POSITIVE_INFINITY) <= BODY_LIMIT_BYTES
 }
 
 function readStream(incoming: IncomingMessage, limit: number): Promise<Uint8Array> {

@@ -1,6 +1,6 @@
-import type { z } from "zod"
-import { type FieldError, TarnwrightError } from "@/lib/errors"
+import { TarnwrightError } from "@/lib/errors"
 import type { AnyOperation } from "./define-operation"
+import { fieldErrors } from "./field-errors"
 import type { ApiRequest } from "./request"
 import type { Match } from "./router"
 
@@ -49,7 +49,7 @@ export function parseInput(
   request: ApiRequest,
   body: unknown,
 ): unknown {
-  const outcome = operation.request.safeParse(candidate(match, request, body))
+  const outcome = operation.request.safeParse(candidate(match, request, body), { reportInput: true })
   if (outcome.success) return outcome.data
   const errors = outcome.error.issues.flatMap(fieldErrors).slice(0, mostErrors)
   const [first] = errors
@@ -68,19 +68,4 @@ function candidate(match: Match, request: ApiRequest, body: unknown): unknown {
     return { ...Object.fromEntries(request.query), ...match.params }
   if (typeof body !== "object" || body === null || Array.isArray(body)) return body
   return Object.keys(match.params).length === 0 ? body : { ...body, ...match.params }
-}
-
-function fieldErrors(issue: z.core.$ZodIssue): FieldError[] {
-  if (issue.code === "unrecognized_keys") {
-    return issue.keys.map((key) => ({
-      pointer: pointerTo([...issue.path, key]),
-      detail: "There is no such field. Check its spelling and its unit.",
-    }))
-  }
-  return [{ pointer: pointerTo(issue.path), detail: issue.message }]
-}
-
-/** @source RFC 6901: `~` and `/` in a member's name are escaped. */
-function pointerTo(path: readonly PropertyKey[]): string {
-  return path.map((part) => `/${String(part).replaceAll("~", "~0").replaceAll("/", "~1")}`).join("")
 }
