@@ -1,5 +1,6 @@
 /** The process that does the work outside the request: takes jobs from the queue until it is asked to end. */
-import { run, type TaskList } from "graphile-worker"
+import { setTimeout as pause } from "node:timers/promises"
+import { type Runner, run, type TaskList } from "graphile-worker"
 import { closePools } from "@/db"
 import { env } from "@/lib/env"
 import { deliverMail, type Mail, SEND_MAIL } from "@/lib/mail"
@@ -12,13 +13,32 @@ const taskList: TaskList = {
   [SEND_MAIL]: (payload, { job }) => deliverMail(payload as Mail, `job-${job.id}`),
 }
 
-const runner = await run({
-  connectionString: env().DATABASE_WORKER_URL,
-  concurrency: 5,
-  noHandleSignals: true,
-  taskList,
-})
-for (const signal of ["SIGTERM", "SIGINT"] as const) process.once(signal, () => runner.stop())
-console.log("ready")
-await runner.promise
+const ending = new AbortController()
+let runner: Runner | undefined
+for (const signal of ["SIGTERM", "SIGINT"] as const) {
+  process.once(signal, () => {
+    ending.abort()
+    runner?.stop().catch(() => {})
+  })
+}
+
+// Each round lasts until the worker is asked to end, or until the database has been gone for longer than the queue's
+// own patience; then the next one waits for it to come back.
+while (!ending.signal.aborted) {
+  try {
+    runner = await run({
+      connectionString: env().DATABASE_WORKER_URL,
+      concurrency: 5,
+      noHandleSignals: true,
+      parsedCronItems: [],
+      taskList,
+    })
+    console.log("ready")
+    if (ending.signal.aborted) await runner.stop()
+    await runner.promise
+  } catch (error) {
+    console.error(`The queue cannot be read: ${(error as Error).message}`)
+    await pause(1_000, undefined, { signal: ending.signal }).catch(() => {})
+  }
+}
 await closePools()
