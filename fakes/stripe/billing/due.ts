@@ -4,7 +4,7 @@ import { settle } from "./collection"
 import { draftInvoice, voidInvoice } from "./invoices"
 import { dropPendingUpdate } from "./pending-update"
 import { periodEnd } from "./periods"
-import { closeDraft, currentPeriod, cycleLines, renew } from "./renew"
+import { closeDraft, currentPeriod, cycleLines, end, renew } from "./renew"
 import { isLive, setStatus } from "./status"
 import type { Subscription } from "./subscription-shape"
 
@@ -78,12 +78,15 @@ function subscriptionDues(fake: Fake, subscription: Subscription): Due[] {
     ]
   }
   if (!isLive(subscription)) return []
-  const { end } = currentPeriod(subscription)
+  const period = currentPeriod(subscription).end
   const pending = subscription.pending_update
-  const dues: Due[] = [{ at: end, run: () => renew(fake, subscription) }]
+  const dues: Due[] = [{ at: period, run: () => renew(fake, subscription) }]
+  if (subscription.cancel_at && subscription.cancel_at < period) {
+    dues.push({ at: subscription.cancel_at, run: () => end(fake, subscription) })
+  }
   if (pending) dues.push({ at: pending.expires_at, run: () => expirePending(fake, subscription) })
-  if (!subscription.cancel_at_period_end && fake.state.announced[subscription.id] !== end) {
-    dues.push({ at: end - UPCOMING_S, run: () => announce(fake, subscription, end) })
+  if (!subscription.cancel_at_period_end && fake.state.announced[subscription.id] !== period) {
+    dues.push({ at: period - UPCOMING_S, run: () => announce(fake, subscription, period) })
   }
   return dues
 }

@@ -47,7 +47,11 @@ export const faultRequest = z.discriminatedUnion("kind", [
 
 export type Fault = z.output<typeof faultRequest>
 export type FaultKind = Fault["kind"]
-type Of<Name extends FaultKind> = Extract<Fault, { kind: Name }>
+type Of<Name extends FaultKind, All = Fault> = All extends { kind: infer Kind }
+  ? [Name & Kind] extends [never]
+    ? never
+    : All
+  : never
 
 /** Takes one use of the oldest fault of these kinds that fits, if any. */
 export function takeFault<Name extends FaultKind>(

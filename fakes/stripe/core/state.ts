@@ -7,13 +7,15 @@ import type { Fault } from "./faults"
 import type { StoredAnswer } from "./idempotency"
 
 /** An SDK type as it travels: decimals are strings in JSON. */
-export type Wire<T> = T extends Stripe.Decimal
-  ? string
-  : T extends (infer Item)[]
-    ? Wire<Item>[]
-    : T extends object
-      ? { [Key in keyof T]: Wire<T[Key]> }
-      : T
+export type Wire<T> = T extends string | number | boolean | null | undefined
+  ? T
+  : T extends Stripe.Decimal
+    ? string
+    : T extends (infer Item)[]
+      ? Wire<Item>[]
+      : T extends object
+        ? { [Key in keyof T]: Wire<T[Key]> }
+        : T
 
 /** Everything with an id, by the name that its `object` field carries. */
 export interface Objects {
@@ -77,6 +79,8 @@ export interface State {
   answers: Record<string, StoredAnswer>
   deliveries: Delivery[]
   faults: Fault[]
+  /** What a checkout gives the subscription that it will start. */
+  checkouts: Record<string, { description: string | null; metadata: Record<string, string> }>
   invoiceNumber: number
   /** Period end of which `invoice.upcoming` has told already, by subscription. */
   announced: Record<string, number>
@@ -107,6 +111,7 @@ export function emptyState(base: string): State {
     answers: {},
     deliveries: [],
     faults: [],
+    checkouts: {},
     invoiceNumber: 0,
     announced: {},
     afterDunning: "canceled",
