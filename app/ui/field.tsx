@@ -69,7 +69,7 @@ export function Input({ label, hint, error, unit, trailing, className, id: given
         {...rest}
         {...aria}
         id={id}
-        className={classNames(control, unit && "pr-16 font-mono", trailing && "pr-20")}
+        className={classNames(control, unit && "pr-16 font-mono", trailing != null && "pr-20")}
       />
       {unit && (
         <span className="pointer-events-none absolute inset-y-0 right-3 flex items-center font-mono text-sm text-soft">
