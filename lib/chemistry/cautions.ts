@@ -16,15 +16,20 @@ export function livestock({
 }): Caution {
   const { severity, up_to_mg_l } = co2Band(co2_high_mg_l)
   const mayBe = `CO2 may be as high as ${figures(co2_high_mg_l, 2)} mg/L (${figures(pco2_uatm, 2)} µatm)`
-  const message =
-    severity === "danger"
-      ? `${mayBe}. Above 60 mg/L do not run it with animals in the tank: stop the gas and aerate. Signs of distress: ${SIGNS}. Deaths within a day are recorded from 150 mg/L.`
-      : up_to_mg_l > 40
-        ? `${mayBe}. Above 40 mg/L many fish and shrimp suffer: give less gas, aerate, and watch for ${SIGNS}.`
-        : severity === "warning"
-          ? `${mayBe}, above the 30 mg/L that planted tanks aim at. Measure in a second way before you add gas, and watch for ${SIGNS}.`
-          : `${mayBe}. Healthy livestock usually bears that; low oxygen, the night, unfamiliar water and sensitive species change it. Watch for ${SIGNS}.`
-  return { code: "livestock", severity, message }
+  return { code: "livestock", severity, message: `${mayBe}${meaning(up_to_mg_l)}` }
+}
+
+function meaning(up_to_mg_l: number): string {
+  if (up_to_mg_l <= 30) {
+    return `. Healthy livestock usually bears that; low oxygen, the night, unfamiliar water and sensitive species change it. Watch for ${SIGNS}.`
+  }
+  if (up_to_mg_l <= 40) {
+    return `, above the 30 mg/L that planted tanks aim at. Measure in a second way before you add gas, and watch for ${SIGNS}.`
+  }
+  if (up_to_mg_l <= 60) {
+    return `. Above 40 mg/L many fish and shrimp suffer. Give less gas or measure more exactly, aerate, and watch for ${SIGNS}.`
+  }
+  return `. Above 60 mg/L animals are in danger: stop the gas and aerate until a surer reading shows less. Signs of distress: ${SIGNS}. Deaths within a day are recorded from 150 mg/L.`
 }
 
 export const raiseSlowly: Caution = {

@@ -50,3 +50,9 @@ export function logK1Slope(temperature_c: number): number {
   const T = temperature_c + 273.15
   return -0.06091964 - 21834.37 / (T * T) + 126.8339 / (T * Math.LN10) + (2 * 1684915) / (T * T * T)
 }
+
+/** d(log KH)/dT per kelvin: the slope of {@link logHenry}. @source plummerBusenberg1982, table 1 */
+export function logHenrySlope(temperature_c: number): number {
+  const T = temperature_c + 273.15
+  return 0.01985076 + 6919.53 / (T * T) - 40.45154 / (T * Math.LN10) - (2 * 669365) / (T * T * T)
+}

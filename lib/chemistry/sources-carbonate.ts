@@ -73,6 +73,21 @@ export const carbonateSources = {
     year: 1975,
     detail: "Air pressure at altitude",
   },
+  lan2025: {
+    title: "Lan, Tans & Thoning, NOAA Global Monitoring Laboratory, Trends in globally-averaged CO2",
+    year: 2025,
+    detail: "CO2 in outdoor air, about 425 ppm (recalled, not re-read)",
+  },
+  crcIndicators2016: {
+    title: "CRC Handbook of Chemistry and Physics, 97th edition, acid-base indicators",
+    year: 2016,
+    detail: "Bromothymol blue: yellow at pH 6.0, blue at 7.6",
+  },
+  crank1975: {
+    title: "Crank, The Mathematics of Diffusion, 2nd edition",
+    year: 1975,
+    detail: "Chapter 4: diffusion into a layer with one open face",
+  },
   ciaaw2021: {
     title:
       "IUPAC Commission on Isotopic Abundances and Atomic Weights, Pure and Applied Chemistry 94:573-600",
