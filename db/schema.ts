@@ -17,6 +17,13 @@ export interface Schema {
   stripe_event: StripeEvent
   widget: Widget
   audit_log: AuditLog
+  usage_threshold: UsageThreshold
+  usage_rollup: UsageRollup
+  key_reminder: KeyReminder
+  webhook_endpoint: WebhookEndpoint
+  webhook_delivery: WebhookDelivery
+  refused_call: RefusedCall
+  idempotency: Idempotency
 }
 
 export type AccountStatus = "active" | "suspended" | "closing"
@@ -196,4 +203,88 @@ interface AuditLog {
   detail: ColumnType<Record<string, unknown>, string | undefined, never>
   ip: string | null
   request_id: string | null
+}
+
+interface RefusedCall {
+  account_id: string
+  id: string
+  at: Generated<Date>
+  key_id: string
+  mode: KeyMode
+  method: string
+  path: string
+  status: number
+  code: string
+  detail: string
+  errors: ColumnType<unknown[], string, never>
+}
+
+interface Idempotency {
+  account_id: string
+  mode: KeyMode
+  key: string
+  fingerprint: Buffer
+  claimed_at: Generated<Date>
+  status: number | null
+  body: string | null
+}
+
+interface UsageThreshold {
+  account_id: string
+  period_start: Date
+  percent: 80 | 100
+  period_end: Date
+  /** Units spent when the threshold was reached, of `unit_cap`. */
+  units: number
+  unit_cap: number
+  reached_at: Generated<Date>
+  notified_at: Date | null
+}
+
+interface UsageRollup {
+  singleton: Generated<boolean>
+  /** The hours before it are summed; null before the first run. */
+  rolled_until: Date | null
+}
+
+interface KeyReminder {
+  account_id: string
+  key_id: string
+  expires_at: Date
+  days_before: number
+  sent_at: Generated<Date>
+}
+
+interface WebhookEndpoint {
+  account_id: string
+  id: string
+  url: string
+  events: string[]
+  /** Sealed; see lib/seal.ts. */
+  secret: Buffer
+  previous_secret: Buffer | null
+  previous_secret_until: Date | null
+  created_at: CreatedAt
+  updated_at: Generated<Date>
+  disabled_at: Date | null
+  disabled_reason: "paused" | "gone" | null
+}
+
+interface WebhookDelivery {
+  account_id: string
+  id: string
+  endpoint_id: string
+  /** The same for every endpoint and every repetition of one event. */
+  event_id: string
+  type: string
+  payload: string
+  status: Generated<"pending" | "delivered" | "failed">
+  attempts: Generated<number>
+  created_at: CreatedAt
+  next_attempt_at: ColumnType<Date | null, Date | null | undefined, Date | null>
+  claimed_until: Date | null
+  last_attempt_at: Date | null
+  last_status: number | null
+  last_failure: string | null
+  last_duration_ms: number | null
 }

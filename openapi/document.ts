@@ -164,6 +164,7 @@ export async function exampleOf(operation: AnyOperation): Promise<unknown> {
       throw new Error(`${operation.id} needs an account, so it cannot have a computed example`)
     },
     origin: undefined,
+    charge: () => Promise.resolve(),
     perform: () =>
       Promise.reject(new Error(`${operation.id} calls others, so it cannot have a computed example`)),
   }

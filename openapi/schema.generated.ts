@@ -59,6 +59,70 @@ export interface paths {
         patch?: never;
         trace?: never;
     };
+    "/batch": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        get?: never;
+        put?: never;
+        /**
+         * Up to 100 calculations in one call
+         * @description Each item is validated, metered and refused as if it had come alone, so one failure fails only itself. Units are the sum of the items that succeeded. Where the units of the period run out in the middle, the rest is refused.
+         *
+         *     Needs a key with the scope `calculate`. Costs nothing.
+         */
+        post: operations["batch"];
+        delete?: never;
+        options?: never;
+        head?: never;
+        patch?: never;
+        trace?: never;
+    };
+    "/usage": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        /**
+         * Calls and units by day, operation or key
+         * @description What the ledger holds, to the last acknowledged call. Days are UTC days.
+         *
+         *     Needs a key with the scope `usage`. Costs nothing.
+         */
+        get: operations["usage"];
+        put?: never;
+        post?: never;
+        delete?: never;
+        options?: never;
+        head?: never;
+        patch?: never;
+        trace?: never;
+    };
+    "/account": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        /**
+         * The account of your key
+         * @description Needs a key with the scope `usage`. Costs nothing.
+         */
+        get: operations["account"];
+        put?: never;
+        post?: never;
+        delete?: never;
+        options?: never;
+        head?: never;
+        patch?: never;
+        trace?: never;
+    };
     "/widgets/{widget_id}/sessions": {
         parameters: {
             query?: never;
@@ -171,7 +235,7 @@ export interface components {
              * @description Stable code to switch over
              * @enum {string}
              */
-            code: "malformed_json" | "key_in_url" | "key_missing" | "key_unknown" | "key_revoked" | "key_expired" | "quota_reached" | "server_key_in_browser" | "origin_not_allowed" | "address_not_allowed" | "scope_missing" | "account_suspended" | "forbidden" | "plan_limit_reached" | "not_found" | "method_not_allowed" | "conflict" | "idempotency_conflict" | "body_too_large" | "media_type_unsupported" | "validation_failed" | "out_of_domain" | "rate_limited" | "internal" | "unavailable";
+            code: "malformed_json" | "key_in_url" | "session_missing" | "key_missing" | "key_unknown" | "key_revoked" | "key_expired" | "quota_reached" | "server_key_in_browser" | "origin_not_allowed" | "address_not_allowed" | "scope_missing" | "account_suspended" | "forbidden" | "plan_limit_reached" | "not_found" | "method_not_allowed" | "conflict" | "idempotency_conflict" | "body_too_large" | "media_type_unsupported" | "validation_failed" | "out_of_domain" | "rate_limited" | "internal" | "unavailable";
             errors?: {
                 /** @description JSON Pointer into the body */
                 pointer: string;
@@ -269,7 +333,7 @@ export interface operations {
                      *         "co2_mg_l": 21.0487,
                      *         "co2_low_mg_l": 12.5704,
                      *         "co2_high_mg_l": 35.2453,
-                     *         "level": "high",
+                     *         "level": "in_range",
                      *         "hco3_mmol_l": 1.4257,
                      *         "co3_mmol_l": 0.000504996,
                      *         "dic_mmol_l": 1.90448,
@@ -295,13 +359,18 @@ export interface operations {
                      *       "cautions": [
                      *         {
                      *           "code": "livestock",
-                     *           "severity": "warning",
+                     *           "severity": "info",
                      *           "message": "CO2 may be as high as 35 mg/L (24000 µatm), above the 30 mg/L that planted tanks aim at. Measure in a second way before you add gas, and watch for gasping at the surface, fast breathing, fish lying still, shrimp fleeing the water."
+                     *         },
+                     *         {
+                     *           "code": "raise_slowly",
+                     *           "severity": "warning",
+                     *           "message": "Raise CO2 in small steps over several days, with the livestock watched for the first hours after each step. At the first sign of distress stop the gas and aerate."
                      *         },
                      *         {
                      *           "code": "ph_is_no_proof",
                      *           "severity": "info",
-                     *           "message": "A pH reading proves CO2 only where no other acid or buffer is at work. Here peat and driftwood (5 mg/L organic carbon) would add 1.2 % to the reading or 1.2 % from 5 mg/L phosphate. Check with a drop checker."
+                     *           "message": "A pH reading proves CO2 only where no other acid or buffer is at work. Here 5 mg/L of organic carbon from peat or driftwood would hold 1.2 % of the KH, 5 mg/L of phosphate 1.2 %, and CO2 would be over-read by as much. Check with a drop checker."
                      *         },
                      *         {
                      *           "code": "common_chart",
@@ -665,7 +734,7 @@ export interface operations {
                      *         {
                      *           "code": "livestock",
                      *           "severity": "warning",
-                     *           "message": "CO2 may be as high as 50 mg/L (34000 µatm). Above 40 mg/L many fish and shrimp suffer: give less gas, aerate, and watch for gasping at the surface, fast breathing, fish lying still, shrimp fleeing the water."
+                     *           "message": "CO2 may be as high as 50 mg/L (34000 µatm). Above 40 mg/L many fish and shrimp suffer. Give less gas or measure more exactly, aerate, and watch for gasping at the surface, fast breathing, fish lying still, shrimp fleeing the water."
                      *         },
                      *         {
                      *           "code": "raise_slowly",
@@ -680,7 +749,7 @@ export interface operations {
                      *         {
                      *           "code": "ph_is_no_proof",
                      *           "severity": "info",
-                     *           "message": "A pH reading proves CO2 only where no other acid or buffer is at work. Here peat and driftwood (5 mg/L organic carbon) would add 1.2 % to the reading or 0.91 % from 5 mg/L phosphate. Check with a drop checker."
+                     *           "message": "A pH reading proves CO2 only where no other acid or buffer is at work. Here 5 mg/L of organic carbon from peat or driftwood would hold 1.2 % of the KH, 5 mg/L of phosphate 0.91 %, and CO2 would be over-read by as much. Check with a drop checker."
                      *         }
                      *       ],
                      *       "assumptions": [
@@ -791,21 +860,23 @@ export interface operations {
                         };
                         uncertainty: {
                             /** @enum {string} */
-                            distribution: "normal";
+                            distribution: "log-normal";
                             /** @enum {number} */
                             coverage: 0.95;
-                            /** @description Standard error of the pH reading: 0.02 bench meter, 0.1 pen or probe, 0.2 liquid test, in pH */
-                            sigma_ph: number;
+                            /** @description Standard error of the natural logarithm of the result */
+                            sigma_ln: number;
                             contributions: {
-                                /** @description Standard error of the pH reading: 0.02 bench meter, 0.1 pen or probe, 0.2 liquid test, in pH */
+                                /** @description Standard error of the natural logarithm of the result */
                                 ph?: number;
-                                /** @description Standard error of the pH reading: 0.02 bench meter, 0.1 pen or probe, 0.2 liquid test, in pH */
+                                /** @description Standard error of the natural logarithm of the result */
                                 kh?: number;
-                                /** @description Standard error of the pH reading: 0.02 bench meter, 0.1 pen or probe, 0.2 liquid test, in pH */
+                                /** @description Standard error of the natural logarithm of the result */
                                 temperature?: number;
-                                /** @description Standard error of the pH reading: 0.02 bench meter, 0.1 pen or probe, 0.2 liquid test, in pH */
+                                /** @description Standard error of the natural logarithm of the result */
                                 model?: number;
                             };
+                            /** @description Standard error of the pH reading: 0.02 bench meter, 0.1 pen or probe, 0.2 liquid test, in pH */
+                            ph_sigma: number;
                         };
                         cautions: components["schemas"]["Caution"][];
                         assumptions: components["schemas"]["Assumption"][];
@@ -1019,7 +1090,7 @@ export interface operations {
                      *         {
                      *           "code": "ph_is_no_proof",
                      *           "severity": "info",
-                     *           "message": "A pH reading proves CO2 only where no other acid or buffer is at work. Here peat and driftwood (5 mg/L organic carbon) would add 1.2 % to the reading or 1.2 % from 5 mg/L phosphate. Check with a drop checker."
+                     *           "message": "A pH reading proves CO2 only where no other acid or buffer is at work. Here 5 mg/L of organic carbon from peat or driftwood would hold 1.2 % of the KH, 5 mg/L of phosphate 1.2 %, and CO2 would be over-read by as much. Check with a drop checker."
                      *         }
                      *       ],
                      *       "assumptions": [
@@ -1221,6 +1292,453 @@ export interface operations {
                 };
             };
             /** @description `validation_failed`: The input is not valid. `out_of_domain`: The input is physically impossible or outside the method. */
+            422: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `rate_limited`: Too many calls. */
+            429: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `internal`: Something failed on our side. */
+            500: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `unavailable`: The service is resting for a moment. */
+            503: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+        };
+    };
+    batch: {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        requestBody: {
+            content: {
+                /**
+                 * @example {
+                 *       "calls": [
+                 *         {
+                 *           "id": "a",
+                 *           "path": "/carbonate/co2",
+                 *           "body": {
+                 *             "ph": 6.8
+                 *           }
+                 *         }
+                 *       ]
+                 *     }
+                 */
+                "application/json": {
+                    calls: {
+                        /** @description Your name for the item */
+                        id: string;
+                        /** @description Path of a calculation, as `/carbonate/co2` */
+                        path: string;
+                        /** @description Body of the calculation */
+                        body?: unknown;
+                    }[];
+                };
+            };
+        };
+        responses: {
+            /** @description The answer. */
+            200: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    /**
+                     * @example {
+                     *       "results": [
+                     *         {
+                     *           "id": "a",
+                     *           "status": 422,
+                     *           "body": {
+                     *             "type": "https://tarnwright.example/docs/errors/validation_failed",
+                     *             "title": "The input is not valid",
+                     *             "status": 422,
+                     *             "detail": "/kh_dkh: This field is missing. Send a number.",
+                     *             "instance": "req_01kbc0x7qzf0ra2w6v8n4m3h5t",
+                     *             "code": "validation_failed",
+                     *             "errors": [
+                     *               {
+                     *                 "pointer": "/kh_dkh",
+                     *                 "detail": "This field is missing. Send a number."
+                     *               }
+                     *             ]
+                     *           }
+                     *         }
+                     *       ]
+                     *     }
+                     */
+                    "application/json": {
+                        results: {
+                            id: string;
+                            /** @description HTTP status of the item */
+                            status: number;
+                            /** @description Answer or problem of the item */
+                            body?: unknown;
+                        }[];
+                    };
+                };
+            };
+            /** @description `key_in_url`: A key stands in the address. `malformed_json`: The body is not JSON. */
+            400: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `key_missing`: No key was sent. `key_unknown`: The key is not known. `key_revoked`: The key was revoked. `key_expired`: The key has expired. */
+            401: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `server_key_in_browser`: A server key was used from a browser. `origin_not_allowed`: The origin is not on the list. `address_not_allowed`: The network address is not on the list. `scope_missing`: The key lacks the scope. `account_suspended`: The account is suspended. */
+            403: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `not_found`: There is nothing here. */
+            404: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `method_not_allowed`: The method is not offered here. */
+            405: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `body_too_large`: The body is too large. */
+            413: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `media_type_unsupported`: The media type is not JSON. */
+            415: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `validation_failed`: The input is not valid. */
+            422: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `rate_limited`: Too many calls. */
+            429: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `internal`: Something failed on our side. */
+            500: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `unavailable`: The service is resting for a moment. */
+            503: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+        };
+    };
+    usage: {
+        parameters: {
+            query: {
+                /** @description First day, as 2026-12-01 */
+                from: string;
+                /** @description Last day, inclusive; at most 400 days after the first */
+                to: string;
+                by?: "day" | "operation" | "key";
+                mode?: "live" | "sandbox";
+            };
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        requestBody?: never;
+        responses: {
+            /** @description The answer. */
+            200: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    /**
+                     * @example {
+                     *       "data": [
+                     *         {
+                     *           "group": "2026-12-01",
+                     *           "calls": 412,
+                     *           "units": 640
+                     *         }
+                     *       ],
+                     *       "period": {
+                     *         "start": "2026-12-01T00:00:00.000Z",
+                     *         "end": "2027-01-01T00:00:00.000Z",
+                     *         "units": 640,
+                     *         "cap": 50000
+                     *       }
+                     *     }
+                     */
+                    "application/json": {
+                        data: {
+                            /** @description The day, the operation or the key's id */
+                            group: string;
+                            /** @description Calls that succeeded */
+                            calls: number;
+                            /** @description Units charged */
+                            units: number;
+                        }[];
+                        period: {
+                            /** Format: date-time */
+                            start: string;
+                            /** Format: date-time */
+                            end: string;
+                            /** @description Units charged */
+                            units: number;
+                            /** @description Units that the account may spend in the period */
+                            cap: number;
+                        };
+                    };
+                };
+            };
+            /** @description `key_in_url`: A key stands in the address. */
+            400: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `key_missing`: No key was sent. `key_unknown`: The key is not known. `key_revoked`: The key was revoked. `key_expired`: The key has expired. */
+            401: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `server_key_in_browser`: A server key was used from a browser. `origin_not_allowed`: The origin is not on the list. `address_not_allowed`: The network address is not on the list. `scope_missing`: The key lacks the scope. `account_suspended`: The account is suspended. */
+            403: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `not_found`: There is nothing here. */
+            404: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `method_not_allowed`: The method is not offered here. */
+            405: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `validation_failed`: The input is not valid. */
+            422: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `rate_limited`: Too many calls. */
+            429: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `internal`: Something failed on our side. */
+            500: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `unavailable`: The service is resting for a moment. */
+            503: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+        };
+    };
+    account: {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        requestBody?: never;
+        responses: {
+            /** @description The answer. */
+            200: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    /**
+                     * @example {
+                     *       "id": "acct_01kbc0x7qzf0ra2w6v8n4m3h5t",
+                     *       "slug": "fernhollow",
+                     *       "name": "Fernhollow Aquatics",
+                     *       "plan": "brand",
+                     *       "status": "active",
+                     *       "unit_cap": 500000,
+                     *       "overage_cap_minor": 0,
+                     *       "created_at": "2026-12-01T09:00:00.000Z"
+                     *     }
+                     */
+                    "application/json": {
+                        id: string;
+                        slug: string;
+                        name: string;
+                        plan: string;
+                        /** @enum {string} */
+                        status: "active" | "suspended" | "closing";
+                        /** @description Units that the account may spend in a period */
+                        unit_cap: number;
+                        /** @description Most that the owner allows beyond the plan in a period, in US cents */
+                        overage_cap_minor: number;
+                        /** Format: date-time */
+                        created_at: string;
+                    };
+                };
+            };
+            /** @description `key_in_url`: A key stands in the address. */
+            400: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `key_missing`: No key was sent. `key_unknown`: The key is not known. `key_revoked`: The key was revoked. `key_expired`: The key has expired. */
+            401: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `server_key_in_browser`: A server key was used from a browser. `origin_not_allowed`: The origin is not on the list. `address_not_allowed`: The network address is not on the list. `scope_missing`: The key lacks the scope. `account_suspended`: The account is suspended. */
+            403: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `not_found`: There is nothing here. */
+            404: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `method_not_allowed`: The method is not offered here. */
+            405: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `validation_failed`: The input is not valid. */
             422: {
                 headers: {
                     [name: string]: unknown;

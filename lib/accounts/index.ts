@@ -1,4 +1,5 @@
 export { authorize, can, type Reach, type Right, reachOf } from "./can"
+export { type AccountDescription, describeAccount } from "./describe"
 export { accountIdOfKey, accountIdOfSlug } from "./find-for-operator"
 export { type AccountForAdmin, listAccountsForAdmin } from "./list-for-admin"
 export { findMembership, listMemberships, type Membership } from "./memberships"

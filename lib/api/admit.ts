@@ -2,31 +2,33 @@ import ipaddr from "ipaddr.js"
 import { TarnwrightError } from "@/lib/errors"
 import { type Access, accessOfKey, accessOfWidget, originMatches } from "@/lib/keys"
 import { rateLimiter } from "@/lib/usage"
+import type { Progress } from "./progress"
 import type { ApiRequest } from "./request"
 import type { Match } from "./router"
-
-export interface Admission {
-  readonly access: Access
-  /** Origin that may read the answer, where a browser asks. */
-  readonly corsOrigin: string | undefined
-}
 
 /** Failed sign-ins of one address in ten minutes, whatever key they try. @source PLATFORM 1.25 */
 const failuresPerAddress = { points: 100, window_s: 600 }
 
 /**
- * Admits a call: its key or widget exists and is in force, and the origin, scope and address are allowed.
+ * Admits a call: its key or widget exists and is in force, and the origin, scope and address are allowed. Notes in
+ * `progress` whose call it is and which origin may read the answer.
  *
  * @throws TarnwrightError with the 401, 403, 404 or 429 that says why not.
  */
-export async function admit(match: Match, request: ApiRequest, publicUrl: string): Promise<Admission> {
+export async function admit(
+  match: Match,
+  request: ApiRequest,
+  publicUrl: string,
+  progress: Progress,
+): Promise<Access> {
   const { access: needed } = match.operation
-  if (needed.kind === "widget") return admitWidget(match.params.widget_id ?? "", request)
+  if (needed.kind === "widget") return admitWidget(match.params.widget_id ?? "", request, progress)
   if (needed.kind !== "key") throw new Error(`${match.operation.id} admits everybody`)
 
   const access = await keyOf(request)
-  const origin = request.header("origin")
-  const corsOrigin = allowedOrigin(access, origin, publicUrl)
+  progress.access = access
+  progress.corsOrigin = allowedOrigin(access, request.header("origin"), publicUrl)
+  refuseOutOfForce(access)
   if (!access.scopes.includes(needed.scope)) {
     throw new TarnwrightError(
       "scope_missing",
@@ -34,7 +36,7 @@ export async function admit(match: Match, request: ApiRequest, publicUrl: string
     )
   }
   refuseStrangerAddress(access, request.address)
-  return { access, corsOrigin }
+  return access
 }
 
 async function keyOf(request: ApiRequest): Promise<Access> {
@@ -48,6 +50,10 @@ async function keyOf(request: ApiRequest): Promise<Access> {
     await countFailure(request.address)
     throw new TarnwrightError("key_unknown", "This is not a key of ours. Check that it was copied whole.")
   }
+  return access
+}
+
+function refuseOutOfForce(access: Access): void {
   if (access.revoked_at) {
     throw new TarnwrightError("key_revoked", "This key was revoked. Make a new one in the portal.")
   }
@@ -55,12 +61,12 @@ async function keyOf(request: ApiRequest): Promise<Access> {
     throw new TarnwrightError("key_expired", "This key has expired. Make a new one in the portal.")
   }
   refuseSuspended(access)
-  return access
 }
 
-async function admitWidget(widget_id: string, request: ApiRequest): Promise<Admission> {
+async function admitWidget(widget_id: string, request: ApiRequest, progress: Progress): Promise<Access> {
   const access = await accessOfWidget(widget_id)
   if (!access || access.revoked_at) throw new TarnwrightError("not_found", "There is no such widget.")
+  progress.access = access
   const origin = request.header("origin")
   if (!origin || !originMatches(origin, access.origins)) {
     throw new TarnwrightError(
@@ -68,8 +74,9 @@ async function admitWidget(widget_id: string, request: ApiRequest): Promise<Admi
       "This widget may not be used on this page's origin. Add it to the widget.",
     )
   }
+  progress.corsOrigin = origin
   refuseSuspended(access)
-  return { access, corsOrigin: origin }
+  return access
 }
 
 /** Origin that may read the answer. A server key may not come from a browser, but for the portal's own explorer. */

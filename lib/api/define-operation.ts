@@ -26,6 +26,11 @@ export interface Caller {
   readonly ctx: Ctx
   /** Origin header of the call, where a browser sent one. */
   readonly origin: string | undefined
+  /**
+   * Meters the call now instead of after `run`: what stores something charges inside its transaction, so that a
+   * call which the cap holds back stores nothing.
+   */
+  charge(): Promise<void>
   /** Performs another operation as the same caller: validated, metered and refused in the same way. */
   perform(path: string, body: unknown): Promise<{ status: number; body: unknown }>
 }
@@ -47,6 +52,8 @@ export interface Operation<Request extends z.ZodType = z.ZodType, Response exten
   readonly response: Response
   /** Status of success. */
   readonly status: 200 | 201 | 204
+  /** Whether a success stores something, so that an `Idempotency-Key` guards against storing it twice. */
+  readonly stores: boolean
   /** Refusals of its own, beyond those that every operation with its access shares. */
   readonly problems: readonly ErrorCode[]
   /** A request that works. `computed`: running it gives the response, so the document runs it. */
@@ -59,7 +66,7 @@ export interface Operation<Request extends z.ZodType = z.ZodType, Response exten
 
 export type AnyOperation = Operation
 
-type Defaults = "access" | "status" | "problems"
+type Defaults = "access" | "status" | "problems" | "stores"
 
 /** Declares an endpoint. Returns data: `serve` gives it a life, `openapi/build` a page, the contract suite a test. */
 export function defineOperation<Request extends z.ZodType, Response extends z.ZodType>(
@@ -68,6 +75,7 @@ export function defineOperation<Request extends z.ZodType, Response extends z.Zo
   return {
     access: { kind: "key", scope: "calculate" },
     status: 200,
+    stores: false,
     problems: [],
     ...operation,
   } as Operation<Request, Response>

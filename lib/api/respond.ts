@@ -1,6 +1,7 @@
 import { createHash } from "node:crypto"
 import { ENGINE_VERSION } from "@/lib/chemistry/engine-version"
 import type { TarnwrightError } from "@/lib/errors"
+import type { KeptAnswer } from "@/lib/usage"
 import { corsHeaders } from "./cors"
 import type { AnyOperation } from "./define-operation"
 import { problemOf } from "./problem"
@@ -31,6 +32,21 @@ export function success(
     status: unchanged ? 304 : operation.status,
     headers: { ...headers, etag, "cache-control": "no-cache" },
     body: unchanged ? null : body,
+  }
+}
+
+/** The answer that an earlier call with the same idempotency key got. */
+export function replay(kept: KeptAnswer, progress: Progress): ApiResponse {
+  return {
+    status: kept.status,
+    headers: {
+      ...commonHeaders(progress),
+      "content-type": "application/json",
+      "cache-control": "no-store",
+      "idempotency-replayed": "true",
+      "tarnwright-units": "0",
+    },
+    body: kept.body === "" ? null : kept.body,
   }
 }
 

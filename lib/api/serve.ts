@@ -2,12 +2,14 @@ import type { z } from "zod"
 import type { Ctx } from "@/lib/context"
 import { TarnwrightError } from "@/lib/errors"
 import { newId } from "@/lib/id"
+import { logRefusal } from "@/lib/usage"
 import { admit } from "./admit"
 import { preflight } from "./cors"
 import type { AnyOperation, Caller } from "./define-operation"
 import { charge, limitRate } from "./limits"
+import { once } from "./once"
 import { parseBody, parseInput } from "./parse"
-import { problemOf, refusalOf } from "./problem"
+import { problemOf, problems, refusalOf } from "./problem"
 import type { Progress } from "./progress"
 import type { ApiRequest, ApiResponse } from "./request"
 import { refusal, success } from "./respond"
@@ -37,11 +39,15 @@ export function createServe({ registry, publicUrl, onFault }: ServeOptions): Ser
       const match = routeOf(request)
       const { operation } = match
       const ctx = await admitCaller(match, request, progress)
-      const input = parseInput(operation, match, request, await bodyOf(operation, request))
-      const output = await run(operation, input, ctx, request, progress)
-      return success(operation, output, request, progress)
+      const body = await bodyOf(operation, request)
+      const input = parseInput(operation, match, request, body)
+      return await once(operation, request, body, ctx, progress, async () =>
+        success(operation, await run(operation, input, ctx, request, progress), request, progress),
+      )
     } catch (error) {
-      return refusal(reported(error, progress), publicUrl, progress)
+      const refused = reported(error, progress)
+      logRefused(refused, request, progress)
+      return refusal(refused, publicUrl, progress)
     }
   }
 
@@ -67,9 +73,7 @@ export function createServe({ registry, publicUrl, onFault }: ServeOptions): Ser
     progress: Progress,
   ): Promise<Ctx | undefined> {
     if (match.operation.access.kind === "public") return undefined
-    const { access, corsOrigin } = await admit(match, request, publicUrl)
-    progress.access = access
-    progress.corsOrigin = corsOrigin
+    const access = await admit(match, request, publicUrl, progress)
     await limitRate(access, progress)
     return {
       account_id: access.account_id,
@@ -87,14 +91,19 @@ export function createServe({ registry, publicUrl, onFault }: ServeOptions): Ser
     request: ApiRequest,
     progress: Progress,
   ): Promise<unknown> {
+    let charging: Promise<void> | undefined
     const caller: Caller = {
       // A public operation declares that it needs no tenant.
       ctx: ctx as Ctx,
       origin: request.header("origin"),
+      charge: () => {
+        charging ??= charge(operation, progress)
+        return charging
+      },
       perform: (path, body) => performNested(path, body, ctx, request, progress),
     }
     const output = await operation.run({ input: input as z.output<z.ZodType>, caller })
-    await charge(operation, progress)
+    await caller.charge()
     return output
   }
 
@@ -130,6 +139,20 @@ export function createServe({ registry, publicUrl, onFault }: ServeOptions): Ser
     if (refused.code === "internal" || refused.code === "unavailable") onFault?.(refused.cause, requestId)
     return refused
   }
+}
+
+/** Puts a refusal into the request log of the account whose key it was. */
+function logRefused(
+  { code, detail, errors }: TarnwrightError,
+  request: ApiRequest,
+  progress: Progress,
+): void {
+  const { access, requestId } = progress
+  if (!access) return
+  const { account_id, key_id, mode } = access
+  const { method, path } = request
+  const { status } = problems[code]
+  logRefusal({ account_id, id: requestId, key_id, mode, method, path, status, code, detail, errors })
 }
 
 function requestIdOf(request: ApiRequest): string {

@@ -1,9 +1,12 @@
 import type { AnyOperation } from "@/lib/api/define-operation"
+import { account } from "./account/operation"
+import { batch } from "./batch/operation"
 import { carbonateCo2 } from "./carbonate/co2/operation"
 import { carbonateKh } from "./carbonate/kh/operation"
 import { carbonatePh } from "./carbonate/ph/operation"
 import { health } from "./health/operation"
 import { openapi } from "./openapi.json/operation"
+import { usage } from "./usage/operation"
 import { openWidgetSession } from "./widgets/[widget_id]/sessions/operation"
 
 /** Every operation of the API, a line each. The document, the tests and both mounts read it. */
@@ -11,6 +14,9 @@ export const registry: readonly AnyOperation[] = [
   carbonateCo2,
   carbonatePh,
   carbonateKh,
+  batch,
+  usage,
+  account,
   openWidgetSession,
   health,
   openapi,

@@ -2,7 +2,14 @@ import { z } from "zod"
 import { defineCalculation } from "@/lib/api/define-calculation"
 import { figure, quantity } from "@/lib/api/quantity"
 import { phForCo2 } from "@/lib/chemistry/ph-for-co2"
-import { ionicStrengthResult, khError, level, phError, waterFields } from "../water-fields"
+import {
+  ionicStrengthResult,
+  khError,
+  level,
+  logNormalUncertainty,
+  phError,
+  waterFields,
+} from "../water-fields"
 
 export const carbonatePh = defineCalculation({
   id: "carbonatePh",
@@ -29,10 +36,8 @@ export const carbonatePh = defineCalculation({
     ...ionicStrengthResult,
   },
   uncertainty: {
-    distribution: z.literal("normal"),
-    coverage: z.literal(0.95).meta({ "x-unit": "1" }),
-    sigma_ph: figure("ph_error"),
-    contributions: z.record(z.enum(["ph", "kh", "temperature", "model"]), figure("ph_error")),
+    ...logNormalUncertainty("ph", "kh", "temperature", "model"),
+    ph_sigma: figure("ph_error"),
   },
   example: { co2_mg_l: 30, kh_dkh: 4 },
   run: phForCo2,

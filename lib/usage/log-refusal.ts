@@ -1,0 +1,38 @@
+import { type KeyMode, statement } from "@/db"
+import type { ErrorCode, FieldError } from "@/lib/errors"
+import { GroupCommit } from "./group-commit"
+
+/** A call of a known key that was refused, as the account's request log keeps it. */
+export interface Refusal {
+  readonly account_id: string
+  /** The id of the request, as its problem named it. */
+  readonly id: string
+  readonly key_id: string
+  readonly mode: KeyMode
+  readonly method: string
+  readonly path: string
+  readonly status: number
+  readonly code: ErrorCode
+  readonly detail: string
+  readonly errors: readonly FieldError[]
+}
+
+const largestBatch = 200
+const longestPath = 200
+
+const shared = globalThis as typeof globalThis & { tarnwrightRefusals?: GroupCommit<Refusal, void> }
+
+/** Notes a refusal for the request log. Nobody waits for it: without a database the note is lost, not the answer. */
+export function logRefusal(refusal: Refusal): void {
+  shared.tarnwrightRefusals ??= new GroupCommit(flush, largestBatch)
+  shared.tarnwrightRefusals.commit({ ...refusal, path: refusal.path.slice(0, longestPath) }).catch(() => {})
+}
+
+async function flush(refusals: Refusal[]): Promise<void[]> {
+  await statement("app", {
+    name: "log_refusals",
+    text: "select log_refusals($1)",
+    values: [JSON.stringify(refusals)],
+  })
+  return refusals.map(() => undefined)
+}
