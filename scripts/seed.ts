@@ -3,11 +3,13 @@
  * a run that stopped half-way, is made. Keys cannot be read back, so they are kept in the file named by `DEMO_FILE`.
  */
 import { readFileSync, writeFileSync } from "node:fs"
-import { hash } from "@node-rs/argon2"
 import { asWorker, closePools, type Role, type Trx } from "@/db"
+import { hashPassword } from "@/lib/accounts"
+import { planOf } from "@/lib/billing/plans"
 import type { Ctx } from "@/lib/context"
 import { newId } from "@/lib/id"
 import { createKey } from "@/lib/keys"
+import { createWidget, listWidgets } from "@/lib/widgets"
 import { writeHistory } from "./seed/history"
 import { accounts, admin } from "./seed/world"
 import type { Demo } from "./stack/stack"
@@ -34,7 +36,7 @@ async function load(): Promise<void> {
   const owners = await asWorker(makeAccounts)
   const fernhollow: Ctx = { ...owners.get("fernhollow")!, now }
   const quillback: Ctx = { ...owners.get("quillback")!, now }
-  const widgetId = await asWorker((trx) => makeWidget(trx, fernhollow.account_id))
+  const widgetId = await makeWidget(fernhollow)
 
   const key = { scopes: ["calculate"], mode: "sandbox" } as const
   const sandbox = await createKey({
@@ -75,7 +77,7 @@ async function load(): Promise<void> {
 
 /** The accounts with their people, and for each account the context in which its owner acts. */
 async function makeAccounts(trx: Trx): Promise<Map<string, Omit<Ctx, "now">>> {
-  const passwordHash = await hash(password, { memoryCost: 19_456, timeCost: 2, parallelism: 1 })
+  const passwordHash = await hashPassword(password)
   await makePerson(trx, admin, passwordHash, true)
   const owners = new Map<string, Omit<Ctx, "now">>()
   for (const { slug, name, plan, people } of accounts) {
@@ -91,7 +93,7 @@ async function makeAccounts(trx: Trx): Promise<Map<string, Omit<Ctx, "now">>> {
 }
 
 async function makeAccount(trx: Trx, account: { slug: string; name: string; plan: string }): Promise<string> {
-  const unit_cap = account.plan === "brand" ? 500_000 : 1_000
+  const unit_cap = planOf(account.plan).included_units
   await trx
     .insertInto("account")
     .values({ id: newId("account"), ...account, unit_cap })
@@ -135,25 +137,15 @@ async function join(
     .execute()
 }
 
-async function makeWidget(trx: Trx, account_id: string): Promise<string> {
-  const found = await trx
-    .selectFrom("widget")
-    .select("id")
-    .where("account_id", "=", account_id)
-    .executeTakeFirst()
+async function makeWidget(ctx: Ctx): Promise<string> {
+  const [found] = await listWidgets({ ctx })
   if (found) return found.id
-  const id = newId("widget")
-  await trx
-    .insertInto("widget")
-    .values({
-      account_id,
-      id,
-      calculator: "co2_level",
-      name: "CO2 level on product pages",
-      origins: [shopOrigin],
-    })
-    .execute()
-  return id
+  const input = {
+    calculator: "co2-level",
+    name: "CO2 level on product pages",
+    origins: [shopOrigin],
+  } as const
+  return (await createWidget({ ctx, input })).id
 }
 
 /** The shop page had to take another port, so the origins that the demo allows move with it. */

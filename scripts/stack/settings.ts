@@ -40,7 +40,7 @@ export interface Ports {
 export type DatabaseUrls = Record<LoginRole | "superuser", string>
 
 /** What `lib/env.ts` asks for, as strings of an environment. */
-export type Settings = Record<keyof Omit<Env, "REDIS_URL" | "STRIPE_FAKE_HOST"> | "STRIPE_FAKE_HOST", string>
+export type Settings = Record<keyof Omit<Env, "REDIS_URL">, string>
 
 /** The secrets of this data folder, made on the first run and readable by their owner only. */
 export function keepSecrets(dataDir: string): Secrets {
@@ -84,11 +84,17 @@ export function productSettings(secrets: Secrets, ports: Ports): Settings {
     STRIPE_SECRET_KEY: secrets.stripeSecretKey,
     STRIPE_WEBHOOK_SECRET: secrets.stripeWebhookSecret,
     STRIPE_FAKE_HOST: `127.0.0.1:${ports.stripe}`,
+    WEBHOOKS_ALLOW_LOOPBACK: "1",
   }
 }
 
+interface Place {
+  dataDir: string
+  withNext: boolean
+}
+
 /** The environment of each process, beside what the shell gives it. */
-export function processSettings(secrets: Secrets, ports: Ports, withNext: boolean) {
+export function processSettings(secrets: Secrets, ports: Ports, { dataDir, withNext }: Place) {
   const product = productSettings(secrets, ports)
   const appUrl = loopback(ports.app)
   return {
@@ -105,6 +111,7 @@ export function processSettings(secrets: Secrets, ports: Ports, withNext: boolea
       WEBHOOK_URL: `${appUrl}/api/stripe/webhook`,
       STRIPE_SECRET_KEY: secrets.stripeSecretKey,
       STRIPE_WEBHOOK_SECRET: secrets.stripeWebhookSecret,
+      STATE_FILE: path.join(dataDir, "stripe.json"),
     },
     mail: { PORT: String(ports.mail), SMTP_PORT: String(ports.smtp) },
     shop: { PORT: String(ports.shop), APP_URL: appUrl },

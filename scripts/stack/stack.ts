@@ -179,8 +179,8 @@ async function prepareData(setting: Setting): Promise<{ cluster: Cluster; demo: 
 }
 
 async function startChildren(options: StackOptions, setting: Setting): Promise<Map<string, Child>> {
-  const { dataDir, secrets, ports, withNext, report, signal, undo } = setting
-  const settings = processSettings(secrets, ports, withNext)
+  const { dataDir, secrets, ports, report, signal, undo } = setting
+  const settings = processSettings(secrets, ports, setting)
   const health = `${loopback(ports.app)}/api/v1/health`
   const specs: ChildSpec[] = [
     { name: "mail", script: "fakes/mail/server.ts", env: settings.mail },
