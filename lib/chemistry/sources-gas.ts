@@ -78,6 +78,12 @@ export const gasSources = {
     year: 2024,
     detail: "Filling density of carbon dioxide cylinders, 68 % of the water capacity",
   },
+  youngLaplace: {
+    title:
+      "Young 1805 and Laplace 1806, as in de Gennes, Brochard-Wyart & Quéré, Capillarity and Wetting Phenomena",
+    year: 2004,
+    detail: "Pressure that opens a pore under water: 4σ/d",
+  },
   nioshCarbonDioxide: {
     title: "NIOSH Pocket Guide to Chemical Hazards, carbon dioxide",
     year: 2019,

@@ -37,18 +37,14 @@ export function gasHours(plan: DayPlan): number {
 export function dayPhases(tank: TankBalance, plan: DayPlan, start_co2_mg_l: number): DayPhase[] {
   const gasEnd = gasHours(plan)
   const dark = plan.lead_h + plan.photoperiod_h
-  const edges = [0, Math.min(plan.lead_h, gasEnd), Math.max(plan.lead_h, gasEnd), dark, 24]
   const phases: DayPhase[] = []
+  let start_h = 0
   let level = start_co2_mg_l
-  for (let i = 0; i < 4; i++) {
-    const middle = (edges[i]! + edges[i + 1]!) / 2
-    level = addPhases(phases, tank, plan, {
-      start_h: edges[i]!,
-      end_h: edges[i + 1]!,
-      level,
-      lit: middle > plan.lead_h && middle < dark,
-      gas: middle < gasEnd,
-    })
+  for (const end_h of [Math.min(plan.lead_h, gasEnd), Math.max(plan.lead_h, gasEnd), dark, 24]) {
+    const middle = (start_h + end_h) / 2
+    const stretch = { end_h, lit: middle > plan.lead_h && middle < dark, gas: middle < gasEnd }
+    level = addPhases(phases, tank, plan, stretch, { start_h, level })
+    start_h = end_h
   }
   return phases
 }
@@ -126,50 +122,74 @@ function levelHours(tank: TankBalance, phase: DayPhase): number {
   })
 }
 
+/** A part of the day in which light and gas stay as they are. */
 interface Stretch {
-  readonly start_h: number
   readonly end_h: number
-  readonly level: number
   readonly lit: boolean
   readonly gas: boolean
 }
 
-/** Adds the phases of a stretch in which light and gas stay as they are; returns the level at its end. */
-function addPhases(phases: DayPhase[], tank: TankBalance, plan: DayPlan, stretch: Stretch): number {
-  let { start_h, level } = stretch
+/** Adds the phases of a stretch; returns the level at its end. */
+function addPhases(
+  phases: DayPhase[],
+  tank: TankBalance,
+  plan: DayPlan,
+  stretch: Stretch,
+  from: { readonly start_h: number; readonly level: number },
+): number {
+  let { start_h, level } = from
   while (start_h < stretch.end_h) {
-    const phase = nextPhase(tank, plan, { ...stretch, start_h, level })
+    const left = stretch.end_h - start_h
+    const phase = nextPhase(tank, plan, stretch, start_h, level)
     phases.push(phase)
     level = phase.end_co2_mg_l
     // The last phase ends at the stretch's own edge, so that rounding cannot leave a sliver behind.
-    start_h = phase.reaches ? start_h + phase.hours : stretch.end_h
+    start_h = phase.hours < left ? start_h + phase.hours : stretch.end_h
   }
   return level
 }
 
-/** The phase that a level starts: until the stretch ends, or until it `reaches` the target or zero. */
-function nextPhase(tank: TankBalance, plan: DayPlan, stretch: Stretch): DayPhase & { reaches: boolean } {
-  const { start_h, level, lit } = stretch
+/** The phase that a level starts: until the stretch ends, or until it meets the target or zero. */
+function nextPhase(
+  tank: TankBalance,
+  plan: DayPlan,
+  stretch: Stretch,
+  start_h: number,
+  level: number,
+): DayPhase {
+  const { lit, gas } = stretch
   const left = stretch.end_h - start_h
-  const target = stretch.gas ? plan.target_co2_mg_l : null
-  const open = stretch.gas ? limitLevel(tank, plan.feed_mg_min, lit) : limitLevel(tank, 0, lit)
-  const closed = limitLevel(tank, 0, lit)
-  const phase = { start_h, hours: left, start_co2_mg_l: level, end_co2_mg_l: level, lit, reaches: false }
+  const target = gas ? plan.target_co2_mg_l : null
+  const open = limitLevel(tank, gas ? plan.feed_mg_min : 0, lit)
+  const closed = gas ? limitLevel(tank, 0, lit) : open
   if (level === target && open >= target && closed <= target) {
-    const feed_mg_min = holdFeed(tank, target, lit)
-    return { ...phase, course: "hold", feed_mg_min, limit_co2_mg_l: target }
+    return phaseOf("hold", start_h, left, level, level, lit, holdFeed(tank, target, lit), target)
   }
-  const gasOn = stretch.gas && (target === null || level < target || (level === target && open < target))
+  const gasOn = gas && (target === null || level < target || (level === target && open < target))
   const limit = gasOn ? open : closed
-  const feed_mg_min = gasOn ? plan.feed_mg_min : 0
-  if (level === 0 && limit <= 0) return { ...phase, course: "empty", feed_mg_min, limit_co2_mg_l: 0 }
+  const feed = gasOn ? plan.feed_mg_min : 0
+  if (level === 0 && limit <= 0) return phaseOf("empty", start_h, left, 0, 0, lit, feed, 0)
   const meetsTarget = target !== null && (target - level) * (limit - target) > 0
   const barrier = meetsTarget ? target : limit < 0 ? 0 : null
   const k = tank.exchange_per_h
   const reach = barrier === null ? null : timeToLevel({ start: level, limit, k, target: barrier })
-  const drift = { ...phase, course: "drift" as const, feed_mg_min, limit_co2_mg_l: limit }
-  if (barrier === null || reach === null || reach >= left) {
-    return { ...drift, end_co2_mg_l: levelAfter({ start: level, limit, k, time: left }) }
+  if (barrier !== null && reach !== null && reach < left) {
+    return phaseOf("drift", start_h, reach, level, barrier, lit, feed, limit)
   }
-  return { ...drift, hours: reach, end_co2_mg_l: barrier, reaches: true }
+  const end = levelAfter({ start: level, limit, k, time: left })
+  return phaseOf("drift", start_h, left, level, end, lit, feed, limit)
+}
+
+// By position, since spreading objects here would take longer than the whole day's arithmetic.
+function phaseOf(
+  course: DayPhase["course"],
+  start_h: number,
+  hours: number,
+  start_co2_mg_l: number,
+  end_co2_mg_l: number,
+  lit: boolean,
+  feed_mg_min: number,
+  limit_co2_mg_l: number,
+): DayPhase {
+  return { start_h, hours, start_co2_mg_l, end_co2_mg_l, lit, feed_mg_min, course, limit_co2_mg_l }
 }
