@@ -158,6 +158,8 @@ interface Subscription {
   current_period_start: Date
   current_period_end: Date
   cancel_at_period_end: Generated<boolean>
+  /** When the oldest invoice that is still owed was issued. */
+  past_due_since: Date | null
   updated_at: Generated<Date>
 }
 

@@ -20,8 +20,14 @@ export const actionNames = {
   "key.revoked": "Key revoked",
   "widget.created": "Widget created",
   "widget.changed": "Widget changed",
+  "webhook.created": "Webhook endpoint created",
+  "webhook.changed": "Webhook endpoint changed",
+  "webhook.secret_rotated": "Webhook secret rotated",
+  "webhook.disabled": "Webhook endpoint switched off",
+  "webhook.deleted": "Webhook endpoint deleted",
   "billing.checkout_started": "Checkout opened",
   "billing.portal_opened": "Billing portal opened",
+  "billing.spending_cap_set": "Spending cap set",
   "subscription.changed": "Subscription changed",
 } as const
 

@@ -1,10 +1,13 @@
 import { alreadySignedUp } from "./already-signed-up"
 import { invitation } from "./invitation"
+import { keyExpiring } from "./key-expiring"
 import { keyRevoked } from "./key-revoked"
 import { passwordChanged } from "./password-changed"
+import { paymentFailed } from "./payment-failed"
 import { resetPassword } from "./reset-password"
 import { usageThreshold } from "./usage-threshold"
 import { verifyEmail } from "./verify-email"
+import { webhookDisabled } from "./webhook-disabled"
 
 /** Every letter that the product sends, by the name that a job carries. */
 export const letters = {
@@ -14,16 +17,21 @@ export const letters = {
   password_changed: passwordChanged,
   invitation,
   key_revoked: keyRevoked,
+  key_expiring: keyExpiring,
   usage_threshold: usageThreshold,
+  payment_failed: paymentFailed,
+  webhook_disabled: webhookDisabled,
 } as const
 
 export type LetterName = keyof typeof letters
 
-/** A letter to one address: the name says which `data` it takes. Data is JSON, since it waits in the queue. */
-export type Mail = {
+/** A letter: the name says which `data` it takes. Data is JSON, since it waits in the queue. */
+export type Content = {
   [Name in LetterName]: {
     readonly template: Name
-    readonly to: string
     readonly data: Parameters<(typeof letters)[Name]>[0]
   }
 }[LetterName]
+
+/** A letter to one address. */
+export type Mail = Content & { readonly to: string }

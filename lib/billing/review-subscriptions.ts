@@ -1,0 +1,39 @@
+import { asWorker } from "@/db"
+import { syncCustomer } from "./sync-customer"
+
+/** Name of the hourly job; `scripts/worker.ts` has its task and its hour. */
+export const REVIEW_SUBSCRIPTIONS = "review_subscriptions"
+
+/**
+ * Reads anew every account whose state changes by the clock alone (a payment owed for a week, a period that has ended)
+ * or that has waited a day, in which a lost event would have mended itself.
+ *
+ * @throws AggregateError when some could not be read; the others are done
+ */
+export async function reviewSubscriptions({ now }: { now: Date }): Promise<{ reviewed: number }> {
+  const customers = await asWorker((trx) =>
+    trx
+      .selectFrom("subscription")
+      .innerJoin("account", "account.id", "subscription.account_id")
+      .select("account.stripe_customer_id")
+      .where("account.stripe_customer_id", "is not", null)
+      .where("subscription.status", "!=", "canceled")
+      .where((where) =>
+        where.or([
+          where("subscription.past_due_since", "is not", null),
+          where("subscription.current_period_end", "<", now),
+          where("subscription.updated_at", "<", new Date(now.getTime() - 86_400_000)),
+        ]),
+      )
+      .execute(),
+  )
+  const problems: unknown[] = []
+  for (const { stripe_customer_id } of customers) {
+    await asWorker((trx) => syncCustomer(trx, stripe_customer_id!, now)).catch((error) =>
+      problems.push(error),
+    )
+  }
+  if (problems.length > 0)
+    throw new AggregateError(problems, `${problems.length} subscriptions could not be reviewed`)
+  return { reviewed: customers.length }
+}

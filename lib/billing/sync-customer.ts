@@ -1,0 +1,168 @@
+import type Stripe from "stripe"
+import type { Trx } from "@/db"
+import { ownersOf } from "@/lib/accounts"
+import { recordAct } from "@/lib/audit"
+import type { Ctx } from "@/lib/context"
+import { env } from "@/lib/env"
+import { enqueueMail } from "@/lib/mail"
+import { lockBilling } from "./lock"
+import { deciding, graceEnd, type Standing, serviceState } from "./service-state"
+import {
+  type InvoiceSnapshot,
+  invoiceSnapshot,
+  isOurs,
+  type SubscriptionSnapshot,
+  subscriptionSnapshot,
+} from "./snapshot"
+import { stripe } from "./stripe-client"
+
+/** Invoices read anew each time; an older one no longer changes. */
+const RECENT_INVOICES = 24
+
+/**
+ * Reads a customer's subscriptions and invoices from Stripe and lets the account follow: its plan, its quota and the
+ * invoices it shows. Safe to repeat, at any time and in any order.
+ *
+ * @throws Error when Stripe cannot be read or answers in an unknown shape; nothing is changed then
+ */
+export async function syncCustomer(trx: Trx, customer: string, now: Date): Promise<void> {
+  const account = await trx
+    .selectFrom("account")
+    .select("id")
+    .where("stripe_customer_id", "=", customer)
+    .executeTakeFirst()
+  // Not one of ours, or its account was deleted.
+  if (!account) return
+  await lockBilling(trx, account.id)
+  const { subscriptions, invoices } = await fetchState(customer)
+  await storeInvoices(trx, account.id, invoices)
+  const current = deciding(subscriptions)
+  // An account that never paid keeps the plan it has, which the platform's admin may have given it.
+  if (!current) return
+  const standing = { ...current, past_due_since: pastDueSince(current, invoices) }
+  const before = await storedStanding(trx, account.id)
+  await storeSubscription(trx, account.id, standing, now)
+  await applyToAccount(trx, account.id, standing, now)
+  if (standing.past_due_since && !before?.past_due_since) {
+    await tellOwners(trx, account.id, standing.past_due_since)
+  }
+}
+
+async function fetchState(customer: string) {
+  const [subscriptions, invoices] = await Promise.all([
+    stripe().subscriptions.list({ customer, status: "all", limit: 100 }),
+    stripe().invoices.list({ customer, limit: RECENT_INVOICES }),
+  ])
+  return {
+    subscriptions: subscriptions.data.filter(isOurs).map(subscriptionSnapshot),
+    invoices: invoices.data.filter(isIssued).map(invoiceSnapshot),
+  }
+}
+
+function isIssued(invoice: Stripe.Invoice): boolean {
+  return invoice.status !== "draft"
+}
+
+/** When the oldest invoice that is still open was issued: the same moment however late we learn of it. */
+function pastDueSince(current: SubscriptionSnapshot, invoices: readonly InvoiceSnapshot[]): Date | null {
+  if (current.status !== "past_due") return null
+  const open = invoices.filter(({ status, subscription }) => status === "open" && subscription === current.id)
+  return open.map(({ issued_at }) => issued_at).reduce<Date | null>((a, b) => (a && a < b ? a : b), null)
+}
+
+async function storeInvoices(
+  trx: Trx,
+  account_id: string,
+  invoices: readonly InvoiceSnapshot[],
+): Promise<void> {
+  if (invoices.length === 0) return
+  await trx
+    .insertInto("invoice")
+    .values(invoices.map(({ subscription: _of, ...row }) => ({ account_id, ...row })))
+    .onConflict((conflict) =>
+      conflict.columns(["account_id", "id"]).doUpdateSet((set) => ({
+        number: set.ref("excluded.number"),
+        status: set.ref("excluded.status"),
+        amount_minor: set.ref("excluded.amount_minor"),
+        hosted_url: set.ref("excluded.hosted_url"),
+        issued_at: set.ref("excluded.issued_at"),
+      })),
+    )
+    .execute()
+}
+
+function storedStanding(trx: Trx, account_id: string) {
+  return trx
+    .selectFrom("subscription")
+    .select("past_due_since")
+    .where("account_id", "=", account_id)
+    .executeTakeFirst()
+}
+
+/** A mail to each owner, once for each time that a payment begins to be owed. */
+async function tellOwners(trx: Trx, account_id: string, since: Date): Promise<void> {
+  const { name, slug } = await trx
+    .selectFrom("account")
+    .select(["name", "slug"])
+    .where("id", "=", account_id)
+    .executeTakeFirstOrThrow()
+  const data = {
+    account_name: name,
+    full_until: graceEnd(since).toISOString(),
+    billing_url: `${env().PUBLIC_URL}/portal/${slug}/billing`,
+  }
+  for (const { email } of await ownersOf(trx, account_id)) {
+    await enqueueMail(trx, { template: "payment_failed", to: email, data })
+  }
+}
+
+type Current = SubscriptionSnapshot & Standing
+
+async function storeSubscription(trx: Trx, account_id: string, current: Current, now: Date): Promise<void> {
+  const row = {
+    stripe_subscription_id: current.id,
+    plan: current.plan,
+    status: current.status,
+    current_period_start: current.current_period_start,
+    current_period_end: current.current_period_end,
+    cancel_at_period_end: current.cancel_at_period_end,
+    past_due_since: current.past_due_since,
+    updated_at: now,
+  }
+  await trx
+    .insertInto("subscription")
+    .values({ account_id, ...row })
+    .onConflict((conflict) => conflict.column("account_id").doUpdateSet(row))
+    .execute()
+}
+
+/** Puts the plan and the quota into force. The database tells every process of the change when this commits. */
+async function applyToAccount(trx: Trx, account_id: string, current: Current, now: Date): Promise<void> {
+  const before = await trx
+    .selectFrom("account")
+    .select(["plan", "unit_cap", "period_anchor", "overage_cap_minor"])
+    .where("id", "=", account_id)
+    .forUpdate()
+    .executeTakeFirstOrThrow()
+  const { plan, unit_cap } = serviceState(current, before.overage_cap_minor, now)
+  const period_anchor = plan === "nano" ? null : current.billing_cycle_anchor
+  const same =
+    before.plan === plan &&
+    before.unit_cap === unit_cap &&
+    before.period_anchor?.getTime() === period_anchor?.getTime()
+  if (same) return
+  await trx
+    .updateTable("account")
+    .set({ plan, unit_cap, period_anchor })
+    .where("id", "=", account_id)
+    .execute()
+  const ctx: Ctx = { account_id, actor: { kind: "system", id: "billing" }, now }
+  const detail = {
+    plan_before: before.plan,
+    plan,
+    unit_cap_before: before.unit_cap,
+    unit_cap,
+    status: current.status,
+  }
+  await recordAct(trx, ctx, { action: "subscription.changed", target: current.id, detail })
+}
