@@ -8,6 +8,7 @@ import { z } from "zod"
 import { registry } from "@/app/api/v1/registry"
 import type { AnyOperation, Caller } from "@/lib/api/define-operation"
 import { problems } from "@/lib/api/problem"
+import { tags } from "@/lib/api/tags"
 import { ENGINE_VERSION } from "@/lib/chemistry/engine-version"
 import type { ErrorCode } from "@/lib/errors"
 
@@ -50,7 +51,9 @@ export async function buildDocument(): Promise<object> {
     servers: [
       { url: "/api/v1", description: "This host; the key says whether a call is live or in the sandbox" },
     ],
-    tags: [...new Set(registry.map(({ tag }) => tag))].map((name) => ({ name })),
+    tags: Object.entries(tags)
+      .filter(([name]) => registry.some(({ tag }) => tag === name))
+      .map(([name, description]) => ({ name, description })),
   })
 }
 

@@ -14,7 +14,7 @@ const rooms: { room: RegExp; ours: RegExp; packages: RegExp | "any" }[] = [
   { room: /^lib\/flow\//, ours: /^lib\/(units|numeric|chemistry|gas|flow)\//, packages: /^$/ },
   { room: /^lib\/plan\//, ours: /^lib\/(units|numeric|chemistry|gas|flow|plan)\//, packages: /^$/ },
   {
-    room: /^lib\/api\/(define-|problem|quantity|router|rate-headers|request|field-errors)/,
+    room: /^lib\/api\/(define-|problem|quantity|router|rate-headers|request|field-errors|tags)/,
     ours: /^lib\/(api|units|chemistry\/(answer|engine-version)|errors|context)/,
     packages: /^zod$/,
   },
@@ -56,7 +56,7 @@ const rooms: { room: RegExp; ours: RegExp; packages: RegExp | "any" }[] = [
   },
   {
     room: /^openapi\//,
-    ours: /^(openapi|app\/api\/v1\/registry|lib\/(api\/(define-operation|problem)|chemistry\/engine-version|errors))/,
+    ours: /^(openapi|app\/api\/v1\/registry|lib\/(api\/(define-operation|problem|tags)|chemistry\/engine-version|errors))/,
     packages: "any",
   },
   {

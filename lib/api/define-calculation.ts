@@ -1,6 +1,7 @@
 import { z } from "zod"
 import type { Answer } from "@/lib/chemistry/answer"
 import { defineOperation, type Operation } from "./define-operation"
+import type { Tag } from "./tags"
 
 const caution = z
   .object({ code: z.string(), severity: z.enum(["info", "warning", "danger"]), message: z.string() })
@@ -29,7 +30,7 @@ interface Calculation<
 > {
   id: string
   path: string
-  tag: string
+  tag: Tag
   summary: string
   description?: string
   units: number

@@ -1,6 +1,7 @@
 import type { z } from "zod"
 import type { Ctx } from "@/lib/context"
 import type { ErrorCode } from "@/lib/errors"
+import type { Tag } from "./tags"
 
 /** What a server key may be allowed to do. A browser key has `calculate` alone. */
 export const scopes = [
@@ -41,7 +42,7 @@ export interface Operation<Request extends z.ZodType = z.ZodType, Response exten
   readonly method: "GET" | "POST" | "PATCH" | "DELETE"
   /** Below `/api/v1`; a parameter stands in braces, `/catalog/items/{item_id}`. */
   readonly path: string
-  readonly tag: string
+  readonly tag: Tag
   readonly summary: string
   readonly description?: string
   readonly access: Access
