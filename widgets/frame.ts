@@ -1,0 +1,35 @@
+import { heightIn } from "./shared/height-message"
+import type { Mount } from "./shared/mount"
+
+/** The widget in a frame of its own, as tall as what it holds: for pages that keep foreign scripts out. */
+export const mount: Mount = async (host, { widgetUrl }) => {
+  const { origin, pathname } = new URL(widgetUrl)
+  const address = new URL(`/embed/${pathname.split("/").at(-1)}`, origin)
+  address.searchParams.set("parent", location.origin)
+  for (const name of ["lang", "theme"]) {
+    const value = host.getAttribute(name)
+    if (value) address.searchParams.set(name, value)
+  }
+  const frame = Object.assign(document.createElement("iframe"), {
+    src: address.href,
+    title: host.getAttribute("title") ?? "Tarnwright",
+    width: "100%",
+    height: String(host.clientHeight || 720),
+    referrerPolicy: "origin",
+  })
+  frame.style.cssText = "display:block;border:0"
+
+  function onMessage({ origin: from, source, data }: MessageEvent): void {
+    if (from !== origin || source !== frame.contentWindow) return
+    const height = heightIn(data)
+    if (height !== null) frame.height = String(height)
+  }
+
+  window.addEventListener("message", onMessage)
+  const shadow = host.shadowRoot ?? host.attachShadow({ mode: "open" })
+  shadow.replaceChildren(frame)
+  return () => {
+    window.removeEventListener("message", onMessage)
+    shadow.replaceChildren()
+  }
+}

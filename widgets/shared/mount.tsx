@@ -1,0 +1,74 @@
+import type { ComponentType } from "react"
+import { createRoot } from "react-dom/client"
+import { chooseLocale, type Language, type Locale } from "./locale"
+import { type Session, sessionOf } from "./session"
+import type { ShownWidget } from "./shown-widget"
+import css from "./widget.css?text"
+
+/** Where a part of the widgets is, below the service's origin, and its subresource integrity. */
+export type Address = readonly [path: string, integrity: string]
+
+/** Brings a part, verified by its integrity before a line of it runs. */
+export type Load = (address: Address) => Promise<Part>
+
+/** A calculator or the frame has `mount`; a catalogue of one language has `messages`. */
+export interface Part {
+  readonly mount: Mount
+  readonly messages: unknown
+}
+
+/** Shows something in an element; resolves to how it is taken away again. */
+export type Mount = (host: HTMLElement, mounting: Mounting) => Promise<() => void>
+
+/** What the loader hands over with an element. */
+export interface Mounting {
+  readonly shown: ShownWidget
+  /** The widget's address in the API. */
+  readonly widgetUrl: string
+  readonly load: Load
+}
+
+/** What every calculator is given. */
+export interface CalculatorProps<Messages> {
+  readonly shown: ShownWidget
+  readonly session: Session
+  readonly locale: Locale
+  readonly messages: Messages
+}
+
+/** The catalogues of the calculator that is being built, put in by the build. */
+declare const CATALOGUES: Readonly<Record<Language, Address>>
+
+/** How a calculator is shown in an element's shadow tree. */
+export function mountOf<Messages>(Calculator: ComponentType<CalculatorProps<Messages>>): Mount {
+  return async (host, { shown, widgetUrl, load }) => {
+    const locale = localeOf(host, shown)
+    const { messages } = await load(CATALOGUES[locale.language])
+    const shadow = host.shadowRoot ?? host.attachShadow({ mode: "open", delegatesFocus: true })
+    const sheet = new CSSStyleSheet()
+    sheet.replaceSync(css)
+    shadow.adoptedStyleSheets = [sheet]
+    const root = createRoot(shadow)
+    root.render(
+      <Calculator
+        shown={themed(host, shown)}
+        session={sessionOf(widgetUrl)}
+        locale={locale}
+        messages={messages as Messages}
+      />,
+    )
+    return () => root.unmount()
+  }
+}
+
+function themed(host: HTMLElement, shown: ShownWidget): ShownWidget {
+  const theme = host.getAttribute("theme") ?? shown.settings?.theme ?? "page"
+  return { ...shown, settings: { ...shown.settings, theme } }
+}
+
+/** The element's own language before the widget's, the widget's before the page's, the page's before the browser's. */
+function localeOf(host: HTMLElement, { settings }: ShownWidget): Locale {
+  const chosen = settings?.language === "page" ? null : settings?.language
+  const page = host.parentElement?.closest("[lang]")?.getAttribute("lang")
+  return chooseLocale([host.getAttribute("lang"), chosen, page, ...navigator.languages])
+}
