@@ -1,7 +1,13 @@
 /** The process that does the work outside the request: takes jobs from the queue until it is asked to end. */
 import { setTimeout as pause } from "node:timers/promises"
-import { type Runner, run, type TaskList } from "graphile-worker"
+import { parseCronItems, type Runner, run, type TaskList } from "graphile-worker"
 import { closePools } from "@/db"
+import {
+  PROCESS_STRIPE_EVENT,
+  processStripeEvent,
+  REVIEW_SUBSCRIPTIONS,
+  reviewSubscriptions,
+} from "@/lib/billing"
 import { env } from "@/lib/env"
 import { deliverMail, type Mail, SEND_MAIL } from "@/lib/mail"
 import { loadLocalEnv } from "./stack/local-env"
@@ -11,7 +17,11 @@ loadLocalEnv()
 /** A job may run twice, when its answer is lost: each task is safe to repeat. */
 const taskList: TaskList = {
   [SEND_MAIL]: (payload, { job }) => deliverMail(payload as Mail, `job-${job.id}`),
+  [PROCESS_STRIPE_EVENT]: (payload) => processStripeEvent({ input: payload as { event_id: string } }),
+  [REVIEW_SUBSCRIPTIONS]: async () => void (await reviewSubscriptions({ now: new Date() })),
 }
+
+const timetable = parseCronItems([{ task: REVIEW_SUBSCRIPTIONS, match: "7 * * * *" }])
 
 const ending = new AbortController()
 let runner: Runner | undefined
@@ -30,7 +40,7 @@ while (!ending.signal.aborted) {
       connectionString: env().DATABASE_WORKER_URL,
       concurrency: 5,
       noHandleSignals: true,
-      parsedCronItems: [],
+      parsedCronItems: timetable,
       taskList,
     })
     console.log("ready")
