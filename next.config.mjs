@@ -9,8 +9,25 @@ export default {
   // `npm run check` looks at the types of the whole project; a start need not do it again.
   typescript: { ignoreBuildErrors: true },
   async headers() {
-    return [{ source: "/:path*", headers: securityHeaders }]
+    return [
+      { source: "/:path*", headers: securityHeaders },
+      { source: "/w/:path*", headers: widgetHeaders("public, max-age=300") },
+      // The version and the hash stand in the address; only /w/v1/… changes.
+      {
+        source: "/w/:version(\\d+\\.\\d+\\.\\d+)/:path*",
+        headers: widgetHeaders("public, max-age=31536000, immutable"),
+      },
+    ]
   },
+}
+
+/** Widgets are loaded by pages of every origin; they hold nothing that is anybody's own. */
+function widgetHeaders(cacheControl) {
+  return [
+    { key: "Access-Control-Allow-Origin", value: "*" },
+    { key: "Cross-Origin-Resource-Policy", value: "cross-origin" },
+    { key: "Cache-Control", value: cacheControl },
+  ]
 }
 
 // The content security policy carries a nonce for each answer and is set in proxy.ts.

@@ -14,7 +14,7 @@ export function proxy(request: NextRequest): NextResponse {
   return response
 }
 
-export const config = { matcher: [{ source: "/((?!api/|_next/|w/|.*\\.(?:svg|png|ico|woff2)$).*)" }] }
+export const config = { matcher: [{ source: "/((?!api/|embed/|_next/|w/|.*\\.(?:svg|png|ico|woff2)$).*)" }] }
 
 // React evaluates code in development only, to rebuild the server's stack traces.
 const development = process.env.NODE_ENV === "development" ? " 'unsafe-eval'" : ""

@@ -8,7 +8,7 @@ export const widgetSettings = z.strictObject({
   /** `page` follows the page's own language and colour scheme. */
   language: z.enum(["page", "en", "de", "es", "ja"]).default("page"),
   theme: z.enum(["page", "light", "dark"]).default("page"),
-  kh_unit: z.enum(["dkh", "ppm_caco3", "meq_l"]).default("dkh"),
+  kh_unit: z.enum(["dkh", "kh_ppm_caco3", "kh_meq_l"]).default("dkh"),
   temperature_unit: z.enum(["c", "f"]).default("c"),
   /** What the fields hold before the shopper touches them, by the name of the quantity. */
   start: z
