@@ -24,19 +24,22 @@ export async function ensurePrices(id: PaidPlanId): Promise<PlanPrices> {
   const plan = planOf(id)
   const keys = { base: `tarnwright_${id}_month`, overage: `tarnwright_${id}_overage` }
   const { data } = await stripe().prices.list({ lookup_keys: Object.values(keys), active: true })
-  const found = (key: string, amount: string) =>
-    data.find((price) => price.lookup_key === key && price.unit_amount_decimal?.toString() === amount)?.id
-  const base =
-    found(keys.base, String(plan.price_minor)) ??
-    (await makePrice(id, keys.base, { unit_amount: plan.price_minor, recurring: { interval: "month" } }))
+  const ensure = async (key: string, amount: string, terms: Partial<Stripe.PriceCreateParams>) => {
+    const holder = data.find((price) => price.lookup_key === key)
+    return holder?.unit_amount_decimal?.toString() === amount
+      ? holder.id
+      : makePrice(id, key, holder?.id, terms)
+  }
+  const base = await ensure(keys.base, String(plan.price_minor), {
+    unit_amount: plan.price_minor,
+    recurring: { interval: "month" },
+  })
   const perUnit = overagePerUnit(plan)
   if (perUnit === null) return { base, overage: null }
-  const overage =
-    found(keys.overage, perUnit) ??
-    (await makePrice(id, keys.overage, {
-      unit_amount_decimal: Stripe.Decimal.from(perUnit),
-      recurring: { interval: "month", usage_type: "metered", meter: await ensureMeter() },
-    }))
+  const overage = await ensure(keys.overage, perUnit, {
+    unit_amount_decimal: Stripe.Decimal.from(perUnit),
+    recurring: { interval: "month", usage_type: "metered", meter: await ensureMeter() },
+  })
   return { base, overage }
 }
 
@@ -66,20 +69,25 @@ function overagePerUnit({ overage_minor_per_1000 }: Plan): string | null {
 }
 
 async function makePrice(
-  id: PaidPlanId,
+  plan: PaidPlanId,
   key: string,
-  amount: Partial<Stripe.PriceCreateParams>,
+  replaced: string | undefined,
+  terms: Partial<Stripe.PriceCreateParams>,
 ): Promise<string> {
-  const product = await ensureProduct(id, key)
-  const made = await stripe().prices.create({
-    currency: "usd",
-    product,
-    lookup_key: key,
-    transfer_lookup_key: true,
-    tax_behavior: "exclusive",
-    metadata: { plan: id },
-    ...amount,
-  })
+  const product = await ensureProduct(plan, key)
+  const made = await stripe().prices.create(
+    {
+      currency: "usd",
+      product,
+      lookup_key: key,
+      transfer_lookup_key: true,
+      tax_behavior: "exclusive",
+      metadata: { plan },
+      ...terms,
+    },
+    // Two processes that find the same want make one price.
+    { idempotencyKey: `price:${key}:after:${replaced ?? "none"}` },
+  )
   return made.id
 }
 
