@@ -14,7 +14,7 @@ export function Wordmark({ href = "/" }: { href?: string }) {
         aria-hidden="true"
         viewBox="0 0 100 6"
         preserveAspectRatio="none"
-        className="mt-1 block h-1.5 w-full text-action"
+        className="mt-1 block h-1.5 w-0 min-w-full text-action"
       >
         <path
           d="M0.7 0C1.2 3.800 3 5 6.500 5H93.500C97 5 98.800 3.800 99.300 0"

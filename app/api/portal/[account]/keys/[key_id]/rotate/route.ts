@@ -1,0 +1,5 @@
+import { rotateKey } from "@/lib/keys"
+import { accountEndpoint } from "../../../../endpoint"
+import { rotationInput } from "../../../../schemas"
+
+export const POST = accountEndpoint({ right: "key.rotate", input: rotationInput, run: rotateKey })

@@ -1,0 +1,48 @@
+import { z } from "zod"
+import { scopes } from "@/lib/api/define-operation"
+
+/** Days after which a new key may expire; null: never. */
+export const lifetimes_days = [30, 90, 365, null] as const
+
+/** Hours that a rotated key may go on working beside its successor. */
+export const overlaps_h = [0, 24, 72, 168, 720] as const
+
+export const newKeyInput = z.strictObject({
+  name: z
+    .string()
+    .trim()
+    .min(2, "Say what the key is for, so that you know what stops when you revoke it.")
+    .max(60, "Use at most 60 characters."),
+  kind: z.enum(["server", "browser"]),
+  mode: z.enum(["sandbox", "live"]),
+  scopes: z.array(z.enum(scopes)).min(1, "Allow at least one thing."),
+  origins: z.array(z.string().max(200)).max(50, "A key can have 50 origins."),
+  lifetime_days: z.union([z.literal(30), z.literal(90), z.literal(365), z.null()]),
+})
+
+export const rotationInput = z.strictObject({
+  key_id: z.string(),
+  overlap_h: z.union([z.literal(0), z.literal(24), z.literal(72), z.literal(168), z.literal(720)]),
+})
+
+export const revocationInput = z.strictObject({
+  key_id: z.string(),
+  reason: z.string().trim().max(200).optional(),
+})
+
+export const usageInput = z.strictObject({
+  mode: z.enum(["sandbox", "live"]).default("live"),
+  days: z.coerce.number().int().min(1).max(366).default(30),
+  by: z.enum(["day", "operation", "key"]).default("day"),
+})
+
+export const accountNameInput = z.strictObject({
+  name: z
+    .string()
+    .trim()
+    .min(2, "Write a name.")
+    .max(80, "Use at most 80 characters.")
+    .regex(/^[^\p{Cc}<>]*$/u, "Leave out angle brackets and line breaks."),
+})
+
+export const nothing = z.strictObject({})

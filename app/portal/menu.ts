@@ -1,0 +1,28 @@
+import type { Right } from "@/lib/accounts"
+
+export interface MenuItem {
+  readonly path: string
+  readonly label: string
+  readonly right: Right
+}
+
+/** The pages of an account, in groups, each with the right that it takes to see it. */
+export const menu: readonly { readonly group: string; readonly items: readonly MenuItem[] }[] = [
+  {
+    group: "Build",
+    items: [
+      { path: "", label: "Overview", right: "account.read" },
+      { path: "/keys", label: "Keys", right: "key.read" },
+      { path: "/explorer", label: "Explorer", right: "explorer.use" },
+      { path: "/usage", label: "Usage", right: "usage.read" },
+    ],
+  },
+  {
+    group: "Account",
+    items: [
+      { path: "/team", label: "Team", right: "team.read" },
+      { path: "/billing", label: "Billing", right: "billing.read" },
+      { path: "/settings", label: "Settings", right: "account.manage" },
+    ],
+  },
+]
