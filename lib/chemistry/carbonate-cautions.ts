@@ -1,8 +1,10 @@
 import { ALKALINITY_MOL_L_PER_DKH, PO4_MG_PER_MOL } from "@/lib/units/chemistry"
 import { figures } from "@/lib/units/figures"
 import type { Caution } from "./answer"
-import { type CarbonateSystem, phosphateAlkalinity, type Species } from "./carbonate"
+import { type CarbonateSystem, co2AtPressure, pco2Uatm, phosphateAlkalinity, type Species } from "./carbonate"
 import type { WaterInput } from "./carbonate-water"
+import { livestock, raiseSlowly } from "./cautions"
+import type { Co2Interval } from "./uncertainty"
 
 /** What a carbonate answer was computed from, for the flags on it. */
 export interface Flagged {
@@ -33,6 +35,21 @@ export function carbonateCautions(at: Flagged): Caution[] {
     noProof(at),
   ].filter((caution) => caution !== undefined)
   return [...outsideDesignRange(at), ...flags]
+}
+
+/** What every answer about CO2 shows about the animals, from the upper end of its interval. */
+export function livestockCautions(system: CarbonateSystem, { co2_high_mg_l }: Co2Interval): Caution[] {
+  const saturation = co2AtPressure(system, 1)
+  const shared = [livestock({ co2_high_mg_l, pco2_uatm: pco2Uatm(system, co2_high_mg_l) }), raiseSlowly]
+  if (co2_high_mg_l < saturation) return shared
+  return [
+    ...shared,
+    {
+      code: "no_upper_bound",
+      severity: "warning",
+      message: `These readings set no upper limit to CO2: the upper end shown, ${figures(saturation, 3)} mg/L, is what pure gas dissolves at 1 atm. Read pH and KH more exactly.`,
+    },
+  ]
 }
 
 /** A reading outside what tanks are kept at: none or one caution that names each. */

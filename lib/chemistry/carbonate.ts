@@ -156,6 +156,11 @@ export function co2AtPressure(system: CarbonateSystem, pco2_atm: number): number
   return (pco2_atm / system.pressurePerCo2) * CO2_MG_PER_MOL
 }
 
+/** Partial pressure in µatm of an amount of CO2: the inverse of {@link co2AtPressure}. */
+export function pco2Uatm(system: CarbonateSystem, co2_mg_l: number): number {
+  return (co2_mg_l / CO2_MG_PER_MOL) * system.pressurePerCo2 * 1e6
+}
+
 /** Partial pressure in atm of CO2 in air that is saturated with water vapour. `air_co2_ppm` is that of dry air. */
 export function airPco2Atm({
   air_co2_ppm,

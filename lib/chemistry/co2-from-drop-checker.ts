@@ -4,7 +4,7 @@ import { OutOfDomain, withFields } from "@/lib/units/out-of-domain"
 import { waterQuantities } from "@/lib/units/quantities-water"
 import { type Answer, type Caution, method } from "./answer"
 import { carbonateSystem, speciesAtPh } from "./carbonate"
-import { livestock, raiseSlowly } from "./cautions"
+import { livestockCautions } from "./carbonate-cautions"
 import { type ColourBand, colourBands } from "./colour-bands"
 import { ionicStrengthOfReference } from "./ionic-strength"
 import { type Co2Level, co2Level } from "./level"
@@ -51,7 +51,7 @@ export function co2FromDropChecker(
   const { reference_kh_dkh: kh_dkh, temperature_c } = input
   const { ph, error, band } = reading(input, bands)
   const system = carbonateSystem({ temperature_c, ionic_strength_mol_l: ionicStrengthOfReference(kh_dkh) })
-  const fields = { ph: "indicator_ph", kh_dkh: "reference_kh_dkh" }
+  const fields = { ph: band ? "indicator_colour" : "indicator_ph", kh_dkh: "reference_kh_dkh" }
   const species = withFields(fields, () => speciesAtPh(system, { ph, kh_dkh }))
   const co2_mg_l = species.co2 * CO2_MG_PER_MOL
   const pco2_uatm = species.pco2_atm * 1e6
@@ -61,17 +61,11 @@ export function co2FromDropChecker(
     temperature: Math.abs(slope.temperature) * input.temperature_error_c,
     model: 0.01,
   })
-  const interval = co2Interval(co2_mg_l, spread.sigma_ln)
-  const { co2_high_mg_l } = interval
+  const interval = co2Interval(system, co2_mg_l, spread.sigma_ln)
   return {
-    result: { co2_mg_l, ...interval, level: co2Level(co2_high_mg_l), indicator_ph: ph, pco2_uatm },
+    result: { co2_mg_l, ...interval, level: co2Level(interval.co2_high_mg_l), indicator_ph: ph, pco2_uatm },
     uncertainty: spread,
-    cautions: [
-      livestock({ co2_high_mg_l, pco2_uatm: (pco2_uatm * co2_high_mg_l) / co2_mg_l }),
-      ...(co2Level(co2_high_mg_l) === "dangerous" ? [] : [raiseSlowly]),
-      lag,
-      ...(band?.open ? [endOfScale(band)] : []),
-    ],
+    cautions: [...livestockCautions(system, interval), lag, ...(band?.open ? [endOfScale(band)] : [])],
     assumptions: [
       {
         code: "reference_solution",

@@ -3,10 +3,9 @@ import { CO2_MG_PER_MOL } from "@/lib/units/chemistry"
 import { OutOfDomain, withFields } from "@/lib/units/out-of-domain"
 import { waterQuantities } from "@/lib/units/quantities-water"
 import type { Answer, Assumption } from "./answer"
-import { type CarbonateSystem, type Species, speciesAtPh } from "./carbonate"
-import { outsideDesignRange } from "./carbonate-cautions"
+import { type CarbonateSystem, pco2Uatm, type Species, speciesAtPh } from "./carbonate"
+import { livestockCautions, outsideDesignRange } from "./carbonate-cautions"
 import { airCo2MgL, carbonateDefaults, carbonateMethod, systemOf, type WaterInput } from "./carbonate-water"
-import { livestock, raiseSlowly } from "./cautions"
 import { type IonicStrength, ionicStrength, MODEL_SIGMA } from "./ionic-strength"
 import { type SolvedWater, solveKh } from "./kh-from-co2"
 import { type Co2Level, co2Level } from "./level"
@@ -80,28 +79,26 @@ export function co2FromPhDrop(input: PhDropInput): Answer<PhDropResult, LogNorma
   const ph_drop = degassed_ph - tank_ph
   const baseline_co2_mg_l = baselineCo2MgL(system, input)
   const co2_mg_l = baseline_co2_mg_l * 10 ** ph_drop * (tank.hco3 / degassed.hco3)
-  const pressurePerMg = (system.pressurePerCo2 / CO2_MG_PER_MOL) * 1e6
-  requireDissolved(co2_mg_l * pressurePerMg, ph_drop)
+  const pco2_uatm = pco2Uatm(system, co2_mg_l)
+  requireDissolved(pco2_uatm, ph_drop)
   const perPh = sensitivities(system, { ph: degassed_ph, kh_dkh }, degassed).ph
   const spread = dropSpread(input, perPh, MODEL_SIGMA[ionic.ionic_strength_source])
-  const interval = co2Interval(co2_mg_l, spread.sigma_ln)
-  const level = co2Level(interval.co2_high_mg_l)
+  const interval = co2Interval(system, co2_mg_l, spread.sigma_ln)
   const check = khMethod(input, tank, co2_mg_l)
   return {
     result: {
       co2_mg_l,
       ...interval,
-      level,
+      level: co2Level(interval.co2_high_mg_l),
       ph_drop,
       baseline_co2_mg_l,
-      pco2_uatm: co2_mg_l * pressurePerMg,
+      pco2_uatm,
       ...check,
       ...ionic,
     },
     uncertainty: spread,
     cautions: [
-      livestock({ ...interval, pco2_uatm: interval.co2_high_mg_l * pressurePerMg }),
-      ...(level === "low" || level === "in_range" ? [raiseSlowly] : []),
+      ...livestockCautions(system, interval),
       ...phDropCautions({ input, kh_dkh, system, tank, degassed, co2_mg_l, baseline_co2_mg_l, ...check }),
       ...outsideDesignRange({ water: input, kh_dkh, ph: tank_ph }),
     ],

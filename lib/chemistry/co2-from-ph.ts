@@ -2,9 +2,8 @@ import { CO2_MG_PER_MOL } from "@/lib/units/chemistry"
 import { figures } from "@/lib/units/figures"
 import type { Answer, Caution } from "./answer"
 import { airPco2Atm, speciesAtPh } from "./carbonate"
-import { carbonateCautions, upperBoundOnly } from "./carbonate-cautions"
+import { carbonateCautions, livestockCautions, upperBoundOnly } from "./carbonate-cautions"
 import { carbonateMethod, degassedPh, prepare, type WaterInput, waterAssumptions } from "./carbonate-water"
-import { livestock, raiseSlowly } from "./cautions"
 import { type IonicStrength, MODEL_SIGMA } from "./ionic-strength"
 import { type Co2Level, co2Level } from "./level"
 import {
@@ -54,15 +53,15 @@ export function co2FromPh(input: Co2FromPhInput): Answer<Co2Result, Co2Uncertain
   const co2_mg_l = species.co2 * CO2_MG_PER_MOL
   const slope = sensitivities(system, input, species)
   const spread = co2Spread(slope, input, MODEL_SIGMA[ionic.ionic_strength_source])
-  const { co2_low_mg_l, co2_high_mg_l } = co2Interval(co2_mg_l, spread.sigma_ln)
+  const interval = co2Interval(system, co2_mg_l, spread.sigma_ln)
+  const interval68 = co2Interval(system, co2_mg_l, spread.sigma_ln, 1)
   const upperOnly = khMayBeNone(input)
-  const level = co2Level(co2_high_mg_l)
   return {
     result: {
       co2_mg_l,
-      co2_low_mg_l: upperOnly ? 0 : co2_low_mg_l,
-      co2_high_mg_l,
-      level,
+      co2_low_mg_l: upperOnly ? 0 : interval.co2_low_mg_l,
+      co2_high_mg_l: interval.co2_high_mg_l,
+      level: co2Level(interval.co2_high_mg_l),
       hco3_mmol_l: species.hco3 * 1000,
       co3_mmol_l: species.co3 * 1000,
       dic_mmol_l: (species.co2 + species.hco3 + species.co3) * 1000,
@@ -73,12 +72,11 @@ export function co2FromPh(input: Co2FromPhInput): Answer<Co2Result, Co2Uncertain
     },
     uncertainty: {
       ...spread,
-      co2_low_68_mg_l: upperOnly ? 0 : co2_mg_l * Math.exp(-spread.sigma_ln),
-      co2_high_68_mg_l: co2_mg_l * Math.exp(spread.sigma_ln),
+      co2_low_68_mg_l: upperOnly ? 0 : interval68.co2_low_mg_l,
+      co2_high_68_mg_l: interval68.co2_high_mg_l,
     },
     cautions: [
-      livestock({ co2_high_mg_l, pco2_uatm: (species.pco2_atm * 1e6 * co2_high_mg_l) / co2_mg_l }),
-      ...(level === "low" || level === "in_range" ? [raiseSlowly] : []),
+      ...livestockCautions(system, interval),
       ...(upperOnly ? [upperBoundOnly(kh_dkh, input.kh_error_dkh)] : []),
       ...carbonateCautions({ water: input, ph, kh_dkh, system, species }),
       commonChart(input, co2_mg_l),

@@ -82,7 +82,7 @@ function rowOf(input: Co2GridInput, kh_dkh: number, phs: readonly number[]): Gri
     const co2_mg_l = species.co2 * CO2_MG_PER_MOL
     const slope = sensitivities(system, { ph, kh_dkh }, species)
     const { sigma_ln } = co2Spread(slope, { ...input, kh_dkh }, model)
-    return { ph, co2_mg_l, level: co2Level(co2Interval(co2_mg_l, sigma_ln).co2_high_mg_l) }
+    return { ph, co2_mg_l, level: co2Level(co2Interval(system, co2_mg_l, sigma_ln).co2_high_mg_l) }
   })
   return { kh_dkh, cells }
 }

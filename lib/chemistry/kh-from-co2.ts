@@ -33,7 +33,9 @@ export function khFromCo2(
   checkBounds(input, waterQuantities)
   const { ph, co2_mg_l } = input
   const { kh_dkh, ionic, system } = solveKh(input, { ph, co2MgL: () => co2_mg_l })
-  const species = withFields({ ph: "co2_mg_l" }, () => speciesAtPh(system, { ph, kh_dkh }))
+  const species = withFields({ ph: "co2_mg_l", kh_dkh: "co2_mg_l" }, () =>
+    speciesAtPh(system, { ph, kh_dkh }),
+  )
   const slope = sensitivities(system, { ph, kh_dkh }, species)
   const spread = logNormal({
     ph: Math.abs(slope.ph / slope.kh) * input.ph_error,

@@ -3,9 +3,8 @@ import { OutOfDomain, withFields } from "@/lib/units/out-of-domain"
 import { waterQuantities } from "@/lib/units/quantities-water"
 import type { Answer, Caution } from "./answer"
 import { phAtCo2, speciesAtPh } from "./carbonate"
-import { carbonateCautions, upperBoundOnly } from "./carbonate-cautions"
+import { carbonateCautions, livestockCautions, upperBoundOnly } from "./carbonate-cautions"
 import { carbonateMethod, degassedPh, prepare, type WaterInput, waterAssumptions } from "./carbonate-water"
-import { livestock, raiseSlowly } from "./cautions"
 import { type IonicStrength, MODEL_SIGMA } from "./ionic-strength"
 import { type Co2Level, co2Level } from "./level"
 import {
@@ -56,7 +55,7 @@ export function phForCo2(input: PhForCo2Input): Answer<PhResult, PhUncertainty> 
   const slope = sensitivities(system, { ph, kh_dkh }, species)
   const spread = co2Spread(slope, input, MODEL_SIGMA[ionic.ionic_strength_source])
   const ph_sigma = spread.sigma_ln / Math.abs(slope.ph)
-  const { co2_low_mg_l, co2_high_mg_l } = co2Interval(co2_mg_l, spread.sigma_ln)
+  const interval = co2Interval(system, co2_mg_l, spread.sigma_ln)
   const upperOnly = khMayBeNone(input)
   const degassed_ph = degassedPh(system, input)
   return {
@@ -66,15 +65,14 @@ export function phForCo2(input: PhForCo2Input): Answer<PhResult, PhUncertainty> 
       ph_high: ph + COVERAGE_95 * ph_sigma,
       degassed_ph,
       ph_drop: degassed_ph - ph,
-      co2_low_mg_l: upperOnly ? 0 : co2_low_mg_l,
-      co2_high_mg_l,
-      level: co2Level(co2_high_mg_l),
+      co2_low_mg_l: upperOnly ? 0 : interval.co2_low_mg_l,
+      co2_high_mg_l: interval.co2_high_mg_l,
+      level: co2Level(interval.co2_high_mg_l),
       ...ionic,
     },
     uncertainty: { ...spread, ph_sigma },
     cautions: [
-      livestock({ co2_high_mg_l, pco2_uatm: (species.pco2_atm * 1e6 * co2_high_mg_l) / co2_mg_l }),
-      raiseSlowly,
+      ...livestockCautions(system, interval),
       calibrateProbe,
       ...(degassed_ph < ph ? [belowAir(degassed_ph)] : []),
       ...(upperOnly ? [upperBoundOnly(kh_dkh, input.kh_error_dkh)] : []),

@@ -1,5 +1,5 @@
 import { ALKALINITY_MOL_L_PER_DKH } from "@/lib/units/chemistry"
-import { type CarbonateSystem, phosphateAlkalinity, type Species } from "./carbonate"
+import { type CarbonateSystem, co2AtPressure, phosphateAlkalinity, type Species } from "./carbonate"
 import { logHenrySlope, logK1Slope } from "./constants"
 
 /** Standard errors of ln(result) by where they come from; `sigma_ln` is their root sum of squares. */
@@ -68,15 +68,23 @@ export function co2Spread(slope: Sensitivities, errors: ReadingErrors, model: nu
   })
 }
 
-/** The 95 % interval of CO2. */
+/** The 95 % interval of CO2. Its upper end is never above what pure gas dissolves at 1 atm. */
 export interface Co2Interval {
   readonly co2_low_mg_l: number
   readonly co2_high_mg_l: number
 }
 
-export function co2Interval(co2_mg_l: number, sigma_ln: number): Co2Interval {
-  const factor = Math.exp(COVERAGE_95 * sigma_ln)
-  return { co2_low_mg_l: co2_mg_l / factor, co2_high_mg_l: co2_mg_l * factor }
+export function co2Interval(
+  system: CarbonateSystem,
+  co2_mg_l: number,
+  sigma_ln: number,
+  deviate = COVERAGE_95,
+): Co2Interval {
+  const factor = Math.exp(deviate * sigma_ln)
+  return {
+    co2_low_mg_l: co2_mg_l / factor,
+    co2_high_mg_l: Math.min(co2_mg_l * factor, co2AtPressure(system, 1)),
+  }
 }
 
 /** Whether KH could as well be none within its error: then only the upper end of an interval means something. */

@@ -99,7 +99,13 @@ export const waterQuantities = {
     description: "Standard error of the temperature",
   },
   // Carbonate system
-  co2_mg_l: { unit: "mg/L", ucum: "mg/L", min: 0, max: 3500, description: "Free CO2 dissolved in the water" },
+  co2_mg_l: {
+    unit: "mg/L",
+    ucum: "mg/L",
+    min: 0.001,
+    max: 3500,
+    description: "Free CO2 dissolved in the water",
+  },
   co2_low_mg_l: {
     unit: "mg/L",
     ucum: "mg/L",
@@ -146,7 +152,7 @@ export const waterQuantities = {
     unit: "mg/L",
     ucum: "mg/L",
     min: 0.1,
-    max: 20,
+    max: 50,
     description: "CO2 of the tank before the gas goes on; commonly 2 to 4",
   },
   hco3_mmol_l: { unit: "mmol/L", ucum: "mmol/L", min: 0, max: 1000, description: "Bicarbonate" },
