@@ -19,15 +19,13 @@ const shopOrigin = new URL(setting("SHOP_URL")).origin
 const password = setting("DEMO_PASSWORD")
 const superuserUrl = setting("DATABASE_SUPERUSER_URL")
 
-const kept = readDemo()
-if (!kept) {
+const made = readDemo()
+if (made) {
+  await moveShop(made)
+  console.log("its shop page moved to another port")
+} else {
   await load()
   console.log("loaded")
-} else if (kept.shopOrigin !== shopOrigin) {
-  await moveShop(kept)
-  console.log("kept from the last run, the shop page on its new port")
-} else {
-  console.log("kept from the last run")
 }
 await closePools()
 

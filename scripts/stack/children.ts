@@ -33,13 +33,13 @@ export interface Child {
   stop: () => Promise<void>
 }
 
-const READY_WITHIN_MS = 60_000
+const READY_WITHIN_MS = 120_000
 const STOP_WITHIN_MS = 28_000
 
 /**
  * Starts one process and resolves when it is ready.
  *
- * @throws SetupError with the end of its log when it dies or says nothing within a minute.
+ * @throws SetupError with the end of its log when it dies or says nothing within two minutes.
  */
 export async function startChild(spec: ChildSpec, options: ChildOptions): Promise<Child> {
   const logFile = path.join(options.logDir, `${spec.name}.log`)
@@ -124,7 +124,7 @@ async function ready(
     if (spec.health ? await answers(spec.health) : saidReady) return
     await new Promise((resolve) => setTimeout(resolve, 50))
   }
-  throw new SetupError(`${spec.name} was not ready within 60 s (log: ${logFile}):\n${tail(logFile)}`)
+  throw new SetupError(`${spec.name} was not ready within two minutes (log: ${logFile}):\n${tail(logFile)}`)
 }
 
 async function answers(address: string): Promise<boolean> {

@@ -21,8 +21,9 @@ const programs = {
 export async function prepare(names) {
   try {
     checkNode()
-    await installPrograms(names.map((name) => programs[name]).filter((program) => !program.isThere()))
-    await installModules()
+    const missing = names.map((name) => programs[name]).filter((program) => !program.isThere())
+    const outcomes = await Promise.allSettled([installPrograms(missing), installModules()])
+    for (const { reason } of outcomes) if (reason) throw reason
   } catch (error) {
     say(error.message)
     process.exit(1)

@@ -11,6 +11,7 @@
  */
 import { existsSync, mkdirSync, readFileSync } from "node:fs"
 import path from "node:path"
+import { migrate } from "../migrate"
 import { ensureBuild } from "./build"
 import { type Child, type ChildSpec, startChild } from "./children"
 import { ensureDatabase } from "./database"
@@ -158,24 +159,38 @@ async function prepareData(setting: Setting): Promise<{ cluster: Cluster; demo: 
   signal.throwIfAborted()
 
   await ensureDatabase(root, secrets, ports.postgres)
-  const kept = {
-    ...productSettings(secrets, ports),
-    DATABASE_OWNER_URL: databaseUrls(secrets, ports.postgres).owner,
-  }
+  const ownerUrl = databaseUrls(secrets, ports.postgres).owner
+  const kept = { ...productSettings(secrets, ports), DATABASE_OWNER_URL: ownerUrl }
   keepLocalEnv(dataDir, kept)
-  const script = (file: string, env: Record<string, string>) =>
-    runOnce({ root, args: ["--import", "tsx", file], env: environment(env), signal })
-  report(`migrations: ${(await script("scripts/migrate.ts", kept)).trim()}`)
+  const applied = await migrate(ownerUrl)
+  report(`migrations: ${applied.length > 0 ? `applied ${applied.join(", ")}` : "nothing to apply"}`)
+  signal.throwIfAborted()
 
-  const demoFile = path.join(dataDir, "demo.json")
-  const demoSettings = {
-    DEMO_FILE: demoFile,
-    DEMO_PASSWORD: secrets.demoPassword,
-    SHOP_URL: loopback(ports.shop),
-    DATABASE_SUPERUSER_URL: databaseUrls(secrets, ports.postgres).superuser,
+  const demo = await prepareDemo(setting, kept)
+  return { cluster, demo }
+}
+
+/** The demo world, loaded when it is not there, or when its shop page has to move to another port. */
+async function prepareDemo(setting: Setting, env: Record<string, string>): Promise<Demo> {
+  const { dataDir, secrets, ports, report, signal } = setting
+  const file = path.join(dataDir, "demo.json")
+  const read = (): Demo => JSON.parse(readFileSync(file, "utf8"))
+  const shopUrl = loopback(ports.shop)
+  if (existsSync(file) && read().shopOrigin === shopUrl) {
+    report("demo world: kept from the last run")
+    return read()
   }
-  report(`demo world: ${(await script("scripts/seed.ts", { ...kept, ...demoSettings })).trim()}`)
-  return { cluster, demo: JSON.parse(readFileSync(demoFile, "utf8")) }
+  const given = {
+    ...env,
+    DATABASE_SUPERUSER_URL: databaseUrls(secrets, ports.postgres).superuser,
+    DEMO_FILE: file,
+    DEMO_PASSWORD: secrets.demoPassword,
+    SHOP_URL: shopUrl,
+  }
+  const args = ["--import", "tsx", "scripts/seed.ts"]
+  const said = await runOnce({ root, args, env: environment(given), signal })
+  report(`demo world: ${said.trim()}`)
+  return read()
 }
 
 async function startChildren(options: StackOptions, setting: Setting): Promise<Map<string, Child>> {
