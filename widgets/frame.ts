@@ -6,10 +6,9 @@ export const mount: Mount = async (host, { widgetUrl }) => {
   const { origin, pathname } = new URL(widgetUrl)
   const address = new URL(`/embed/${pathname.split("/").at(-1)}`, origin)
   address.searchParams.set("parent", location.origin)
-  for (const name of ["lang", "theme"]) {
-    const value = host.getAttribute(name)
-    if (value) address.searchParams.set(name, value)
-  }
+  const lang = host.getAttribute("lang") ?? host.closest("[lang]")?.getAttribute("lang")
+  if (lang) address.searchParams.set("lang", lang)
+  address.searchParams.set("theme", host.getAttribute("theme") ?? schemeOf(host))
   const frame = Object.assign(document.createElement("iframe"), {
     src: address.href,
     title: host.getAttribute("title") ?? "Tarnwright",
@@ -32,4 +31,11 @@ export const mount: Mount = async (host, { widgetUrl }) => {
     window.removeEventListener("message", onMessage)
     shadow.replaceChildren()
   }
+}
+
+/** A frame cannot see the page's colour scheme: `page` where the page has both and the visitor's system decides. */
+function schemeOf(host: HTMLElement): "light" | "dark" | "page" {
+  const schemes = getComputedStyle(host).colorScheme
+  if (!schemes.includes("dark")) return "light"
+  return schemes.includes("light") ? "page" : "dark"
 }

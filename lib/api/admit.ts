@@ -22,7 +22,9 @@ export async function admit(
   progress: Progress,
 ): Promise<Access> {
   const { access: needed } = match.operation
-  if (needed.kind === "widget") return admitWidget(match.params.widget_id ?? "", request, progress)
+  if (needed.kind === "widget") {
+    return admitWidget(match.params.widget_id ?? "", request, publicUrl, progress)
+  }
   if (needed.kind !== "key") throw new Error(`${match.operation.id} admits everybody`)
 
   const access = await keyOf(request)
@@ -63,12 +65,19 @@ function refuseOutOfForce(access: Access): void {
   refuseSuspended(access)
 }
 
-async function admitWidget(widget_id: string, request: ApiRequest, progress: Progress): Promise<Access> {
+async function admitWidget(
+  widget_id: string,
+  request: ApiRequest,
+  publicUrl: string,
+  progress: Progress,
+): Promise<Access> {
   const access = await accessOfWidget(widget_id)
   if (!access || access.revoked_at) throw new TarnwrightError("not_found", "There is no such widget.")
   progress.access = access
   const origin = request.header("origin")
-  if (!origin || !originMatches(origin, access.origins)) {
+  // In a frame the widget stands on a page of ours, which none but the widget's origins may frame.
+  const isFramed = origin === new URL(publicUrl).origin
+  if (!origin || !(isFramed || originMatches(origin, access.origins))) {
     throw new TarnwrightError(
       "origin_not_allowed",
       "This widget may not be used on this page's origin. Add it to the widget.",

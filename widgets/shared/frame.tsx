@@ -40,7 +40,7 @@ export function Frame({ title, locale, messages, shown, session, children }: Fra
       {(link || shown.credit_line) && (
         <footer className="footer" part="footer">
           {link && (
-            <a className="link" part="link" href={link.url}>
+            <a className="link" part="link" href={link.url} target="_top">
               {link.label}
             </a>
           )}
