@@ -46,7 +46,9 @@ const queueRights = `
 
 async function applyMigrations(pool: pg.Pool): Promise<string[]> {
   const db = new Kysely<unknown>({ dialect: new PostgresDialect({ pool }) })
-  const { error, results = [] } = await new Migrator({ db, provider }).migrateToLatest()
+  // Two branches may each bring a migration, and the one merged last the older name.
+  const migrator = new Migrator({ db, provider, allowUnorderedMigrations: true })
+  const { error, results = [] } = await migrator.migrateToLatest()
   const failed = results.find((result) => result.status === "Error")
   if (failed) throw new Error(`Migration ${failed.migrationName} failed.`, { cause: error })
   if (error) throw error
