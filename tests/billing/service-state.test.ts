@@ -36,7 +36,7 @@ describe("what a subscription gives", () => {
 })
 
 describe("the subscription that decides", () => {
-  const one = (status: string, day: number) => ({ status, created: day(day) })
+  const one = (status: string, onDay: number) => ({ status, created: day(onDay) })
 
   it("is the one that runs, whatever ended later", () => {
     const running = one("active", 1)
