@@ -3,7 +3,7 @@ import { z } from "zod"
 const secret = z.string().min(32)
 
 /** Settings that the start command writes for a local run and an operator sets elsewhere. */
-const settings = z.object({
+const shape = z.object({
   /** Address that browsers use; a proxy may stand between it and the server. */
   PUBLIC_URL: z.url(),
   /** The application's own role: not the owner of any table, subject to row-level security. */
@@ -14,7 +14,9 @@ const settings = z.object({
   KEY_PEPPERS: z.string().regex(/^\d+:[^,]{32,}(,\d+:[^,]{32,})*$/),
   NEXTAUTH_SECRET: secret,
   /** 32 bytes in base64: encrypts second-factor seeds and webhook secrets at rest. */
-  ENCRYPTION_KEY: z.base64().refine((value) => Buffer.from(value, "base64").length === 32, "32 bytes in base64"),
+  ENCRYPTION_KEY: z
+    .base64()
+    .refine((value) => Buffer.from(value, "base64").length === 32, "32 bytes in base64"),
   /** Ed25519 private key as a JSON Web Key: signs widget session tokens. */
   WIDGET_SIGNING_KEY: z.string().startsWith("{"),
   SMTP_URL: z.url(),
@@ -27,9 +29,19 @@ const settings = z.object({
     .regex(/^127\.0\.0\.1:\d+$/)
     .optional(),
   REDIS_URL: z.url().optional(),
+  /** `1` lets webhooks go to this machine, over http and to any port: for local runs and tests alone. */
+  WEBHOOKS_ALLOW_LOOPBACK: z.literal("1").optional(),
 })
 
-export type Env = z.infer<typeof settings>
+const settings = shape.refine(
+  (given) => given.WEBHOOKS_ALLOW_LOOPBACK === undefined || new URL(given.PUBLIC_URL).protocol !== "https:",
+  {
+    path: ["WEBHOOKS_ALLOW_LOOPBACK"],
+    message: "not where PUBLIC_URL is https, since a customer could then reach this machine's services",
+  },
+)
+
+export type Env = z.infer<typeof shape>
 
 let parsed: Env | undefined
 

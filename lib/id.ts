@@ -14,6 +14,7 @@ const prefixes = {
   catalog_item: "item",
   enquiry: "enq",
   webhook_endpoint: "hook",
+  webhook_event: "evt",
   webhook_delivery: "dlv",
   import: "imp",
 } as const

@@ -9,7 +9,20 @@ import {
   reviewSubscriptions,
 } from "@/lib/billing"
 import { env } from "@/lib/env"
+import { remindOfExpiry } from "@/lib/keys"
 import { deliverMail, type Mail, SEND_MAIL } from "@/lib/mail"
+import {
+  ANNOUNCE_THRESHOLD,
+  announceThreshold,
+  deleteExpired,
+  describeDrift,
+  dropOldPartitions,
+  makePartitions,
+  type ReachedThreshold,
+  reconcileUsage,
+  rollUpUsage,
+} from "@/lib/usage"
+import { DELIVER_WEBHOOK, deliverWebhook, recoverDeliveries } from "@/lib/webhooks"
 import { loadLocalEnv } from "./stack/local-env"
 
 loadLocalEnv()
@@ -19,36 +32,75 @@ const taskList: TaskList = {
   [SEND_MAIL]: (payload, { job }) => deliverMail(payload as Mail, `job-${job.id}`),
   [PROCESS_STRIPE_EVENT]: (payload) => processStripeEvent({ input: payload as { event_id: string } }),
   [REVIEW_SUBSCRIPTIONS]: async () => void (await reviewSubscriptions({ now: new Date() })),
+  [ANNOUNCE_THRESHOLD]: (payload) => announceThreshold(payload as ReachedThreshold),
+  roll_up_usage: async () => void (await rollUpUsage()),
+  async reconcile_usage() {
+    for (const drift of await reconcileUsage()) console.error(describeDrift(drift))
+  },
+  make_partitions: () => makePartitions(),
+  drop_old_partitions: async () => void (await dropOldPartitions()),
+  delete_expired: async () => void (await deleteExpired()),
+  remind_of_expiry: async () => void (await remindOfExpiry()),
+  recover_deliveries: async () => void (await recoverDeliveries()),
 }
 
-const timetable = parseCronItems([{ task: REVIEW_SUBSCRIPTIONS, match: "7 * * * *" }])
+/** Minutes and hours are UTC. */
+const timetable = parseCronItems([
+  { task: REVIEW_SUBSCRIPTIONS, match: "7 * * * *" },
+  { task: "roll_up_usage", match: "1,11,21,31,41,51 * * * *" },
+  { task: "recover_deliveries", match: "3,8,13,18,23,28,33,38,43,48,53,58 * * * *" },
+  { task: "remind_of_expiry", match: "17 * * * *" },
+  { task: "make_partitions", match: "5 0 * * *", options: { backfillPeriod: 86_400_000 } },
+  { task: "drop_old_partitions", match: "25 1 * * *" },
+  { task: "delete_expired", match: "35 * * * *" },
+  { task: "reconcile_usage", match: "45 1 * * *", options: { backfillPeriod: 86_400_000 } },
+])
+
+/** Webhooks have hands of their own: receivers that are slow to answer must not hold up mail. */
+const queues = [
+  { taskList, parsedCronItems: timetable, concurrency: 5 },
+  {
+    taskList: {
+      [DELIVER_WEBHOOK]: (payload) => deliverWebhook(payload as { account_id: string; delivery_id: string }),
+    } satisfies TaskList,
+    parsedCronItems: [],
+    concurrency: 10,
+  },
+]
 
 const ending = new AbortController()
-let runner: Runner | undefined
+const runners = new Set<Runner>()
 for (const signal of ["SIGTERM", "SIGINT"] as const) {
   process.once(signal, () => {
     ending.abort()
-    runner?.stop().catch(() => {})
+    for (const runner of runners) runner.stop().catch(() => {})
   })
 }
 
-// Each round lasts until the worker is asked to end, or until the database has been gone for longer than the queue's
-// own patience; then the next one waits for it to come back.
-while (!ending.signal.aborted) {
-  try {
-    runner = await run({
-      connectionString: env().DATABASE_WORKER_URL,
-      concurrency: 5,
-      noHandleSignals: true,
-      parsedCronItems: timetable,
-      taskList,
-    })
-    console.log("ready")
-    if (ending.signal.aborted) await runner.stop()
-    await runner.promise
-  } catch (error) {
-    console.error(`The queue cannot be read: ${(error as Error).message}`)
-    await pause(1_000, undefined, { signal: ending.signal }).catch(() => {})
+let waiting = queues.length
+await Promise.all(queues.map(workOn))
+await closePools()
+
+/**
+ * Takes jobs until the worker is asked to end. Each round lasts until then, or until the database has been gone for
+ * longer than the queue's own patience; then the next one waits for it to come back.
+ */
+async function workOn(queue: (typeof queues)[number]): Promise<void> {
+  while (!ending.signal.aborted) {
+    let runner: Runner | undefined
+    try {
+      await makePartitions()
+      runner = await run({ connectionString: env().DATABASE_WORKER_URL, noHandleSignals: true, ...queue })
+      runners.add(runner)
+      waiting -= 1
+      if (waiting === 0) console.log("ready")
+      if (ending.signal.aborted) await runner.stop()
+      await runner.promise
+    } catch (error) {
+      console.error(`The queue cannot be read: ${(error as Error).message}`)
+      await pause(1_000, undefined, { signal: ending.signal }).catch(() => {})
+    } finally {
+      if (runner) runners.delete(runner)
+    }
   }
 }
-await closePools()

@@ -27,6 +27,8 @@ const rights = {
   "usage.read": { owner: "all", developer: "all", viewer: "all", admin: "all" },
   "widget.read": { owner: "all", developer: "all", merchandiser: "all", admin: "all" },
   "widget.manage": { owner: "all", developer: "all", merchandiser: "all" },
+  "webhook.read": { owner: "all", developer: "all", admin: "all" },
+  "webhook.manage": { owner: "all", developer: "all" },
   "audit.read": { owner: "all", developer: "own", admin: "all" },
   "platform.manage": { admin: "all" },
 } as const satisfies Record<string, Partial<Record<Party, Reach>>>

@@ -1,8 +1,7 @@
 import { asAdmin } from "@/db"
-import { recordAct } from "@/lib/audit"
 import type { Ctx } from "@/lib/context"
 import { TarnwrightError } from "@/lib/errors"
-import { markRevoked } from "./revoke"
+import { revokeFoundKey } from "./revoke"
 import { type KeyRow, keyColumns } from "./row"
 
 /**
@@ -25,12 +24,6 @@ export function revokeKeyAsAdmin({
       .executeTakeFirst()
     if (!key) throw new TarnwrightError("not_found", "There is no key with this id.")
     if (key.revoked_at) throw new TarnwrightError("conflict", "This key was revoked before.")
-    await markRevoked(trx, { key, by: ctx.actor.id, at: ctx.now, reason: input.reason })
-    await recordAct(
-      trx,
-      { ...ctx, account_id: key.account_id },
-      { action: "key.revoked", target: key.id, detail: { reason: input.reason } },
-    )
-    return { ...key, revoked_at: ctx.now, revoked_by: ctx.actor.id, revoked_reason: input.reason }
+    return revokeFoundKey(trx, { ...ctx, account_id: key.account_id }, key, input.reason)
   })
 }

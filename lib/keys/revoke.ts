@@ -1,7 +1,9 @@
 import { type Trx, withTenant } from "@/db"
 import { recordAct } from "@/lib/audit"
-import type { Call } from "@/lib/context"
+import type { Call, Ctx } from "@/lib/context"
 import { TarnwrightError } from "@/lib/errors"
+import { notifyOwners } from "@/lib/mail"
+import { publishEvent } from "@/lib/webhooks"
 import { type KeyRow, keyColumns } from "./row"
 
 export interface Revocation {
@@ -24,31 +26,68 @@ export function revokeKey({ ctx, input }: Call<Revocation>): Promise<KeyRow> {
       .executeTakeFirst()
     if (!key) throw new TarnwrightError("not_found", "There is no such key in this account.")
     if (key.revoked_at) return key
-    await markRevoked(trx, { key, by: ctx.actor.id, at: ctx.now, reason: input.reason })
-    await recordAct(trx, ctx, {
-      action: "key.revoked",
-      target: key.id,
-      detail: { reason: input.reason ?? null },
-    })
-    return { ...key, revoked_at: ctx.now, revoked_by: ctx.actor.id, revoked_reason: input.reason ?? null }
+    return revokeFoundKey(trx, ctx, key, input.reason)
   })
 }
 
-/** Marks a key revoked; a trigger of the database announces it to every process. */
-export async function markRevoked(
+/**
+ * Revokes a key that is in force: marks it, records the act, tells the owners by mail and the endpoints by webhook. A
+ * trigger of the database announces it to every process.
+ */
+export async function revokeFoundKey(
   trx: Trx,
-  {
-    key,
-    by,
-    at,
-    reason,
-  }: { key: Pick<KeyRow, "account_id" | "id">; by: string; at: Date; reason: string | undefined },
-): Promise<void> {
-  await trx
+  ctx: Ctx,
+  key: KeyRow,
+  reason: string | undefined,
+): Promise<KeyRow> {
+  const revoked = {
+    revoked_at: ctx.now,
+    revoked_by: ctx.actor.id,
+    revoked_reason: reason ?? null,
+  }
+  const { numUpdatedRows } = await trx
     .updateTable("api_key")
-    .set({ revoked_at: at, revoked_by: by, revoked_reason: reason ?? null })
+    .set(revoked)
     .where("account_id", "=", key.account_id)
     .where("id", "=", key.id)
     .where("revoked_at", "is", null)
-    .execute()
+    .executeTakeFirstOrThrow()
+  // Another call was faster, and has told everybody.
+  if (numUpdatedRows === 0n) return { ...key, ...revoked }
+
+  await recordAct(trx, ctx, { action: "key.revoked", target: key.id, detail: { reason: reason ?? null } })
+  const revoked_by = await nameOf(trx, ctx)
+  await notifyOwners(trx, key.account_id, ({ account_name, portal_url }) => ({
+    template: "key_revoked",
+    data: {
+      account_name,
+      key_name: key.name,
+      last4: key.last4,
+      revoked_by,
+      reason: reason ?? "",
+      keys_url: `${portal_url}/keys`,
+    },
+  }))
+  const { id: key_id, name, kind, mode, last4 } = key
+  await publishEvent(trx, key.account_id, "key.revoked", {
+    key_id,
+    name,
+    kind,
+    mode,
+    last4,
+    reason: reason ?? null,
+    revoked_at: ctx.now.toISOString(),
+  })
+  return { ...key, ...revoked }
+}
+
+/** Who acts, as a letter to the owners names them. */
+async function nameOf(trx: Trx, { actor }: Ctx): Promise<string> {
+  if (actor.kind !== "user") return "the Tarnwright team"
+  const person = await trx
+    .selectFrom("app_user")
+    .select("name")
+    .where("id", "=", actor.id)
+    .executeTakeFirstOrThrow()
+  return person.name
 }

@@ -1,5 +1,4 @@
-import { sql } from "kysely"
-import type { Trx } from "@/db"
+import { enqueueJob, type Trx } from "@/db"
 import type { Mail } from "./letters"
 
 /** Name of the job that sends a mail; `scripts/worker.ts` has its task. */
@@ -7,5 +6,5 @@ export const SEND_MAIL = "send_mail"
 
 /** Puts a mail on the queue in the caller's transaction: it is sent if, and only if, that commits. */
 export async function enqueueMail(trx: Trx, mail: Mail): Promise<void> {
-  await sql`select enqueue_job(${SEND_MAIL}, ${JSON.stringify(mail)}::json)`.execute(trx)
+  await enqueueJob(trx, { task: SEND_MAIL, payload: mail })
 }

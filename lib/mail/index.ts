@@ -1,4 +1,5 @@
 export { deliverMail } from "./deliver"
 export { enqueueMail, SEND_MAIL } from "./enqueue"
 export type { LetterName, Mail } from "./letters"
+export { type AboutAccount, notifyOwners } from "./notify-owners"
 export { renderMail } from "./render"

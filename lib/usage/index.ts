@@ -1,3 +1,4 @@
+export { ANNOUNCE_THRESHOLD, announceThreshold, type ReachedThreshold } from "./announce-threshold"
 export { commitUsage, type MeteredCall, SANDBOX_UNITS_A_DAY, type UsageReceipt } from "./commit"
 export { databaseAnswers } from "./database-answers"
 export {
@@ -9,6 +10,10 @@ export {
 } from "./idempotency"
 export { LOG_DAYS, type LoggedCall, type LogQuery, listCalls } from "./list-calls"
 export { logRefusal, type Refusal } from "./log-refusal"
+export { dropOldPartitions, makePartitions } from "./partitions"
 export { type Quota, quotaOf } from "./quota"
 export { createMemoryRateLimiter, type RateLimiter, type RateState, rateLimiter } from "./rate-limiter"
+export { type Drift, describeDrift, reconcileUsage } from "./reconcile"
+export { deleteExpired } from "./retention"
+export { type RolledHours, rollUpUsage } from "./roll-up"
 export { type UsageQuery, type UsageRow, usageBy } from "./usage-by"

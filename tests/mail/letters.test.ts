@@ -21,9 +21,27 @@ const mails: Mail[] = [
       account_name: "<b>Shop</b>",
       key_name: "<b>k</b>",
       last4: "a1b2",
+      revoked_by: "<b>Ada</b>",
       reason: "<b>leaked</b>",
       keys_url: url,
     },
+  },
+  {
+    template: "key_expiring",
+    to: "a@shop.test",
+    data: {
+      account_name: "<b>Shop</b>",
+      key_name: "<b>k</b>",
+      last4: "a1b2",
+      expires_at: "2027-01-01T00:00:00Z",
+      rotated: false,
+      keys_url: url,
+    },
+  },
+  {
+    template: "webhook_disabled",
+    to: "a@shop.test",
+    data: { account_name: "<b>Shop</b>", url: "https://shop.test/hooks?<b>", webhooks_url: url },
   },
   {
     template: "usage_threshold",
