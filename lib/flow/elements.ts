@@ -11,6 +11,8 @@ export interface ElementInput {
   readonly k?: number
   /** Bore of the element itself where it is not the hose's. */
   readonly inner_diameter_mm?: number
+  /** True if it sits in the `return_hose`, where the loop has one. */
+  readonly in_return?: boolean
   /** How many of them stand in the loop, 1 if not given. */
   readonly count?: number
   /** Spray bar only: its holes. */
@@ -59,9 +61,9 @@ export const elementTable = {
   heater: row("Inline heater", 2, 1, 4, "own", "engineeringJudgement"),
   uv: row("UV unit", 3, 2, 6, "own", "engineeringJudgement"),
   inline_diffuser: row("Inline diffuser", 2, 1, 4, "own", "engineeringJudgement"),
-  reactor: row("Reactor, empty tube", 4, 2.5, 6, "hose", "engineeringJudgement"),
-  reactor_with_internals: row("Reactor with internals", 8, 5, 15, "hose", "engineeringJudgement"),
-  reactor_on_bypass: row("Reactor on a bypass", 0, 0, 1, "hose", "engineeringJudgement"),
+  // On a bypass a reactor costs the main loop next to nothing: leave it out, or give the verdict its bypass_fraction.
+  reactor: row("Reactor, empty tube", 4, 2.5, 6, "own", "engineeringJudgement"),
+  reactor_with_internals: row("Reactor with internals", 8, 5, 15, "own", "engineeringJudgement"),
   other: row("Other element", 1, 1, 1, "own", "engineeringJudgement"),
 } satisfies Record<string, ElementRow>
 
@@ -91,12 +93,12 @@ export function lossOf(element: ElementInput, hose_mm: number, index: number): L
     return { k, low: k, high: k, bore_mm: own_mm }
   }
   if (element.kind === "other") {
-    throw new OutOfDomain(`elements.${index}.k`, "an element of kind other needs its loss coefficient k")
+    throw new OutOfDomain(`elements.${index}.k`, "An element of kind other needs its loss coefficient k.")
   }
   if (element.kind === "barb" && own_mm > hose_mm) {
     throw new OutOfDomain(
       `elements.${index}.inner_diameter_mm`,
-      `a barb sits inside the hose, so its bore cannot be ${own_mm} mm in a hose of ${hose_mm} mm: measure the bore of the barb itself`,
+      `A barb sits inside the hose, so its bore cannot be ${own_mm} mm in a hose of ${hose_mm} mm. Measure the bore of the barb itself.`,
     )
   }
   const bore_mm =

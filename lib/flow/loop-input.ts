@@ -1,14 +1,17 @@
 import { waterDensity, waterViscosity } from "@/lib/chemistry/water"
+import { checkBounds } from "@/lib/units/bounds"
 import { figures } from "@/lib/units/figures"
 import { OutOfDomain } from "@/lib/units/out-of-domain"
+import { quantities } from "@/lib/units/quantities"
 import { type ElementInput, type Loss, lossOf } from "./elements"
-import { type HoseRun, type Loop, quadraticOf } from "./loop"
+import { type HoseRun, type Loop, quadraticOf, solveFlow } from "./loop"
 import { CLEAN_MEDIA_FRACTION, cleanMediaLoss, clogFactor, type MediaLoss } from "./media"
 import {
   advertisedCurve,
   atSpeed,
   CURVE_EXPONENT,
   type CurvePoint,
+  M3_S_PER_L_H,
   type PumpCurve,
   tabulatedCurve,
 } from "./pump-curve"
@@ -29,7 +32,7 @@ export interface HoseInput {
 /** A filter's water loop, as on the wire with its defaults filled in. */
 export interface LoopInput {
   readonly pump: PumpInput
-  /** The whole hose, or the suction side when `return_hose` has another bore. Elements refer to this one. */
+  /** The whole hose, or the suction side when the `return_hose` has another bore. */
   readonly hose: HoseInput
   readonly return_hose?: HoseInput
   readonly elements: readonly ElementInput[]
@@ -72,11 +75,12 @@ export function isAdvertised(pump: PumpInput): pump is Extract<PumpInput, { max_
 
 /** Compiles a loop, an advertised pump curve with its typical shape. Throws {@link OutOfDomain}. */
 export function prepareLoop(input: LoopInput): PreparedLoop {
+  checkLoop(input)
   const { pump, media } = pumpWithMedia(input, CURVE_EXPONENT.typical)
   if (pump.shutOff_m <= input.lift_m) {
     throw new OutOfDomain(
       "lift_m",
-      `the pump raises water ${figures(pump.shutOff_m, 3)} m at most, so none comes out ${input.lift_m} m above the surface: lower the outflow or take a pump with more head`,
+      `The pump raises water ${figures(pump.shutOff_m, 3)} m at most, so none comes out ${figures(input.lift_m, 3)} m above the surface. Lower the outflow or take a pump with more head.`,
     )
   }
   return {
@@ -84,7 +88,10 @@ export function prepareLoop(input: LoopInput): PreparedLoop {
     pump,
     media,
     hoses: (input.return_hose ? [input.hose, input.return_hose] : [input.hose]).map(hoseRun),
-    losses: input.elements.map((element, index) => lossOf(element, input.hose.inner_diameter_mm, index)),
+    losses: input.elements.map((element, index) => {
+      const hose = (element.in_return && input.return_hose) || input.hose
+      return lossOf(element, hose.inner_diameter_mm, index)
+    }),
     viscosity_m2_s: waterViscosity(input.temperature_c) / waterDensity(input.temperature_c),
   }
 }
@@ -115,6 +122,26 @@ export function loopAt(prepared: PreparedLoop, clogging: number, fittings: Fitti
     quadratic_s2_m5,
     lift_m: prepared.input.lift_m,
     viscosity_m2_s: prepared.viscosity_m2_s,
+  }
+}
+
+/** Flow of a prepared loop at a state of its media, L/h. */
+export function flowAt(prepared: PreparedLoop, clogging: number, fittings: Fittings = "k"): number {
+  return solveFlow(prepared.pump, loopAt(prepared, clogging, fittings)) / M3_S_PER_L_H
+}
+
+function checkLoop({ pump, hose, return_hose, elements, ...rest }: LoopInput): void {
+  checkBounds(rest, quantities)
+  checkBounds(pump, quantities, "pump.")
+  checkBounds(hose, quantities, "hose.")
+  if (return_hose) checkBounds(return_hose, quantities, "return_hose.")
+  elements.forEach((element, i) => {
+    checkBounds(element, quantities, `elements.${i}.`)
+  })
+  if (!isAdvertised(pump)) {
+    pump.points.forEach((point, i) => {
+      checkBounds(point, quantities, `pump.points.${i}.`)
+    })
   }
 }
 

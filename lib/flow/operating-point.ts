@@ -6,7 +6,7 @@ import { elementTable } from "./elements"
 import { type Regime, regimeOf } from "./friction"
 import { boreArea, hoseHead, type Loop, loopHead, quadraticOf, reynoldsIn, solveFlow } from "./loop"
 import {
-  type Fittings,
+  flowAt,
   isAdvertised,
   type LoopInput,
   loopAt,
@@ -94,11 +94,6 @@ export function operatingPoint(input: LoopInput): Answer<OperatingPoint, FlowUnc
     assumptions: flowAssumptions(input),
     method: method("Pump curve against loop curve", flowSourceIds(input)),
   }
-}
-
-/** Flow of a prepared loop at a state of its media, L/h. */
-export function flowAt(prepared: PreparedLoop, clogging: number, fittings: Fittings = "k"): number {
-  return solveFlow(prepared.pump, loopAt(prepared, clogging, fittings)) / M3_S_PER_L_H
 }
 
 /** The head that each part of the loop takes at a flow in m³/s; the sum is the loop's head. */

@@ -52,7 +52,7 @@ export function tabulatedCurve(points: readonly CurvePoint[]): PumpCurve {
   if (table.x.length < 2) {
     throw new OutOfDomain(
       "pump.points",
-      "a curve needs at least two points at different flows: measure one more",
+      "A curve needs at least two points at different flows. Measure one more.",
     )
   }
   if (table.x.length === 3 && !falls(table.y)) return fittedParabola(table)
@@ -171,6 +171,6 @@ function mean(values: readonly number[]): number {
 function neverFalls(): OutOfDomain {
   return new OutOfDomain(
     "pump.points",
-    "the head does not fall as the flow grows, so this is no pump curve: check that flow and head were not swapped",
+    "The head does not fall as the flow grows, so this is no pump curve. Check that flow and head were not swapped.",
   )
 }

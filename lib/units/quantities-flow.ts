@@ -58,7 +58,7 @@ export const flowQuantities = {
   body_diameter_mm: { unit: "mm", ucum: "mm", min: 20, max: 250, description: "Bore of the reactor's body" },
   body_length_mm: { unit: "mm", ucum: "mm", min: 50, max: 1500, description: "Free length of the body" },
   nozzle_diameter_mm: { unit: "mm", ucum: "mm", min: 3, max: 60, description: "Bore of the reactor's inlet" },
-  reactor_pressure_bar_abs: {
+  water_pressure_bar_abs: {
     unit: "bar",
     ucum: "bar",
     min: 1,
@@ -71,6 +71,13 @@ export const flowQuantities = {
     min: 0.1,
     max: 3,
     description: "Largest bubble that the inlet jet makes",
+  },
+  bypass_fraction: {
+    unit: "1",
+    ucum: "1",
+    min: 0,
+    max: 0.95,
+    description: "Share of the loop's flow that goes around the reactor",
   },
   inlet_co2_mg_l: { unit: "mg/L", ucum: "mg/L", min: 0, max: 200, description: "CO2 entering the reactor" },
   body_velocity_m_s: { unit: "m/s", ucum: "m/s", min: 0, max: 20, description: "Water speed in the body" },

@@ -163,7 +163,7 @@ describe("operatingPoint", () => {
       expect.objectContaining({
         code: "out_of_domain",
         field: "lift_m",
-        detail: expect.stringContaining("lower"),
+        detail: expect.stringContaining("Lower"),
       }),
     )
   })
