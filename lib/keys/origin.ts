@@ -5,9 +5,10 @@ const loopback = new Set(["localhost", "127.0.0.1", "[::1]"])
  * most the left-most label a wildcard, above at least two more labels. @source PLATFORM 2.9
  */
 export function isAllowedOrigin(text: string): boolean {
-  const url = parse(text.replace("://*.", "://wildcard."))
-  if (!url || url.origin !== text.replace("://*.", "://wildcard.")) return false
-  if (text.includes("://*.") && url.hostname.split(".").length < 3) return false
+  const plain = text.replace("://*.", "://wildcard.")
+  const url = parse(plain)
+  if (!url || url.origin !== plain || url.hostname.includes("*")) return false
+  if (plain !== text && url.hostname.split(".").length < 3) return false
   return url.protocol === "https:" || (url.protocol === "http:" && loopback.has(url.hostname))
 }
 
