@@ -6,6 +6,8 @@ export const gasDefaults = {
   air_co2_ppm: carbonateDefaults.air_co2_ppm,
   altitude_m: carbonateDefaults.altitude_m,
   ph_error: carbonateDefaults.ph_error,
+  kh_error_dkh: carbonateDefaults.kh_error_dkh,
+  temperature_error_c: carbonateDefaults.temperature_error_c,
   target_co2_mg_l: 30,
   agitation: "rippled",
   method: "inline_reactor",

@@ -19,13 +19,12 @@ export function feedCautions(
     readonly hold_only_close_co2_mg_l: number
   },
 ): Caution[] {
-  const target = figures(tank.target_co2_mg_l, 3)
   return [
-    unthrottled(feed, target),
+    unthrottled(feed, tank.target_co2_mg_l),
     {
       code: "lead_needs_surplus",
       severity: "info",
-      message: `A short lead is bought with feed, not with the reactor: 1 to 1.5 h takes 4 to 5 times the hold feed on a rippled surface, then throttling. At the hold feed alone, on a timer that opens ${figures(feed.lead_min, 2)} min before the lights, this tank holds ${figures(feed.hold_only_lights_on_co2_mg_l, 2)} mg/L when the lights come on and ${figures(feed.hold_only_close_co2_mg_l, 2)} when the gas closes, not ${target}.`,
+      message: `A short lead is bought with feed, not with the reactor: 1 to 1.5 h takes 4 to 5 times the hold feed on a rippled surface, then throttling. At the hold feed alone, on a timer that opens ${figures(feed.lead_min, 2)} min before the lights, this tank holds ${figures(feed.hold_only_lights_on_co2_mg_l, 2)} mg/L when the lights come on and ${figures(feed.hold_only_close_co2_mg_l, 2)} when the gas closes, not ${figures(tank.target_co2_mg_l, 3)}.`,
     },
     ...(feed.saturated ? [saturated] : []),
     tankLivestock(tank, tank.target_co2_mg_l),
@@ -48,10 +47,14 @@ export const plantsTakeAll: Caution = {
     "After the gas closes the plants would take more CO2 than the water holds, so CO2 was kept at zero for that time. Close the gas later, or take a smaller plant uptake.",
 }
 
-function unthrottled(feed: Uncontrolled & { readonly feed_ratio: number }, target: string): Caution {
+/** What a feed reaches when nothing throttles it: always said, from `info` to `danger`. */
+export function unthrottled(
+  feed: Omit<Uncontrolled, "saturated"> & { readonly feed_ratio: number },
+  target_co2_mg_l: number,
+): Caution {
   const limit = feed.uncontrolled_limit_co2_mg_l
   const severity: Severity = limit > DEADLY_MG_L ? "danger" : limit > UNATTENDED_MG_L ? "warning" : "info"
-  const reached = `This feed is ${figures(feed.feed_ratio, 2)} times what holds ${target} mg/L. With nothing to throttle it CO2 reaches ${figures(feed.uncontrolled_co2_mg_l, 2)} mg/L when the gas closes, and ${figures(limit, 2)} if it never closes.`
+  const reached = `This feed is ${figures(feed.feed_ratio, 2)} times what holds ${figures(target_co2_mg_l, 3)} mg/L. With nothing to throttle it CO2 reaches ${figures(feed.uncontrolled_co2_mg_l, 2)} mg/L when the gas closes, and ${figures(limit, 2)} if it never closes.`
   const advice =
     severity === "danger"
       ? " That kills livestock: run it only behind a pH controller that is gated by the light and limits how long the valve stays open."
@@ -61,7 +64,7 @@ function unthrottled(feed: Uncontrolled & { readonly feed_ratio: number }, targe
   return { code: "unthrottled_feed", severity, message: reached + advice }
 }
 
-const saturated: Caution = {
+export const saturated: Caution = {
   code: "saturated",
   severity: "danger",
   message:

@@ -51,6 +51,23 @@ export function rampFeed(
   return findRoot({ f: short, low: hold, high: Math.max(fromNothing, hold), tolerance: 1e-9 * fromNothing })
 }
 
+/** Hours before the lights that the gas must open for the wished share of the target; `null` if the night is too short. */
+export function leadHours(
+  balance: TankBalance,
+  schedule: DaySchedule,
+  wish: { readonly feed_mg_min: number; readonly target_co2_mg_l: number },
+): number | null {
+  const { feed_mg_min, target_co2_mg_l } = wish
+  const short = (lead_h: number) => {
+    const plan = dayPlan(schedule, { feed_mg_min, lead_h, target_co2_mg_l })
+    return dayLevel(balance, periodicDay(balance, plan), lead_h) - schedule.reach_fraction * target_co2_mg_l
+  }
+  const night = 24 - schedule.photoperiod_h
+  if (short(0) >= 0) return 0
+  if (short(night) < 0) return null
+  return findRoot({ f: short, low: 0, high: night, tolerance: 1e-9 })
+}
+
 /** What a feed does when nothing throttles it. */
 export interface Uncontrolled {
   /** CO2 when the gas closes in the evening, on a timer. */

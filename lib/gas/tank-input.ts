@@ -6,7 +6,7 @@ import {
   co2AtPressure,
   phAtCo2,
 } from "@/lib/chemistry/carbonate"
-import { ionicStrength, type WaterReadings } from "@/lib/chemistry/ionic-strength"
+import { type IonicStrength, ionicStrength, type WaterReadings } from "@/lib/chemistry/ionic-strength"
 import type { SourceId } from "@/lib/chemistry/sources"
 import { checkBounds } from "@/lib/units/bounds"
 import { figures } from "@/lib/units/figures"
@@ -66,6 +66,7 @@ export interface Judged extends Range {
 export interface PreparedTank {
   readonly balance: TankBalance
   readonly system: CarbonateSystem
+  readonly ionic: IonicStrength
   readonly kh_dkh: number
   readonly target_co2_mg_l: number
   readonly rest_co2_mg_l: number
@@ -104,6 +105,7 @@ export function prepareTank(input: TankInput): PreparedTank {
       dissolution_efficiency: efficiency.value,
     },
     system,
+    ionic,
     kh_dkh: input.kh_dkh,
     target_co2_mg_l: input.target_co2_mg_l,
     rest_co2_mg_l,

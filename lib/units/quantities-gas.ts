@@ -337,6 +337,27 @@ export const gasQuantities = {
     max: 1e6,
     description: "Cycles of the valve an hour while holding",
   },
+  ideal_duty_fraction: {
+    unit: "1",
+    ucum: "1",
+    min: 0,
+    max: 1,
+    description: "Duty of a controller whose probe and feed answer at once",
+  },
+  ideal_cycles_per_h: {
+    unit: "1/h",
+    ucum: "/h",
+    min: 0,
+    max: 1e6,
+    description: "Cycles an hour of a controller whose probe and feed answer at once",
+  },
+  reached_after_min: {
+    unit: "min",
+    ucum: "min",
+    min: 0,
+    max: 1440,
+    description: "Minutes from opening the gas until the controller first closes the valve",
+  },
   switches_per_day: {
     unit: "1",
     ucum: "1",
