@@ -1,14 +1,17 @@
+import { sql } from "kysely"
 import { asWorker, type Trx } from "@/db"
-import { alarmingTypes } from "./event-types"
+import { alarmingTypes, syncedTypes } from "./event-types"
+import { lockBilling } from "./lock"
 import { stripe } from "./stripe-client"
-import { syncCustomer } from "./sync-customer"
+import { syncAccount } from "./sync-account"
 
 /** Name of the job that works off an event; `scripts/worker.ts` has its task. */
 export const PROCESS_STRIPE_EVENT = "process_stripe_event"
 
 /**
  * Works off one event that was taken in. What the event says is not believed: it names a customer, whose state is read
- * anew, so that a repeated, late or reordered event ends where the newest would have.
+ * anew, so that a repeated, late or reordered event ends where the newest would have. One reading works off all events
+ * of the customer that waited before it, since it is newer than every one of them.
  *
  * @throws Error when Stripe or the database cannot be reached: the queue tries again
  */
@@ -20,15 +23,41 @@ export function processStripeEvent({ input }: { input: { event_id: string } }): 
       .select(["id", "type", "payload"])
       .where("id", "=", input.event_id)
       .where("processed_at", "is", null)
-      .forUpdate()
       .executeTakeFirst()
     if (!event) return
     if (alarmingTypes.has(event.type)) await raiseAlarm(event)
     const { customer } = event.payload
-    if (typeof customer === "string") await syncCustomer(trx, customer, now)
-    if (event.type === "customer.deleted") await forgetCustomer(trx, String(customer))
-    await trx.updateTable("stripe_event").set({ processed_at: now }).where("id", "=", event.id).execute()
+    const done = typeof customer === "string" ? await readAnew(trx, customer, now) : []
+    await trx
+      .updateTable("stripe_event")
+      .set({ processed_at: now })
+      .where("id", "in", [event.id, ...done])
+      .execute()
   })
+}
+
+/** Lets the customer's account follow its state, and says which events are thereby worked off. */
+async function readAnew(trx: Trx, customer: string, now: Date): Promise<string[]> {
+  const account = await trx
+    .selectFrom("account")
+    .select("id")
+    .where("stripe_customer_id", "=", customer)
+    .executeTakeFirst()
+  // Not a customer of ours, or its account was deleted.
+  if (!account) return []
+  await lockBilling(trx, account.id)
+  const waiting = await trx
+    .selectFrom("stripe_event")
+    .select(["id", "type"])
+    .where("processed_at", "is", null)
+    .where(sql<string>`payload ->> 'customer'`, "=", customer)
+    .where("type", "in", [...syncedTypes])
+    .execute()
+  // While this job waited for the lock, another one's reading may have covered its event.
+  if (waiting.length === 0) return []
+  await syncAccount(trx, { account_id: account.id, customer }, now)
+  if (waiting.some(({ type }) => type === "customer.deleted")) await forgetCustomer(trx, customer)
+  return waiting.map(({ id }) => id)
 }
 
 /** The account stays, and its next checkout makes a customer anew. */

@@ -1,5 +1,6 @@
 import { asWorker } from "@/db"
-import { syncCustomer } from "./sync-customer"
+import { lockBilling } from "./lock"
+import { syncAccount } from "./sync-account"
 
 /** Name of the hourly job; `scripts/worker.ts` has its task and its hour. */
 export const REVIEW_SUBSCRIPTIONS = "review_subscriptions"
@@ -11,11 +12,11 @@ export const REVIEW_SUBSCRIPTIONS = "review_subscriptions"
  * @throws AggregateError when some could not be read; the others are done
  */
 export async function reviewSubscriptions({ now }: { now: Date }): Promise<{ reviewed: number }> {
-  const customers = await asWorker((trx) =>
+  const accounts = await asWorker((trx) =>
     trx
       .selectFrom("subscription")
       .innerJoin("account", "account.id", "subscription.account_id")
-      .select("account.stripe_customer_id")
+      .select(["account.id as account_id", "account.stripe_customer_id as customer"])
       .where("account.stripe_customer_id", "is not", null)
       .where("subscription.status", "!=", "canceled")
       .where((where) =>
@@ -28,12 +29,14 @@ export async function reviewSubscriptions({ now }: { now: Date }): Promise<{ rev
       .execute(),
   )
   const problems: unknown[] = []
-  for (const { stripe_customer_id } of customers) {
-    await asWorker((trx) => syncCustomer(trx, stripe_customer_id!, now)).catch((error) =>
-      problems.push(error),
-    )
+  for (const { account_id, customer } of accounts) {
+    const review = asWorker(async (trx) => {
+      await lockBilling(trx, account_id)
+      await syncAccount(trx, { account_id, customer: customer! }, now)
+    })
+    await review.catch((error) => problems.push(error))
   }
   if (problems.length > 0)
     throw new AggregateError(problems, `${problems.length} subscriptions could not be reviewed`)
-  return { reviewed: customers.length }
+  return { reviewed: accounts.length }
 }

@@ -5,7 +5,6 @@ import { recordAct } from "@/lib/audit"
 import type { Ctx } from "@/lib/context"
 import { env } from "@/lib/env"
 import { enqueueMail } from "@/lib/mail"
-import { lockBilling } from "./lock"
 import { deciding, graceEnd, type Standing, serviceState } from "./service-state"
 import {
   type InvoiceSnapshot,
@@ -20,32 +19,32 @@ import { stripe } from "./stripe-client"
 const RECENT_INVOICES = 24
 
 /**
- * Reads a customer's subscriptions and invoices from Stripe and lets the account follow: its plan, its quota and the
- * invoices it shows. Safe to repeat, at any time and in any order.
+ * Reads an account's subscriptions and invoices from Stripe and lets the account follow: its plan, its quota and the
+ * invoices it shows. Safe to repeat, at any time and in any order, while the caller holds the account's billing lock.
  *
  * @throws Error when Stripe cannot be read or answers in an unknown shape; nothing is changed then
  */
-export async function syncCustomer(trx: Trx, customer: string, now: Date): Promise<void> {
-  const account = await trx
-    .selectFrom("account")
-    .select("id")
-    .where("stripe_customer_id", "=", customer)
-    .executeTakeFirst()
-  // Not one of ours, or its account was deleted.
-  if (!account) return
-  await lockBilling(trx, account.id)
+export async function syncAccount(
+  trx: Trx,
+  { account_id, customer }: { account_id: string; customer: string },
+  now: Date,
+): Promise<void> {
   const { subscriptions, invoices } = await fetchState(customer)
-  await storeInvoices(trx, account.id, invoices)
+  await storeInvoices(trx, account_id, invoices)
   const current = deciding(subscriptions)
   // An account that never paid keeps the plan it has, which the platform's admin may have given it.
   if (!current) return
-  const standing = { ...current, past_due_since: pastDueSince(current, invoices) }
-  const before = await storedStanding(trx, account.id)
-  await storeSubscription(trx, account.id, standing, now)
-  await applyToAccount(trx, account.id, standing, now)
-  if (standing.past_due_since && !before?.past_due_since) {
-    await tellOwners(trx, account.id, standing.past_due_since)
-  }
+  const before = await trx
+    .selectFrom("subscription")
+    .select("past_due_since")
+    .where("account_id", "=", account_id)
+    .executeTakeFirst()
+  const owed = current.status === "past_due"
+  const past_due_since = owed ? (owedSince(current, invoices) ?? before?.past_due_since ?? now) : null
+  const standing = { ...current, past_due_since }
+  await storeSubscription(trx, account_id, standing, now)
+  await applyToAccount(trx, account_id, standing, now)
+  if (past_due_since && !before?.past_due_since) await tellOwners(trx, account_id, past_due_since)
 }
 
 async function fetchState(customer: string) {
@@ -64,10 +63,9 @@ function isIssued(invoice: Stripe.Invoice): boolean {
 }
 
 /** When the oldest invoice that is still open was issued: the same moment however late we learn of it. */
-function pastDueSince(current: SubscriptionSnapshot, invoices: readonly InvoiceSnapshot[]): Date | null {
-  if (current.status !== "past_due") return null
+function owedSince(current: SubscriptionSnapshot, invoices: readonly InvoiceSnapshot[]): Date | undefined {
   const open = invoices.filter(({ status, subscription }) => status === "open" && subscription === current.id)
-  return open.map(({ issued_at }) => issued_at).reduce<Date | null>((a, b) => (a && a < b ? a : b), null)
+  return open.map(({ issued_at }) => issued_at).sort((a, b) => a.getTime() - b.getTime())[0]
 }
 
 async function storeInvoices(
@@ -89,14 +87,6 @@ async function storeInvoices(
       })),
     )
     .execute()
-}
-
-function storedStanding(trx: Trx, account_id: string) {
-  return trx
-    .selectFrom("subscription")
-    .select("past_due_since")
-    .where("account_id", "=", account_id)
-    .executeTakeFirst()
 }
 
 /** A mail to each owner, once for each time that a payment begins to be owed. */
