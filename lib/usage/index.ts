@@ -12,7 +12,13 @@ export { LOG_DAYS, type LoggedCall, type LogQuery, listCalls } from "./list-call
 export { logRefusal, type Refusal } from "./log-refusal"
 export { dropOldPartitions, makePartitions } from "./partitions"
 export { type Quota, quotaOf } from "./quota"
-export { createMemoryRateLimiter, type RateLimiter, type RateState, rateLimiter } from "./rate-limiter"
+export {
+  createMemoryRateLimiter,
+  createRedisRateLimiter,
+  type RateLimiter,
+  type RateState,
+  rateLimiter,
+} from "./rate-limiter"
 export { type Drift, describeDrift, reconcileUsage } from "./reconcile"
 export { deleteExpired } from "./retention"
 export { type RolledHours, rollUpUsage } from "./roll-up"

@@ -20,7 +20,7 @@ export interface Refusal {
 const largestBatch = 200
 const longestPath = 200
 
-const shared = globalThis as typeof globalThis & { tarnwrightRefusals?: GroupCommit<Refusal, void> }
+const shared = globalThis as typeof globalThis & { tarnwrightRefusals?: GroupCommit<Refusal, undefined> }
 
 /** Notes a refusal for the request log. Nobody waits for it: without a database the note is lost, not the answer. */
 export function logRefusal(refusal: Refusal): void {
@@ -28,7 +28,7 @@ export function logRefusal(refusal: Refusal): void {
   shared.tarnwrightRefusals.commit({ ...refusal, path: refusal.path.slice(0, longestPath) }).catch(() => {})
 }
 
-async function flush(refusals: Refusal[]): Promise<void[]> {
+async function flush(refusals: Refusal[]): Promise<undefined[]> {
   await statement("app", {
     name: "log_refusals",
     text: "select log_refusals($1)",
