@@ -84,6 +84,11 @@ export const gasSources = {
     year: 2004,
     detail: "Pressure that opens a pore under water: 4σ/d",
   },
+  fenghour1998: {
+    title: "Fenghour, Wakeham & Vesovic, Journal of Physical and Chemical Reference Data 27:31-44",
+    year: 1998,
+    detail: "Viscosity of CO2",
+  },
   nioshCarbonDioxide: {
     title: "NIOSH Pocket Guide to Chemical Hazards, carbon dioxide",
     year: 2019,

@@ -1,5 +1,11 @@
+import { findRoot } from "@/lib/numeric/find-root"
 import { gasDensity } from "./carbon-dioxide"
-import { saturation, singlePhasePressure } from "./equation-of-state"
+import {
+  CRITICAL_DENSITY_KG_M3,
+  CRITICAL_TEMPERATURE_C,
+  saturation,
+  singlePhasePressure,
+} from "./equation-of-state"
 
 /** `two_phase`: liquid under gas. `liquid_full`: all liquid, below 31 °C. `gas`: no liquid. `supercritical`: above. */
 export type CylinderPhase = "two_phase" | "liquid_full" | "gas" | "supercritical"
@@ -57,6 +63,22 @@ export function cylinderContents(p: {
   }
 }
 
-/** Days in the average month and year of the Gregorian calendar. */
-export const DAYS_PER_YEAR = 365.25
-export const DAYS_PER_MONTH = DAYS_PER_YEAR / 12
+/**
+ * Temperature at which a full cylinder holds liquid alone, °C; above it the pressure climbs steeply. `null` for a fill
+ * below the critical density, which never becomes all liquid.
+ *
+ * @source spanWagner1996, eq. 3.14
+ */
+export function liquidFullTemperature(fill_kg_l: number): number | null {
+  const density = fill_kg_l * 1000
+  if (density <= CRITICAL_DENSITY_KG_M3) return null
+  return findRoot({
+    f: (temperature_c) => saturation(temperature_c)!.liquid_kg_m3 - density,
+    low: TRIPLE_POINT_C,
+    high: CRITICAL_TEMPERATURE_C - 1e-9,
+    tolerance: 1e-6,
+  })
+}
+
+/** °C. @source spanWagner1996, eq. 3.7 */
+const TRIPLE_POINT_C = -56.558

@@ -1,3 +1,5 @@
+import { surfaceTension } from "@/lib/chemistry/water"
+
 /** How the gas gets into the water. */
 export interface GasMethod {
   /** With its article, as it stands in a sentence. */
@@ -8,8 +10,8 @@ export interface GasMethod {
   readonly element_bar: { readonly usual: number; readonly low: number; readonly high: number }
 }
 
-/** Bar over a pore of 1 µm: bubble point 4σ/d at 25 °C. @source youngLaplace */
-const BAR_UM = 2.88
+/** Pressure that opens a water-filled pore of 1 µm at 25 °C, bar: 2.88. @source youngLaplace, 4σ/d */
+export const PORE_BAR_UM = 40 * surfaceTension(25)
 
 /**
  * The methods, a row each.
@@ -28,12 +30,12 @@ export const gasMethods = {
   diffuser: {
     label: "a diffuser in the tank",
     efficiency: { usual: 0.65, low: 0.5, high: 0.8 },
-    element_bar: { usual: BAR_UM / 2, low: BAR_UM / 5, high: BAR_UM / 1.5 },
+    element_bar: { usual: PORE_BAR_UM / 2, low: PORE_BAR_UM / 5, high: PORE_BAR_UM / 1.5 },
   },
   inline_diffuser: {
     label: "an inline diffuser",
     efficiency: { usual: 0.8, low: 0.6, high: 0.95 },
-    element_bar: { usual: BAR_UM / 2 + 0.15, low: BAR_UM / 5 + 0.1, high: BAR_UM / 1.5 + 0.2 },
+    element_bar: { usual: PORE_BAR_UM / 2 + 0.15, low: PORE_BAR_UM / 5 + 0.1, high: PORE_BAR_UM / 1.5 + 0.2 },
   },
 } as const satisfies Record<string, GasMethod>
 

@@ -457,6 +457,21 @@ export const gasQuantities = {
   refill_price: { unit: "1", ucum: "1", min: 0, max: 1e6, description: "Price of a refill" },
   ambient_c: { unit: "°C", ucum: "Cel", min: -20, max: 60, description: "Temperature of the cylinder" },
   days: { unit: "days", ucum: "d", min: 0, max: 1e7, description: "Days that a charge lasts" },
+  days_low: {
+    unit: "days",
+    ucum: "d",
+    min: 0,
+    max: 1e8,
+    description: "Days if a fifth is lost to leaks and purging",
+  },
+  days_high: {
+    unit: "days",
+    ucum: "d",
+    min: 0,
+    max: 1e8,
+    description: "Days if nothing is lost but the last gas",
+  },
+  days_left: { unit: "days", ucum: "d", min: 0, max: 1e7, description: "Days that the remaining CO2 lasts" },
   refills_per_year: { unit: "1/year", ucum: "/a", min: 0, max: 1e7, description: "Refills a year" },
   cost_per_month: { unit: "1", ucum: "1", min: 0, max: 1e9, description: "Cost of refills a month" },
   first_year_cost: {
@@ -647,6 +662,20 @@ export const gasQuantities = {
     min: 0,
     max: 1e6,
     description: "Hours above the limit for a working day, 5,000 ppm",
+  },
+  hours_above_low_h: {
+    unit: "h",
+    ucum: "h",
+    min: 0,
+    max: 1e6,
+    description: "Hours above 5,000 ppm if the room changes its air twice as often",
+  },
+  hours_above_high_h: {
+    unit: "h",
+    ucum: "h",
+    min: 0,
+    max: 1e6,
+    description: "Hours above 5,000 ppm if the room changes its air half as often",
   },
   leak_steady_ppm: {
     unit: "ppm",
