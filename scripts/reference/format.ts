@@ -77,7 +77,11 @@ export function parseTolerance(text: string, temperature_c: number): Tolerance {
     const from = range ? Number(range[1]) : Number.NEGATIVE_INFINITY
     const to = range ? Number(range[2] ?? range[1]) : Number.POSITIVE_INFINITY
     const value = Number(match[1])
-    return { from, to, tolerance: match[2] ? relativeTo(value / 100) : within(value) }
+    return {
+      from,
+      to,
+      tolerance: match[2] ? relativeTo(Number((value / 100).toPrecision(12))) : within(value),
+    }
   })
   const distance = (c: { from: number; to: number }) =>
     Math.max(c.from - temperature_c, temperature_c - c.to, 0)
