@@ -1,0 +1,113 @@
+/** Calls per second of each function of the engine, on one core. Not a test: machines differ. */
+import { carbonateSystem, co2AtPh, khAtCo2, phAtCo2 } from "@/lib/chemistry/carbonate"
+import { carbonateDefaults } from "@/lib/chemistry/carbonate-water"
+import { co2FromDropChecker, dropCheckerDefaults } from "@/lib/chemistry/co2-from-drop-checker"
+import { co2FromPh } from "@/lib/chemistry/co2-from-ph"
+import { co2FromPhDrop, phDropDefaults } from "@/lib/chemistry/co2-from-ph-drop"
+import { co2Grid } from "@/lib/chemistry/co2-grid"
+import { khFromCo2 } from "@/lib/chemistry/kh-from-co2"
+import { phForCo2 } from "@/lib/chemistry/ph-for-co2"
+
+interface Row {
+  readonly name: string
+  /** Calls per second that the product wants; absent where nobody set one. */
+  readonly target?: number
+  /** Called with 0, 1, 2 …, so that no two calls in a row are the same. Returns something, so that it is not dropped. */
+  readonly fn: (i: number) => unknown
+}
+
+const water = { temperature_c: 25, ionic_strength_mol_l: 0.003 }
+const system = carbonateSystem(water)
+const sweep = (i: number, from: number, to: number) => from + ((to - from) * (i % 97)) / 97
+
+const rows: readonly Row[] = [
+  {
+    name: "carbonate: CO2 from pH, new water each time",
+    target: 300_000,
+    fn: (i) =>
+      co2AtPh(carbonateSystem({ ...water, temperature_c: sweep(i, 18, 30) }), { ph: 6.8, kh_dkh: 4 }),
+  },
+  {
+    name: "carbonate: pH from CO2, new water each time",
+    target: 300_000,
+    fn: (i) =>
+      phAtCo2(carbonateSystem({ ...water, temperature_c: sweep(i, 18, 30) }), { co2_mg_l: 30, kh_dkh: 4 }),
+  },
+  {
+    name: "carbonate: CO2 from pH, same water",
+    target: 300_000,
+    fn: (i) => co2AtPh(system, { ph: sweep(i, 6, 8), kh_dkh: 4 }),
+  },
+  {
+    name: "carbonate: pH from CO2, same water",
+    target: 300_000,
+    fn: (i) => phAtCo2(system, { co2_mg_l: sweep(i, 1, 60), kh_dkh: 4 }),
+  },
+  {
+    name: "carbonate: KH from CO2, same water",
+    target: 300_000,
+    fn: (i) => khAtCo2(system, { co2_mg_l: sweep(i, 1, 60), ph: 6.8 }),
+  },
+  {
+    name: "answer: co2FromPh",
+    fn: (i) => co2FromPh({ ...carbonateDefaults, ph: sweep(i, 6, 8), kh_dkh: 4 }),
+  },
+  {
+    name: "answer: phForCo2",
+    fn: (i) => phForCo2({ ...carbonateDefaults, co2_mg_l: sweep(i, 5, 60), kh_dkh: 4 }),
+  },
+  {
+    name: "answer: khFromCo2",
+    fn: (i) => khFromCo2({ ...carbonateDefaults, co2_mg_l: sweep(i, 5, 60), ph: 6.8 }),
+  },
+  {
+    name: "answer: co2FromPhDrop",
+    fn: (i) => co2FromPhDrop({ ...phDropDefaults, tank_ph: sweep(i, 6.4, 7.4), degassed_ph: 8.3 }),
+  },
+  {
+    name: "answer: co2FromDropChecker",
+    fn: (i) => co2FromDropChecker({ ...dropCheckerDefaults, indicator_ph: sweep(i, 6, 7.6) }),
+  },
+  {
+    name: "answer: co2Grid of 2,500 cells",
+    fn: (i) =>
+      co2Grid({
+        ...carbonateDefaults,
+        temperature_c: sweep(i, 18, 30),
+        ph_from: 6,
+        ph_to: 7.96,
+        ph_step: 0.04,
+        kh_from_dkh: 1,
+        kh_to_dkh: 19.62,
+        kh_step_dkh: 0.38,
+      }),
+  },
+]
+
+export function run(): void {
+  const width = Math.max(...rows.map((row) => row.name.length))
+  for (const { name, target, fn } of rows) {
+    const rate = callsPerSecond(fn)
+    const verdict = target === undefined ? "" : `  target ${count(target)}${rate < target ? "  BELOW" : ""}`
+    console.log(`${name.padEnd(width)}  ${count(rate).padStart(11)}/s${verdict}`)
+  }
+}
+
+/** The best of five rounds of about 0.2 s: what the code can do when the machine lets it. */
+function callsPerSecond(fn: Row["fn"]): number {
+  let kept: unknown
+  const time = (calls: number) => {
+    const start = performance.now()
+    for (let i = 0; i < calls; i++) kept = fn(i)
+    return (performance.now() - start) / 1000
+  }
+  let calls = 1
+  while (time(calls) < 0.1) calls *= 2
+  const best = Math.min(...Array.from({ length: 5 }, () => time(2 * calls)))
+  if (kept === undefined) throw new Error("the benchmark returned nothing")
+  return (2 * calls) / best
+}
+
+function count(value: number): string {
+  return Math.round(value).toLocaleString("en")
+}
