@@ -72,19 +72,22 @@ export const carbonatePublished: ReferenceFormat = {
 
 function forwardSoft(row: Row): Deviation[] {
   const species = forward(row, { ionic_strength_mol_l: number(row, "ionic_strength_mol_l") })
-  // Where hydroxide is a large part of the alkalinity the two models' ion products of water tell.
-  const hydroxide = species.oh / (number(row, "kh_dkh") * ALKALINITY_MOL_L_PER_DKH) > 0.1
+  const alkalinity = number(row, "kh_dkh") * ALKALINITY_MOL_L_PER_DKH
+  // Where hydroxide is a large part of the alkalinity the two models' ion products of water tell, and an error of
+  // the activity of OH- counts as many times as alkalinity exceeds carbonate.
+  const hydroxide = species.oh / alkalinity > 0.1
+  const leverage = hydroxide ? alkalinity / species.carbonateAlkalinity : 1
   const deviations = [
     compare(row, "co2_mg_l", species.co2_mg_l, relativeTo(hydroxide ? 0.02 : 0.007)),
     compare(row, "hco3_mmol_l", species.hco3_mmol_l, relativeTo(0.007)),
     compare(row, "co3_mmol_l", species.co3_mmol_l, relativeTo(0.007)),
     compare(row, "pco2_uatm", species.pco2_uatm, relativeTo(hydroxide ? 0.02 : 0.007)),
     compare(row, "dic_mmol_l", species.dic_mmol_l, relativeTo(0.003)),
-    estimated(row, "KH", {}, relativeTo(0.05)),
+    estimated(row, "KH", {}, relativeTo(0.05 * leverage)),
   ]
   const conductivity_us_cm = optionalNumber(row, "ec25_us_cm")
   if (conductivity_us_cm !== undefined) {
-    deviations.push(estimated(row, "conductivity", { conductivity_us_cm }, relativeTo(0.025)))
+    deviations.push(estimated(row, "conductivity", { conductivity_us_cm }, relativeTo(0.025 * leverage)))
   }
   return deviations
 }
@@ -147,7 +150,10 @@ function forward(row: Row, readings: Omit<WaterReadings, "kh_dkh">) {
     ionic_strength_mol_l: ionicStrength({ kh_dkh, ...readings }).ionic_strength_mol_l,
     phosphate_mg_l: optionalNumber(row, "phosphate_mg_l"),
   })
-  const { co2, hco3, co3, oh, pco2_atm } = speciesAtPh(system, { ph: number(row, "ph"), kh_dkh })
+  const { co2, hco3, co3, oh, carbonateAlkalinity, pco2_atm } = speciesAtPh(system, {
+    ph: number(row, "ph"),
+    kh_dkh,
+  })
   return {
     co2_mg_l: co2 * CO2_MG_PER_MOL,
     hco3_mmol_l: hco3 * 1000,
@@ -155,6 +161,7 @@ function forward(row: Row, readings: Omit<WaterReadings, "kh_dkh">) {
     dic_mmol_l: (co2 + hco3 + co3) * 1000,
     pco2_uatm: pco2_atm * 1e6,
     oh,
+    carbonateAlkalinity,
   }
 }
 

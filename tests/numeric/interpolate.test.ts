@@ -28,12 +28,18 @@ describe("interpolateLinear", () => {
 })
 
 describe("the monotone cubic", () => {
-  it("has the slopes of scipy 1.10.1 PchipInterpolator on x 0 1 3 4, y 5 4 1 0", () => {
-    const slopes = monotoneSlopes({ x: [0, 1, 3, 4], y: [5, 4, 1, 0] })
-    // Interior: weighted harmonic mean of -1 and -1.5 with weights 5 and 4, then of -1.5 and -1 with 4 and 5;
-    // ends: ((2·1+2)·(-1) - 1·(-1.5))/3. The formulas are those of scipy/interpolate/_cubic.py.
-    const inside = 9 / (5 / -1 + 4 / -1.5)
-    expect(slopes).toEqual([(4 * -1 - -1.5) / 3, inside, 9 / (4 / -1.5 + 5 / -1), (4 * -1 - -1.5) / 3])
+  it("has the slopes and values of SciPy 1.17.1 PchipInterpolator for a pump curve", () => {
+    const table = { x: [0, 300, 700, 900, 1200], y: [2.1, 1.9, 1.2, 0.7, 0] }
+    const slopes = monotoneSlopes(table)
+    const expected = [
+      -0.0002023809523809534, -0.0009453376205787787, -0.0021, -0.0024193548387096775, -0.002233333333333333,
+    ]
+    slopes.forEach((slope, i) => {
+      expect(slope).toBeCloseTo(expected[i]!, 15)
+    })
+    expect(interpolateCubic(table, slopes, 100)).toBeCloseTo(2.060160941832968, 12)
+    expect(interpolateCubic(table, slopes, 500)).toBeCloseTo(1.607733118971061, 12)
+    expect(interpolateCubic(table, slopes, 1000)).toBeCloseTo(0.460621266427718, 12)
   })
 
   it("passes through its points and never turns between them", () => {
