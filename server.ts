@@ -28,7 +28,10 @@ const server = createServer((incoming, outgoing) => {
 })
 server.headersTimeout = 10_000
 server.requestTimeout = 30_000
-server.listen(port, host, () => console.log(`ready ${publicUrl}`))
+server.listen(port, host, () => {
+  const address = server.address()
+  console.log(`ready http://${host}:${typeof address === "object" && address ? address.port : port}`)
+})
 
 for (const signal of ["SIGTERM", "SIGINT"] as const) {
   process.once(signal, () => {
