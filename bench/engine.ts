@@ -7,6 +7,11 @@ import { co2FromPhDrop, phDropDefaults } from "@/lib/chemistry/co2-from-ph-drop"
 import { co2Grid } from "@/lib/chemistry/co2-grid"
 import { khFromCo2 } from "@/lib/chemistry/kh-from-co2"
 import { phForCo2 } from "@/lib/chemistry/ph-for-co2"
+import { cloggingCourse, DEFAULT_STEPS } from "@/lib/flow/clogging-course"
+import { flowDefaults } from "@/lib/flow/loop-input"
+import { operatingPoint } from "@/lib/flow/operating-point"
+import { reactorDefaults } from "@/lib/flow/reactor-input"
+import { reactorVerdict } from "@/lib/flow/reactor-verdict"
 
 interface Row {
   readonly name: string
@@ -18,6 +23,19 @@ interface Row {
 
 const water = { temperature_c: 25, ionic_strength_mol_l: 0.003 }
 const system = carbonateSystem(water)
+const loop = {
+  ...flowDefaults,
+  pump: { max_flow_l_h: 1000, max_head_m: 1.6 },
+  hose: { inner_diameter_mm: 16, length_m: 3 },
+  elements: [{ kind: "intake_strainer" }, { kind: "barb", count: 4 }, { kind: "lily_outflow" }],
+  volume_l: 180,
+} as const
+const reactorLoop = {
+  ...reactorDefaults,
+  ...loop,
+  reactor: { body_diameter_mm: 60, body_length_mm: 350 },
+  feed_mg_min: 60,
+}
 const sweep = (i: number, from: number, to: number) => from + ((to - from) * (i % 97)) / 97
 
 const rows: readonly Row[] = [
@@ -81,6 +99,19 @@ const rows: readonly Row[] = [
         kh_to_dkh: 19.62,
         kh_step_dkh: 0.38,
       }),
+  },
+  {
+    name: "answer: operatingPoint",
+    target: 20_000,
+    fn: (i) => operatingPoint({ ...loop, clogging: sweep(i, 0, 1) }),
+  },
+  {
+    name: "answer: reactorVerdict",
+    fn: (i) => reactorVerdict({ ...reactorLoop, clogging: sweep(i, 0, 1) }),
+  },
+  {
+    name: "answer: cloggingCourse of 11 steps",
+    fn: (i) => cloggingCourse({ ...reactorLoop, feed_mg_min: sweep(i, 20, 90), steps: DEFAULT_STEPS }),
   },
 ]
 
