@@ -1,7 +1,7 @@
 import { randomUUID } from "node:crypto"
 import Stripe from "stripe"
 import { beforeAll, describe, expect, test } from "vitest"
-import { customerWithCard, givenSubject } from "./subject"
+import { advanceClock, customerWithCard, givenSubject } from "./subject"
 
 const HOUR_S = 3600
 const subject = givenSubject()
@@ -140,18 +140,9 @@ describe("a metered price", () => {
     expect((made.latest_invoice as Stripe.Invoice).total).toBe(0)
     await stripe.billing.meterEvents.create(reading(customer.id, 3001, start + 86_400))
     const end = made.items.data[0]!.current_period_end
-    await advance(stripe, clock.id, end + 2 * HOUR_S)
+    await advanceClock(stripe, clock.id, end + 2 * HOUR_S)
     const [renewal] = (await stripe.invoices.list({ customer: customer.id, limit: 1 })).data
     // 2,001 units beyond the first 1,000, half a cent each: 10.005, rounded half up to 10.01 US dollars.
     expect(renewal).toMatchObject({ status: "paid", billing_reason: "subscription_cycle", total: 1001 })
   })
 })
-
-async function advance(stripe: Stripe, id: string, frozen_time: number): Promise<void> {
-  await stripe.testHelpers.testClocks.advance(id, { frozen_time })
-  for (let tries = 0; tries < 100; tries += 1) {
-    if ((await stripe.testHelpers.testClocks.retrieve(id)).status === "ready") return
-    await new Promise((resolve) => setTimeout(resolve, 50))
-  }
-  throw new Error("The clock did not arrive")
-}

@@ -94,3 +94,13 @@ export async function monthlyPrice(
     ...extra,
   })
 }
+
+/** Moves a test clock on and waits until everything due in between is done. */
+export async function advanceClock(stripe: Stripe, id: string, frozen_time: number): Promise<void> {
+  await stripe.testHelpers.testClocks.advance(id, { frozen_time })
+  for (let tries = 0; tries < 600; tries += 1) {
+    if ((await stripe.testHelpers.testClocks.retrieve(id)).status === "ready") return
+    await new Promise((resolve) => setTimeout(resolve, 50))
+  }
+  throw new Error("The clock did not arrive")
+}
