@@ -51,7 +51,6 @@ export function finalize(fake: Fake, invoice: Invoice): void {
   invoice.effective_at = invoice.status_transitions.finalized_at
   invoice.automatically_finalizes_at = null
   invoice.hosted_invoice_url = `${fake.base}/invoice/${invoice.id}`
-  invoice.invoice_pdf = `${fake.base}/invoice/${invoice.id}/pdf`
   const used = invoice.total - invoice.amount_due
   customer.balance = invoice.total < 0 ? customer.balance + invoice.total : customer.balance + used
   invoice.ending_balance = customer.balance

@@ -35,7 +35,8 @@ export function sendHtml(response: ServerResponse, status: number, body: string)
     "content-type": "text/html; charset=utf-8",
     "content-length": Buffer.byteLength(body),
     "cache-control": "no-store",
-    "content-security-policy": "default-src 'none'; style-src 'unsafe-inline'; base-uri 'none'",
+    "content-security-policy":
+      "default-src 'none'; img-src data:; style-src 'unsafe-inline'; base-uri 'none'",
     "referrer-policy": "same-origin",
   })
   response.end(body)

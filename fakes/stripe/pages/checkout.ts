@@ -119,7 +119,9 @@ function completedUrl(session: Session): string {
 function form(session: Session, chosen: CardKind, problem: string | null): Html {
   const total = money(session.amount_total ?? 0, session.currency ?? "usd")
   const lines = session.line_items!.data.map(
-    (line) => html`<tr><td>${line.description}${monthly(line.price?.recurring?.interval)}</td>
+    (
+      line,
+    ) => html`<tr><td>${line.description}${line.quantity === null ? "" : monthly(line.price?.recurring?.interval)}</td>
 <td>${line.quantity === null ? "by use" : money(line.amount_total, line.currency)}</td></tr>`,
   )
   return html`<h1>Pay ${total}</h1>

@@ -43,6 +43,7 @@ export function document(title: string, body: Html): string {
 <meta charset="utf-8">
 <meta name="viewport" content="width=device-width, initial-scale=1">
 <meta name="robots" content="noindex">
+<link rel="icon" href="data:,">
 <title>${title} · practice payments</title>
 <style>${new Html(STYLE)}</style>
 </head>
@@ -66,7 +67,7 @@ h1 { margin: 0 0 8px; font-size: 24px; line-height: 1.25; }
 h2 { margin: 28px 0 8px; font-size: 18px; border-bottom: 1px solid #c9c1ad; }
 table { width: 100%; border-collapse: collapse; }
 td, th { padding: 6px 0; text-align: left; vertical-align: top; font-weight: normal; border-bottom: 1px dotted #c9c1ad; }
-td:last-child, th:last-child { text-align: right; }
+td:last-child, th:last-child { text-align: right; padding-left: 12px; white-space: nowrap; }
 .total td { font-weight: bold; border-bottom: 0; }
 fieldset { margin: 16px 0; padding: 8px 16px; border: 1px solid #7d7666; }
 legend { padding: 0 6px; }

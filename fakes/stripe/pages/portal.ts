@@ -132,5 +132,5 @@ function cardOf(fake: Fake, customerId: string, subscription: Subscription | und
 }
 
 function back(session: PortalSession): Html {
-  return session.return_url ? html`<a href="${session.return_url}">Back to the shop</a>` : html``
+  return session.return_url ? html`<a href="${session.return_url}">Back to where you came from</a>` : html``
 }
