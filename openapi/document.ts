@@ -11,6 +11,7 @@ import { problems } from "@/lib/api/problem"
 import { tags } from "@/lib/api/tags"
 import { ENGINE_VERSION } from "@/lib/chemistry/engine-version"
 import type { ErrorCode } from "@/lib/errors"
+import { webhookEvents } from "@/lib/webhooks"
 
 extendZodWithOpenApi(z)
 
@@ -36,6 +37,9 @@ export async function buildDocument(): Promise<object> {
       request: requestOf(operation),
       responses: { ...(await successOf(operation)), ...refusalsOf(operation) },
     })
+  }
+  for (const [type, event] of Object.entries(webhookEvents)) {
+    definitions.registerWebhook(webhookOf(type, event))
   }
   return new OpenApiGeneratorV31(definitions.definitions).generateDocument({
     openapi: "3.1.0",
@@ -123,6 +127,39 @@ function describe(operation: AnyOperation): string {
         : "Needs no key."
   const costs = units === 0 ? "Costs nothing." : `Costs ${units} ${units === 1 ? "unit" : "units"}.`
   return [description, `${needs} ${costs}`].filter(Boolean).join("\n\n")
+}
+
+/** What an endpoint of the account receives. @source Standard Webhooks specification, "Webhook headers" */
+function webhookOf(type: string, event: (typeof webhookEvents)[keyof typeof webhookEvents]) {
+  const headers = z.object({
+    "webhook-id": z.string().meta({ description: "Id of the event, the same whenever it is sent again" }),
+    "webhook-timestamp": z.string().meta({ description: "When this attempt was made, in Unix seconds" }),
+    "webhook-signature": z
+      .string()
+      .meta({
+        description:
+          "`v1,` and HMAC-SHA-256 of `id.timestamp.body` in base64; two while a secret is replaced",
+      }),
+  })
+  const schema = z.object({ type: z.literal(type), timestamp: z.iso.datetime(), data: event.data })
+  const example = { type, timestamp: "2026-12-01T09:30:00.000Z", data: event.example }
+  const name = type.replace(/[._](\w)/g, (_, letter: string) => letter.toUpperCase())
+  return {
+    path: type,
+    method: "post" as const,
+    operationId: `on${name.charAt(0).toUpperCase()}${name.slice(1)}`,
+    tags: ["Webhooks"],
+    summary: event.summary,
+    description: "Verify the signature, answer with 2xx within 15 seconds, and do the work afterwards.",
+    security: [],
+    request: { headers, body: { required: true, content: { "application/json": { schema, example } } } },
+    responses: {
+      "2XX": {
+        description: "You have it. Any other answer, or none, is followed by up to nine more attempts.",
+      },
+      410: { description: "You want no more: the endpoint is switched off." },
+    },
+  }
 }
 
 function requestOf(operation: AnyOperation) {

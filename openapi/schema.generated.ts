@@ -123,6 +123,152 @@ export interface paths {
         patch?: never;
         trace?: never;
     };
+    "/gas/demand": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        get?: never;
+        put?: never;
+        /**
+         * Gas that a tank needs, and where it goes
+         * @description Needs a key with the scope `calculate`. Costs 1 unit.
+         */
+        post: operations["gasDemand"];
+        delete?: never;
+        options?: never;
+        head?: never;
+        patch?: never;
+        trace?: never;
+    };
+    "/gas/lead-time": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        get?: never;
+        put?: never;
+        /**
+         * When the gas opens before the lights
+         * @description `lead_time_min` is null where the feed never gets there in the dark hours; a caution says so.
+         *
+         *     Needs a key with the scope `calculate`. Costs 2 units.
+         */
+        post: operations["gasLeadTime"];
+        delete?: never;
+        options?: never;
+        head?: never;
+        patch?: never;
+        trace?: never;
+    };
+    "/gas/controller": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        get?: never;
+        put?: never;
+        /**
+         * A day of the pH controller
+         * @description Needs a key with the scope `calculate`. Costs 2 units.
+         */
+        post: operations["gasController"];
+        delete?: never;
+        options?: never;
+        head?: never;
+        patch?: never;
+        trace?: never;
+    };
+    "/gas/cylinder": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        get?: never;
+        put?: never;
+        /**
+         * How long a cylinder lasts and what it costs
+         * @description Needs a key with the scope `calculate`. Costs 1 unit.
+         */
+        post: operations["gasCylinder"];
+        delete?: never;
+        options?: never;
+        head?: never;
+        patch?: never;
+        trace?: never;
+    };
+    "/gas/bubble-rate": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        get?: never;
+        put?: never;
+        /**
+         * Bubbles a second, millilitres and milligrams a minute
+         * @description Send one of `bubbles_per_s`, `feed_ml_min` and `feed_mg_min`.
+         *
+         *     Needs a key with the scope `calculate`. Costs 1 unit.
+         */
+        post: operations["gasBubbleRate"];
+        delete?: never;
+        options?: never;
+        head?: never;
+        patch?: never;
+        trace?: never;
+    };
+    "/gas/working-pressure": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        get?: never;
+        put?: never;
+        /**
+         * Pressure to set at the reducer
+         * @description Needs a key with the scope `calculate`. Costs 1 unit.
+         */
+        post: operations["gasWorkingPressure"];
+        delete?: never;
+        options?: never;
+        head?: never;
+        patch?: never;
+        trace?: never;
+    };
+    "/gas/room-safety": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        get?: never;
+        put?: never;
+        /**
+         * What the whole cylinder would do to the air of the room
+         * @description A well-mixed room. CO2 is heavier than air: in cabinets, cellars and near the floor it can be far more.
+         *
+         *     Needs a key with the scope `calculate`. Costs 1 unit.
+         */
+        post: operations["gasRoomSafety"];
+        delete?: never;
+        options?: never;
+        head?: never;
+        patch?: never;
+        trace?: never;
+    };
     "/batch": {
         parameters: {
             query?: never;
@@ -181,6 +327,196 @@ export interface paths {
         get: operations["account"];
         put?: never;
         post?: never;
+        delete?: never;
+        options?: never;
+        head?: never;
+        patch?: never;
+        trace?: never;
+    };
+    "/webhooks": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        /**
+         * Your webhook endpoints
+         * @description Newest first.
+         *
+         *     Needs a key with the scope `webhooks`. Costs nothing.
+         */
+        get: operations["listWebhooks"];
+        put?: never;
+        /**
+         * Make a webhook endpoint
+         * @description From now on each event of the list is posted to the URL, signed after the Standard Webhooks specification. Read the secret that verifies the signature with `GET /webhooks/{endpoint_id}/secret`.
+         *
+         *     Needs a key with the scope `webhooks`. Costs nothing.
+         */
+        post: operations["createWebhook"];
+        delete?: never;
+        options?: never;
+        head?: never;
+        patch?: never;
+        trace?: never;
+    };
+    "/webhooks/{endpoint_id}": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        /**
+         * One webhook endpoint
+         * @description Needs a key with the scope `webhooks`. Costs nothing.
+         */
+        get: operations["readWebhook"];
+        put?: never;
+        post?: never;
+        /**
+         * Delete a webhook endpoint
+         * @description With it go its deliveries, also those that wait to be sent.
+         *
+         *     Needs a key with the scope `webhooks`. Costs nothing.
+         */
+        delete: operations["deleteWebhook"];
+        options?: never;
+        head?: never;
+        /**
+         * Change a webhook endpoint
+         * @description What is absent stays. Nothing of what happens while an endpoint is switched off is sent later. What waits to be sent goes to the new URL.
+         *
+         *     Needs a key with the scope `webhooks`. Costs nothing.
+         */
+        patch: operations["changeWebhook"];
+        trace?: never;
+    };
+    "/webhooks/{endpoint_id}/secret": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        /**
+         * The secret that verifies an endpoint's webhooks
+         * @description Any library of the Standard Webhooks specification takes it as it is.
+         *
+         *     Needs a key with the scope `webhooks`. Costs nothing.
+         */
+        get: operations["readWebhookSecret"];
+        put?: never;
+        post?: never;
+        delete?: never;
+        options?: never;
+        head?: never;
+        patch?: never;
+        trace?: never;
+    };
+    "/webhooks/{endpoint_id}/secret/rotate": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        get?: never;
+        put?: never;
+        /**
+         * Replace an endpoint's secret
+         * @description During the overlap each webhook carries two signatures, one of each secret. Read the new one with `GET /webhooks/{endpoint_id}/secret`. A secret that was replaced before stops signing at once.
+         *
+         *     Needs a key with the scope `webhooks`. Costs nothing.
+         */
+        post: operations["rotateWebhookSecret"];
+        delete?: never;
+        options?: never;
+        head?: never;
+        patch?: never;
+        trace?: never;
+    };
+    "/webhooks/{endpoint_id}/test": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        get?: never;
+        put?: never;
+        /**
+         * Send a test event to an endpoint
+         * @description Signed, logged and repeated as any other; its type is `webhook.test`, which needs no subscription.
+         *
+         *     Needs a key with the scope `webhooks`. Costs nothing.
+         */
+        post: operations["testWebhook"];
+        delete?: never;
+        options?: never;
+        head?: never;
+        patch?: never;
+        trace?: never;
+    };
+    "/webhooks/{endpoint_id}/deliveries": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        /**
+         * What was sent to an endpoint
+         * @description Newest first, 30 days back, with how the last attempt of each went.
+         *
+         *     Needs a key with the scope `webhooks`. Costs nothing.
+         */
+        get: operations["listWebhookDeliveries"];
+        put?: never;
+        post?: never;
+        delete?: never;
+        options?: never;
+        head?: never;
+        patch?: never;
+        trace?: never;
+    };
+    "/webhooks/{endpoint_id}/deliveries/{delivery_id}": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        /**
+         * One delivery, with what was sent
+         * @description Needs a key with the scope `webhooks`. Costs nothing.
+         */
+        get: operations["readWebhookDelivery"];
+        put?: never;
+        post?: never;
+        delete?: never;
+        options?: never;
+        head?: never;
+        patch?: never;
+        trace?: never;
+    };
+    "/webhooks/{endpoint_id}/deliveries/{delivery_id}/replay": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        get?: never;
+        put?: never;
+        /**
+         * Send an event once more
+         * @description A new delivery with the same body and the same `webhook-id`, by which your receiver knows what it had before.
+         *
+         *     Needs a key with the scope `webhooks`. Costs nothing.
+         */
+        post: operations["replayWebhookDelivery"];
         delete?: never;
         options?: never;
         head?: never;
@@ -272,7 +608,128 @@ export interface paths {
         trace?: never;
     };
 }
-export type webhooks = Record<string, never>;
+export interface webhooks {
+    "report.created": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        get?: never;
+        put?: never;
+        /**
+         * A report was stored
+         * @description Verify the signature, answer with 2xx within 15 seconds, and do the work afterwards.
+         */
+        post: operations["onReportCreated"];
+        delete?: never;
+        options?: never;
+        head?: never;
+        patch?: never;
+        trace?: never;
+    };
+    "enquiry.created": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        get?: never;
+        put?: never;
+        /**
+         * A shopper sent an enquiry through a widget; read it with `GET /enquiries`
+         * @description Verify the signature, answer with 2xx within 15 seconds, and do the work afterwards.
+         */
+        post: operations["onEnquiryCreated"];
+        delete?: never;
+        options?: never;
+        head?: never;
+        patch?: never;
+        trace?: never;
+    };
+    "usage.threshold_reached": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        get?: never;
+        put?: never;
+        /**
+         * 80 or 100 percent of the period's units are spent; once for each and period
+         * @description Verify the signature, answer with 2xx within 15 seconds, and do the work afterwards.
+         */
+        post: operations["onUsageThresholdReached"];
+        delete?: never;
+        options?: never;
+        head?: never;
+        patch?: never;
+        trace?: never;
+    };
+    "key.revoked": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        get?: never;
+        put?: never;
+        /**
+         * A key was revoked, by a member of the team or by us
+         * @description Verify the signature, answer with 2xx within 15 seconds, and do the work afterwards.
+         */
+        post: operations["onKeyRevoked"];
+        delete?: never;
+        options?: never;
+        head?: never;
+        patch?: never;
+        trace?: never;
+    };
+    "subscription.changed": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        get?: never;
+        put?: never;
+        /**
+         * The plan, its state or its period changed
+         * @description Verify the signature, answer with 2xx within 15 seconds, and do the work afterwards.
+         */
+        post: operations["onSubscriptionChanged"];
+        delete?: never;
+        options?: never;
+        head?: never;
+        patch?: never;
+        trace?: never;
+    };
+    "webhook.test": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        get?: never;
+        put?: never;
+        /**
+         * Sent to one endpoint when you ask for it
+         * @description Verify the signature, answer with 2xx within 15 seconds, and do the work afterwards.
+         */
+        post: operations["onWebhookTest"];
+        delete?: never;
+        options?: never;
+        head?: never;
+        patch?: never;
+        trace?: never;
+    };
+}
 export interface components {
     schemas: {
         /**
@@ -329,6 +786,87 @@ export interface components {
             }[];
         } & {
             [key: string]: unknown;
+        };
+        WebhookEndpoint: {
+            /** @description Id of the endpoint */
+            id: string;
+            url: string;
+            /** @description Events that are sent there */
+            events: ("report.created" | "enquiry.created" | "usage.threshold_reached" | "key.revoked" | "subscription.changed")[];
+            /**
+             * Format: date-time
+             * @description Since when nothing is sent; null: it is on
+             */
+            disabled_at: string | null;
+            /**
+             * @description `paused` by you; `gone`: it answered 410
+             * @enum {string|null}
+             */
+            disabled_reason: "paused" | "gone" | null;
+            /** Format: date-time */
+            created_at: string;
+            /** Format: date-time */
+            updated_at: string;
+        };
+        WebhookDelivery: {
+            /** @description Id of the delivery */
+            id: string;
+            /** @description Id of the endpoint */
+            endpoint_id: string;
+            /** @description The `webhook-id` that was sent; a repeated event keeps it */
+            event_id: string;
+            type: string;
+            /** @enum {string} */
+            status: "pending" | "delivered" | "failed";
+            /** @description Attempts made */
+            attempts: number;
+            /** Format: date-time */
+            created_at: string;
+            /** Format: date-time */
+            next_attempt_at: string | null;
+            /** Format: date-time */
+            last_attempt_at: string | null;
+            /** @description HTTP status of the last answer */
+            last_status: number | null;
+            /**
+             * @description `target_refused`: The address is not public, or the URL is not allowed. `name_not_found`: The host name has no address. `connection_failed`: No connection, or it was lost. `tls_failed`: The certificate is not valid for this host. `timed_out`: No answer within 15 seconds. `redirected`: The answer was a redirect, and redirects are not followed. `refused`: The answer had another status than 2xx. `gone`: The answer was 410, so the endpoint was switched off. `endpoint_off`: The endpoint was switched off before the attempt.
+             * @enum {string|null}
+             */
+            last_failure: "target_refused" | "name_not_found" | "connection_failed" | "tls_failed" | "timed_out" | "redirected" | "refused" | "gone" | "endpoint_off" | null;
+            /** @description Time that the last attempt took */
+            last_duration_ms: number | null;
+        };
+        WebhookDeliveryWithPayload: {
+            /** @description Id of the delivery */
+            id: string;
+            /** @description Id of the endpoint */
+            endpoint_id: string;
+            /** @description The `webhook-id` that was sent; a repeated event keeps it */
+            event_id: string;
+            type: string;
+            /** @enum {string} */
+            status: "pending" | "delivered" | "failed";
+            /** @description Attempts made */
+            attempts: number;
+            /** Format: date-time */
+            created_at: string;
+            /** Format: date-time */
+            next_attempt_at: string | null;
+            /** Format: date-time */
+            last_attempt_at: string | null;
+            /** @description HTTP status of the last answer */
+            last_status: number | null;
+            /**
+             * @description `target_refused`: The address is not public, or the URL is not allowed. `name_not_found`: The host name has no address. `connection_failed`: No connection, or it was lost. `tls_failed`: The certificate is not valid for this host. `timed_out`: No answer within 15 seconds. `redirected`: The answer was a redirect, and redirects are not followed. `refused`: The answer had another status than 2xx. `gone`: The answer was 410, so the endpoint was switched off. `endpoint_off`: The endpoint was switched off before the attempt.
+             * @enum {string|null}
+             */
+            last_failure: "target_refused" | "name_not_found" | "connection_failed" | "tls_failed" | "timed_out" | "redirected" | "refused" | "gone" | "endpoint_off" | null;
+            /** @description Time that the last attempt took */
+            last_duration_ms: number | null;
+            /** @description The body that was sent */
+            payload: {
+                [key: string]: unknown;
+            };
         };
     };
     responses: never;
@@ -1536,6 +2074,11 @@ export interface operations {
                      *           "message": "CO2 may be as high as 47 mg/L (32000 µatm). Above 40 mg/L many fish and shrimp suffer. Give less gas or measure more exactly, aerate, and watch for gasping at the surface, fast breathing, fish lying still, shrimp fleeing the water."
                      *         },
                      *         {
+                     *           "code": "raise_slowly",
+                     *           "severity": "warning",
+                     *           "message": "Raise CO2 in small steps over several days, with the livestock watched for the first hours after each step. At the first sign of distress stop the gas and aerate."
+                     *         },
+                     *         {
                      *           "code": "air_of_the_room",
                      *           "severity": "info",
                      *           "message": "The answer follows the air that the sample stood in. With 1,000 ppm, as in a room with people, it would be 66 mg/L instead of 28."
@@ -2486,6 +3029,3854 @@ export interface operations {
             };
         };
     };
+    gasDemand: {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        requestBody: {
+            content: {
+                /**
+                 * @example {
+                 *       "volume_l": 180,
+                 *       "surface_area_m2": 0.4,
+                 *       "kh_dkh": 4
+                 *     }
+                 */
+                "application/json": {
+                    /** @description Volume of the water, in L */
+                    volume_l?: number;
+                    /** @description Open water surface, in m² */
+                    surface_area_m2?: number;
+                    /** @description Inner length of the tank, in cm */
+                    length_cm?: number;
+                    /** @description Inner width of the tank, front to back, in cm */
+                    width_cm?: number;
+                    /** @description Height of the water in the tank, in cm */
+                    height_cm?: number;
+                    /** @description Carbonate hardness in German degrees: the alkalinity that a KH test titrates, in dKH */
+                    kh_dkh: number;
+                    /**
+                     * @description Water temperature, in °C
+                     * @default 25
+                     */
+                    temperature_c?: number;
+                    /**
+                     * @description CO2 in the room's dry air; outdoors 425, occupied rooms 600 to 1,500, in ppm
+                     * @default 425
+                     */
+                    air_co2_ppm?: number;
+                    /**
+                     * @description Height above the sea, in m
+                     * @default 0
+                     */
+                    altitude_m?: number;
+                    /** @description Ionic strength of the water, in mol/L */
+                    ionic_strength_mol_l?: number;
+                    /** @description Electric conductivity, referred to 25 °C, in µS/cm */
+                    conductivity_us_cm?: number;
+                    /** @description Dissolved solids, as a meter shows them or weighed, in mg/L */
+                    tds_mg_l?: number;
+                    /** @description What the TDS meter multiplies its conductivity with, commonly 0.5 to 0.7 */
+                    tds_factor?: number;
+                    /** @description Total hardness (calcium and magnesium) in German degrees, in dGH */
+                    gh_dgh?: number;
+                    /** @description Phosphate as PO4, in mg/L */
+                    phosphate_mg_l?: number;
+                    /**
+                     * @description CO2 that the tank should hold while the lights are on; 20 to 30 is usual, in mg/L
+                     * @default 30
+                     */
+                    target_co2_mg_l?: number;
+                    /**
+                     * @description How the surface moves; two pH readings of a night (`overnight`) replace the guess
+                     * @default rippled
+                     * @enum {string}
+                     */
+                    agitation?: "calm" | "rippled" | "agitated" | "strong";
+                    /** @description Two pH readings of one night with gas and light off */
+                    overnight?: {
+                        /** @description pH when the light and the gas went off, in pH */
+                        start_ph: number;
+                        /** @description pH later in the same night, gas still off, in pH */
+                        end_ph: number;
+                        /** @description Hours between the two readings, in h */
+                        elapsed_h: number;
+                    };
+                    /**
+                     * @description How the gas gets into the water
+                     * @default inline_reactor
+                     * @enum {string}
+                     */
+                    method?: "inline_reactor" | "diffuser" | "inline_diffuser";
+                    /** @description Share of the gas fed that dissolves in the water */
+                    dissolution_efficiency?: number;
+                    /** @description Diameter of the diffuser's bubbles, in mm */
+                    bubble_diameter_mm?: number;
+                    /** @description Depth of water above where the gas goes in, in m */
+                    depth_m?: number;
+                    /**
+                     * @description CO2 that the plants take in light: 0.3 sparse, 1 usual, 2 dense and bright, in mg/(L·h)
+                     * @default 1
+                     */
+                    plant_uptake_mg_l_h?: number;
+                    /** @description CO2 that the tank rests at without gas; commonly 2 to 4 with fish and soil, in mg/L */
+                    rest_co2_mg_l?: number;
+                    /**
+                     * @description Hours of light a day, in h
+                     * @default 8
+                     */
+                    photoperiod_h?: number;
+                    /**
+                     * @description Minutes before the lights go off that the gas closes, in min
+                     * @default 60
+                     */
+                    close_before_lights_off_min?: number;
+                    /**
+                     * @description Share of the target that counts as reached when the lights come on
+                     * @default 0.95
+                     */
+                    reach_fraction?: number;
+                    /**
+                     * @description Minutes before the lights that the gas should open, in min
+                     * @default 75
+                     */
+                    wished_lead_min?: number;
+                };
+            };
+        };
+        responses: {
+            /** @description The answer. */
+            200: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    /**
+                     * @example {
+                     *       "result": {
+                     *         "hold_feed_mg_min": 14.0825,
+                     *         "hold_feed_ml_min": 7.78905,
+                     *         "daily_use_g_day": 10.9572,
+                     *         "loss_to_air_g_day": 9.51723,
+                     *         "plant_uptake_g_day": 1.44,
+                     *         "respiration_g_day": 0,
+                     *         "escaped_g_day": 0,
+                     *         "ramp_feed_mg_min": 63.6546,
+                     *         "ramp_feed_ml_min": 35.2074,
+                     *         "ramp_ratio": 4.52011,
+                     *         "uncontrolled_co2_mg_l": 110.225,
+                     *         "uncontrolled_limit_co2_mg_l": 169.394,
+                     *         "hold_only_lights_on_co2_mg_l": 8.32535,
+                     *         "hold_only_close_co2_mg_l": 21.0098,
+                     *         "exchange_per_h": 0.125715,
+                     *         "air_co2_mg_l": 0.614775,
+                     *         "dissolution_efficiency": 1,
+                     *         "target_ph": 6.64622
+                     *       },
+                     *       "uncertainty": {
+                     *         "hold_feed_low_mg_min": 8.54126,
+                     *         "hold_feed_high_mg_min": 25.9434,
+                     *         "daily_use_low_g_day": 7.25259,
+                     *         "daily_use_high_g_day": 17.1168
+                     *       },
+                     *       "cautions": [
+                     *         {
+                     *           "code": "unthrottled_feed",
+                     *           "severity": "danger",
+                     *           "message": "This feed is 4.5 times what holds 30 mg/L. With nothing to throttle it CO2 reaches 110 mg/L when the gas closes, and 170 if it never closes. That kills livestock: run it only behind a pH controller that is gated by the light and limits how long the valve stays open."
+                     *         },
+                     *         {
+                     *           "code": "lead_needs_surplus",
+                     *           "severity": "info",
+                     *           "message": "A short lead is bought with feed, not with the reactor: 1 to 1.5 h takes 4 to 5 times the hold feed on a rippled surface, then throttling. At the hold feed alone, on a timer that opens 75 min before the lights, this tank holds 8.3 mg/L when the lights come on and 21 when the gas closes, not 30."
+                     *         },
+                     *         {
+                     *           "code": "livestock",
+                     *           "severity": "info",
+                     *           "message": "CO2 may be as high as 30 mg/L (20000 µatm). Healthy livestock usually bears that; low oxygen, the night, unfamiliar water and sensitive species change it. Watch for gasping at the surface, fast breathing, fish lying still, shrimp fleeing the water."
+                     *         },
+                     *         {
+                     *           "code": "raise_slowly",
+                     *           "severity": "warning",
+                     *           "message": "Raise CO2 in small steps over several days, with the livestock watched for the first hours after each step. At the first sign of distress stop the gas and aerate."
+                     *         },
+                     *         {
+                     *           "code": "local_rules",
+                     *           "severity": "info",
+                     *           "message": "Local codes, the makers' manuals and licensed practice come first. This result informs; it replaces none of them."
+                     *         }
+                     *       ],
+                     *       "assumptions": [
+                     *         {
+                     *           "code": "exchange",
+                     *           "message": "A rippled surface trades gas at 5 cm/h (k600), right within a factor of 2: the tank loses 13 % of its excess CO2 an hour. Two pH readings in one night with the gas off replace this guess."
+                     *         },
+                     *         {
+                     *           "code": "efficiency",
+                     *           "message": "100 % of the gas dissolves with an inline reactor (97 % to 100 %)."
+                     *         },
+                     *         {
+                     *           "code": "plant_uptake",
+                     *           "message": "The plants take 1 mg/L an hour in light: 0.3 where they are sparse, 1 usual, 2 dense under strong light."
+                     *         },
+                     *         {
+                     *           "code": "well_mixed",
+                     *           "message": "The whole tank mixes at once, and its alkalinity stays the same while CO2 comes and goes. A cover that keeps CO2 over the water is not counted."
+                     *         },
+                     *         {
+                     *           "code": "rests_at_air",
+                     *           "message": "Without gas the tank rests at 0.61 mg/L, the balance with air of 425 ppm. Tanks with fish and rich soil rest at 2 to 4; give your own level if you know it."
+                     *         },
+                     *         {
+                     *           "code": "day",
+                     *           "message": "The gas opens 75 min before 8 h of light at the feed for that lead, is then throttled to hold the target, and closes 60 min before dark. Leaks and purging are not counted: add 10 to 20 %."
+                     *         }
+                     *       ],
+                     *       "method": {
+                     *         "name": "Mass balance of the tank over a day",
+                     *         "version": "2026.12.1",
+                     *         "sources": [
+                     *           {
+                     *             "title": "Wanninkhof, Limnology and Oceanography: Methods 12:351-362",
+                     *             "year": 2014,
+                     *             "detail": "Table 1: Schmidt number of CO2 in fresh water, -2 to 40 °C"
+                     *           },
+                     *           {
+                     *             "title": "Jähne, Münnich, Bösinger, Dutzi, Huber & Libner, Journal of Geophysical Research 92(C2):1937-1949",
+                     *             "year": 1987,
+                     *             "detail": "Exponent of the Schmidt number: 2/3 on a calm surface, 1/2 on a rippled one"
+                     *           },
+                     *           {
+                     *             "title": "Cole & Caraco, Limnology and Oceanography 43:647-656",
+                     *             "year": 1998,
+                     *             "detail": "Gas transfer of a lake without wind: k600 about 2 cm/h"
+                     *           },
+                     *           {
+                     *             "title": "Engineering judgement, no publication",
+                     *             "year": 2026,
+                     *             "detail": "A value with its range that the person may replace by a measurement"
+                     *           },
+                     *           {
+                     *             "title": "Engineering judgement, no publication",
+                     *             "year": 2026,
+                     *             "detail": "A value with its range that the person may replace by a measurement"
+                     *           },
+                     *           {
+                     *             "title": "Plummer & Busenberg, Geochimica et Cosmochimica Acta 46:1011-1040",
+                     *             "year": 1982,
+                     *             "detail": "K1, K2 and Henry's constant of CO2, 0-90 °C"
+                     *           },
+                     *           {
+                     *             "title": "Weiss & Price, Marine Chemistry 8:347-359",
+                     *             "year": 1980,
+                     *             "detail": "Vapour pressure of water, eq. 10"
+                     *           },
+                     *           {
+                     *             "title": "Truesdell & Jones, Journal of Research of the U.S. Geological Survey 2:233-248",
+                     *             "year": 1974,
+                     *             "detail": "Activity coefficients and Debye-Hückel constants, up to 0.05 mol/L"
+                     *           }
+                     *         ]
+                     *       },
+                     *       "input": {
+                     *         "volume_l": 180,
+                     *         "surface_area_m2": 0.4,
+                     *         "kh_dkh": 4,
+                     *         "temperature_c": 25,
+                     *         "air_co2_ppm": 425,
+                     *         "altitude_m": 0,
+                     *         "target_co2_mg_l": 30,
+                     *         "agitation": "rippled",
+                     *         "method": "inline_reactor",
+                     *         "plant_uptake_mg_l_h": 1,
+                     *         "photoperiod_h": 8,
+                     *         "close_before_lights_off_min": 60,
+                     *         "reach_fraction": 0.95,
+                     *         "wished_lead_min": 75
+                     *       }
+                     *     }
+                     */
+                    "application/json": {
+                        result: {
+                            /** @description Feed that keeps the target in light, in mg/min */
+                            hold_feed_mg_min: number;
+                            /** @description Feed that keeps the target in light, as gas at 1 atm and the water's temperature, in mL/min */
+                            hold_feed_ml_min: number;
+                            /** @description CO2 used a day, in g/day */
+                            daily_use_g_day: number;
+                            /** @description CO2 lost through the surface, in g/day */
+                            loss_to_air_g_day: number;
+                            /** @description CO2 taken by the plants, in g/day */
+                            plant_uptake_g_day: number;
+                            /** @description CO2 given by livestock and soil, in g/day */
+                            respiration_g_day: number;
+                            /** @description CO2 fed that rises undissolved, in g/day */
+                            escaped_g_day: number;
+                            /** @description Feed that reaches the target in the wished lead, then to be throttled, in mg/min */
+                            ramp_feed_mg_min: number;
+                            /** @description Feed for the wished lead, as gas at 1 atm and the water's temperature, in mL/min */
+                            ramp_feed_ml_min: number;
+                            /** @description Feed for the wished lead over the hold feed */
+                            ramp_ratio: number;
+                            /** @description CO2 when the gas closes in the evening if nothing throttles this feed, in mg/L */
+                            uncontrolled_co2_mg_l: number;
+                            /** @description CO2 that this feed leads to if the gas never closes, in mg/L */
+                            uncontrolled_limit_co2_mg_l: number;
+                            /** @description CO2 when the lights come on if the gas runs at the hold feed on a timer, in mg/L */
+                            hold_only_lights_on_co2_mg_l: number;
+                            /** @description CO2 when the gas closes if it runs at the hold feed on a timer, in mg/L */
+                            hold_only_close_co2_mg_l: number;
+                            /** @description Share of its excess CO2 that the tank loses to the air each hour, in 1/h */
+                            exchange_per_h: number;
+                            /** @description CO2 of the water in balance with the air, in mg/L */
+                            air_co2_mg_l: number;
+                            /** @description Share of the gas fed that dissolves in the water */
+                            dissolution_efficiency: number;
+                            /** @description pH of the water at the target, in pH */
+                            target_ph: number;
+                        };
+                        uncertainty: {
+                            /** @description Hold feed if the surface exchanges less and the gas dissolves better than assumed, in mg/min */
+                            hold_feed_low_mg_min: number;
+                            /** @description Hold feed if the surface exchanges more and the gas dissolves worse than assumed, in mg/min */
+                            hold_feed_high_mg_min: number;
+                            /** @description Lower end of the use a day, in g/day */
+                            daily_use_low_g_day: number;
+                            /** @description Upper end of the use a day, in g/day */
+                            daily_use_high_g_day: number;
+                        };
+                        cautions: components["schemas"]["Caution"][];
+                        assumptions: components["schemas"]["Assumption"][];
+                        method: components["schemas"]["Method"];
+                        /** @description Your input with its defaults filled in */
+                        input: {
+                            [key: string]: unknown;
+                        };
+                    };
+                };
+            };
+            /** @description `key_in_url`: A key stands in the address. `malformed_json`: The body is not JSON. */
+            400: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `key_missing`: No key was sent. `key_unknown`: The key is not known. `key_revoked`: The key was revoked. `key_expired`: The key has expired. */
+            401: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `quota_reached`: The units of this period are used up. */
+            402: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `server_key_in_browser`: A server key was used from a browser. `origin_not_allowed`: The origin is not on the list. `address_not_allowed`: The network address is not on the list. `scope_missing`: The key lacks the scope. `account_suspended`: The account is suspended. */
+            403: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `not_found`: There is nothing here. */
+            404: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `method_not_allowed`: The method is not offered here. */
+            405: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `body_too_large`: The body is too large. */
+            413: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `media_type_unsupported`: The media type is not JSON. */
+            415: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `validation_failed`: The input is not valid. `out_of_domain`: The input is physically impossible or outside the method. */
+            422: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `rate_limited`: Too many calls. */
+            429: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `internal`: Something failed on our side. */
+            500: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `unavailable`: The service is resting for a moment. */
+            503: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+        };
+    };
+    gasLeadTime: {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        requestBody: {
+            content: {
+                /**
+                 * @example {
+                 *       "volume_l": 180,
+                 *       "surface_area_m2": 0.4,
+                 *       "kh_dkh": 4
+                 *     }
+                 */
+                "application/json": {
+                    /** @description Volume of the water, in L */
+                    volume_l?: number;
+                    /** @description Open water surface, in m² */
+                    surface_area_m2?: number;
+                    /** @description Inner length of the tank, in cm */
+                    length_cm?: number;
+                    /** @description Inner width of the tank, front to back, in cm */
+                    width_cm?: number;
+                    /** @description Height of the water in the tank, in cm */
+                    height_cm?: number;
+                    /** @description Carbonate hardness in German degrees: the alkalinity that a KH test titrates, in dKH */
+                    kh_dkh: number;
+                    /**
+                     * @description Water temperature, in °C
+                     * @default 25
+                     */
+                    temperature_c?: number;
+                    /**
+                     * @description CO2 in the room's dry air; outdoors 425, occupied rooms 600 to 1,500, in ppm
+                     * @default 425
+                     */
+                    air_co2_ppm?: number;
+                    /**
+                     * @description Height above the sea, in m
+                     * @default 0
+                     */
+                    altitude_m?: number;
+                    /** @description Ionic strength of the water, in mol/L */
+                    ionic_strength_mol_l?: number;
+                    /** @description Electric conductivity, referred to 25 °C, in µS/cm */
+                    conductivity_us_cm?: number;
+                    /** @description Dissolved solids, as a meter shows them or weighed, in mg/L */
+                    tds_mg_l?: number;
+                    /** @description What the TDS meter multiplies its conductivity with, commonly 0.5 to 0.7 */
+                    tds_factor?: number;
+                    /** @description Total hardness (calcium and magnesium) in German degrees, in dGH */
+                    gh_dgh?: number;
+                    /** @description Phosphate as PO4, in mg/L */
+                    phosphate_mg_l?: number;
+                    /**
+                     * @description CO2 that the tank should hold while the lights are on; 20 to 30 is usual, in mg/L
+                     * @default 30
+                     */
+                    target_co2_mg_l?: number;
+                    /**
+                     * @description How the surface moves; two pH readings of a night (`overnight`) replace the guess
+                     * @default rippled
+                     * @enum {string}
+                     */
+                    agitation?: "calm" | "rippled" | "agitated" | "strong";
+                    /** @description Two pH readings of one night with gas and light off */
+                    overnight?: {
+                        /** @description pH when the light and the gas went off, in pH */
+                        start_ph: number;
+                        /** @description pH later in the same night, gas still off, in pH */
+                        end_ph: number;
+                        /** @description Hours between the two readings, in h */
+                        elapsed_h: number;
+                    };
+                    /**
+                     * @description How the gas gets into the water
+                     * @default inline_reactor
+                     * @enum {string}
+                     */
+                    method?: "inline_reactor" | "diffuser" | "inline_diffuser";
+                    /** @description Share of the gas fed that dissolves in the water */
+                    dissolution_efficiency?: number;
+                    /** @description Diameter of the diffuser's bubbles, in mm */
+                    bubble_diameter_mm?: number;
+                    /** @description Depth of water above where the gas goes in, in m */
+                    depth_m?: number;
+                    /**
+                     * @description CO2 that the plants take in light: 0.3 sparse, 1 usual, 2 dense and bright, in mg/(L·h)
+                     * @default 1
+                     */
+                    plant_uptake_mg_l_h?: number;
+                    /** @description CO2 that the tank rests at without gas; commonly 2 to 4 with fish and soil, in mg/L */
+                    rest_co2_mg_l?: number;
+                    /**
+                     * @description Hours of light a day, in h
+                     * @default 8
+                     */
+                    photoperiod_h?: number;
+                    /**
+                     * @description Minutes before the lights go off that the gas closes, in min
+                     * @default 60
+                     */
+                    close_before_lights_off_min?: number;
+                    /**
+                     * @description Share of the target that counts as reached when the lights come on
+                     * @default 0.95
+                     */
+                    reach_fraction?: number;
+                    /** @description CO2 fed, in mg/min */
+                    feed_mg_min?: number;
+                    /** @description CO2 fed, as gas at 1 atm and the water's temperature, in mL/min */
+                    feed_ml_min?: number;
+                    /**
+                     * @description Feed over the hold feed
+                     * @default 4.5
+                     */
+                    feed_ratio?: number;
+                };
+            };
+        };
+        responses: {
+            /** @description The answer. */
+            200: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    /**
+                     * @example {
+                     *       "result": {
+                     *         "lead_time_min": 75.3631,
+                     *         "reached_fraction": 0.95,
+                     *         "open_before_lights_min": 75.3631,
+                     *         "close_before_lights_off_min": 60,
+                     *         "feed_mg_min": 63.3714,
+                     *         "feed_ml_min": 35.0507,
+                     *         "feed_ratio": 4.5,
+                     *         "hold_feed_mg_min": 14.0825,
+                     *         "start_co2_mg_l": 4.52775,
+                     *         "lights_on_co2_mg_l": 28.5,
+                     *         "close_co2_mg_l": 30,
+                     *         "lights_off_co2_mg_l": 25.5889,
+                     *         "uncontrolled_co2_mg_l": 109.763,
+                     *         "uncontrolled_limit_co2_mg_l": 168.643,
+                     *         "hold_only_lights_on_co2_mg_l": 8.35087,
+                     *         "hold_only_close_co2_mg_l": 21.0204,
+                     *         "daily_use_g_day": 10.959,
+                     *         "target_ph": 6.64622,
+                     *         "exchange_per_h": 0.125715,
+                     *         "dissolution_efficiency": 1,
+                     *         "series": [
+                     *           {
+                     *             "t_min": 0,
+                     *             "co2_mg_l": 4.52775,
+                     *             "ph": 7.46611
+                     *           },
+                     *           {
+                     *             "t_min": 15,
+                     *             "co2_mg_l": 9.60551,
+                     *             "ph": 7.14029
+                     *           },
+                     *           {
+                     *             "t_min": 30,
+                     *             "co2_mg_l": 14.5262,
+                     *             "ph": 6.96091
+                     *           },
+                     *           {
+                     *             "t_min": 45,
+                     *             "co2_mg_l": 19.2946,
+                     *             "ph": 6.83776
+                     *           },
+                     *           {
+                     *             "t_min": 60,
+                     *             "co2_mg_l": 23.9154,
+                     *             "ph": 6.74459
+                     *           },
+                     *           {
+                     *             "t_min": 75,
+                     *             "co2_mg_l": 28.3933,
+                     *             "ph": 6.67011
+                     *           },
+                     *           {
+                     *             "t_min": 90,
+                     *             "co2_mg_l": 30,
+                     *             "ph": 6.64622
+                     *           },
+                     *           {
+                     *             "t_min": 105,
+                     *             "co2_mg_l": 30,
+                     *             "ph": 6.64622
+                     *           },
+                     *           {
+                     *             "t_min": 120,
+                     *             "co2_mg_l": 30,
+                     *             "ph": 6.64622
+                     *           },
+                     *           {
+                     *             "t_min": 135,
+                     *             "co2_mg_l": 30,
+                     *             "ph": 6.64622
+                     *           },
+                     *           {
+                     *             "t_min": 150,
+                     *             "co2_mg_l": 30,
+                     *             "ph": 6.64622
+                     *           },
+                     *           {
+                     *             "t_min": 165,
+                     *             "co2_mg_l": 30,
+                     *             "ph": 6.64622
+                     *           },
+                     *           {
+                     *             "t_min": 180,
+                     *             "co2_mg_l": 30,
+                     *             "ph": 6.64622
+                     *           },
+                     *           {
+                     *             "t_min": 195,
+                     *             "co2_mg_l": 30,
+                     *             "ph": 6.64622
+                     *           },
+                     *           {
+                     *             "t_min": 210,
+                     *             "co2_mg_l": 30,
+                     *             "ph": 6.64622
+                     *           },
+                     *           {
+                     *             "t_min": 225,
+                     *             "co2_mg_l": 30,
+                     *             "ph": 6.64622
+                     *           },
+                     *           {
+                     *             "t_min": 240,
+                     *             "co2_mg_l": 30,
+                     *             "ph": 6.64622
+                     *           },
+                     *           {
+                     *             "t_min": 255,
+                     *             "co2_mg_l": 30,
+                     *             "ph": 6.64622
+                     *           },
+                     *           {
+                     *             "t_min": 270,
+                     *             "co2_mg_l": 30,
+                     *             "ph": 6.64622
+                     *           },
+                     *           {
+                     *             "t_min": 285,
+                     *             "co2_mg_l": 30,
+                     *             "ph": 6.64622
+                     *           },
+                     *           {
+                     *             "t_min": 300,
+                     *             "co2_mg_l": 30,
+                     *             "ph": 6.64622
+                     *           },
+                     *           {
+                     *             "t_min": 315,
+                     *             "co2_mg_l": 30,
+                     *             "ph": 6.64622
+                     *           },
+                     *           {
+                     *             "t_min": 330,
+                     *             "co2_mg_l": 30,
+                     *             "ph": 6.64622
+                     *           },
+                     *           {
+                     *             "t_min": 345,
+                     *             "co2_mg_l": 30,
+                     *             "ph": 6.64622
+                     *           },
+                     *           {
+                     *             "t_min": 360,
+                     *             "co2_mg_l": 30,
+                     *             "ph": 6.64622
+                     *           },
+                     *           {
+                     *             "t_min": 375,
+                     *             "co2_mg_l": 30,
+                     *             "ph": 6.64622
+                     *           },
+                     *           {
+                     *             "t_min": 390,
+                     *             "co2_mg_l": 30,
+                     *             "ph": 6.64622
+                     *           },
+                     *           {
+                     *             "t_min": 405,
+                     *             "co2_mg_l": 30,
+                     *             "ph": 6.64622
+                     *           },
+                     *           {
+                     *             "t_min": 420,
+                     *             "co2_mg_l": 30,
+                     *             "ph": 6.64622
+                     *           },
+                     *           {
+                     *             "t_min": 435,
+                     *             "co2_mg_l": 30,
+                     *             "ph": 6.64622
+                     *           },
+                     *           {
+                     *             "t_min": 450,
+                     *             "co2_mg_l": 30,
+                     *             "ph": 6.64622
+                     *           },
+                     *           {
+                     *             "t_min": 465,
+                     *             "co2_mg_l": 30,
+                     *             "ph": 6.64622
+                     *           },
+                     *           {
+                     *             "t_min": 480,
+                     *             "co2_mg_l": 30,
+                     *             "ph": 6.64622
+                     *           },
+                     *           {
+                     *             "t_min": 495,
+                     *             "co2_mg_l": 30,
+                     *             "ph": 6.64622
+                     *           },
+                     *           {
+                     *             "t_min": 510,
+                     *             "co2_mg_l": 28.8722,
+                     *             "ph": 6.66285
+                     *           },
+                     *           {
+                     *             "t_min": 525,
+                     *             "co2_mg_l": 27.7518,
+                     *             "ph": 6.68003
+                     *           },
+                     *           {
+                     *             "t_min": 540,
+                     *             "co2_mg_l": 26.6661,
+                     *             "ph": 6.69735
+                     *           },
+                     *           {
+                     *             "t_min": 555,
+                     *             "co2_mg_l": 25.614,
+                     *             "ph": 6.71482
+                     *           },
+                     *           {
+                     *             "t_min": 570,
+                     *             "co2_mg_l": 24.8346,
+                     *             "ph": 6.72823
+                     *           },
+                     *           {
+                     *             "t_min": 585,
+                     *             "co2_mg_l": 24.0853,
+                     *             "ph": 6.74152
+                     *           },
+                     *           {
+                     *             "t_min": 600,
+                     *             "co2_mg_l": 23.3591,
+                     *             "ph": 6.75481
+                     *           },
+                     *           {
+                     *             "t_min": 615,
+                     *             "co2_mg_l": 22.6554,
+                     *             "ph": 6.76808
+                     *           },
+                     *           {
+                     *             "t_min": 630,
+                     *             "co2_mg_l": 21.9734,
+                     *             "ph": 6.78134
+                     *           },
+                     *           {
+                     *             "t_min": 645,
+                     *             "co2_mg_l": 21.3126,
+                     *             "ph": 6.79459
+                     *           },
+                     *           {
+                     *             "t_min": 660,
+                     *             "co2_mg_l": 20.6722,
+                     *             "ph": 6.80783
+                     *           },
+                     *           {
+                     *             "t_min": 675,
+                     *             "co2_mg_l": 20.0516,
+                     *             "ph": 6.82106
+                     *           },
+                     *           {
+                     *             "t_min": 690,
+                     *             "co2_mg_l": 19.4502,
+                     *             "ph": 6.83427
+                     *           },
+                     *           {
+                     *             "t_min": 705,
+                     *             "co2_mg_l": 18.8675,
+                     *             "ph": 6.84747
+                     *           },
+                     *           {
+                     *             "t_min": 720,
+                     *             "co2_mg_l": 18.3027,
+                     *             "ph": 6.86065
+                     *           },
+                     *           {
+                     *             "t_min": 735,
+                     *             "co2_mg_l": 17.7555,
+                     *             "ph": 6.87382
+                     *           },
+                     *           {
+                     *             "t_min": 750,
+                     *             "co2_mg_l": 17.2251,
+                     *             "ph": 6.88698
+                     *           },
+                     *           {
+                     *             "t_min": 765,
+                     *             "co2_mg_l": 16.7112,
+                     *             "ph": 6.90012
+                     *           },
+                     *           {
+                     *             "t_min": 780,
+                     *             "co2_mg_l": 16.2132,
+                     *             "ph": 6.91325
+                     *           },
+                     *           {
+                     *             "t_min": 795,
+                     *             "co2_mg_l": 15.7306,
+                     *             "ph": 6.92636
+                     *           },
+                     *           {
+                     *             "t_min": 810,
+                     *             "co2_mg_l": 15.2629,
+                     *             "ph": 6.93945
+                     *           },
+                     *           {
+                     *             "t_min": 825,
+                     *             "co2_mg_l": 14.8097,
+                     *             "ph": 6.95253
+                     *           },
+                     *           {
+                     *             "t_min": 840,
+                     *             "co2_mg_l": 14.3705,
+                     *             "ph": 6.96559
+                     *           },
+                     *           {
+                     *             "t_min": 855,
+                     *             "co2_mg_l": 13.9449,
+                     *             "ph": 6.97863
+                     *           },
+                     *           {
+                     *             "t_min": 870,
+                     *             "co2_mg_l": 13.5324,
+                     *             "ph": 6.99165
+                     *           },
+                     *           {
+                     *             "t_min": 885,
+                     *             "co2_mg_l": 13.1328,
+                     *             "ph": 7.00465
+                     *           },
+                     *           {
+                     *             "t_min": 900,
+                     *             "co2_mg_l": 12.7455,
+                     *             "ph": 7.01763
+                     *           },
+                     *           {
+                     *             "t_min": 915,
+                     *             "co2_mg_l": 12.3701,
+                     *             "ph": 7.0306
+                     *           },
+                     *           {
+                     *             "t_min": 930,
+                     *             "co2_mg_l": 12.0064,
+                     *             "ph": 7.04354
+                     *           },
+                     *           {
+                     *             "t_min": 945,
+                     *             "co2_mg_l": 11.654,
+                     *             "ph": 7.05646
+                     *           },
+                     *           {
+                     *             "t_min": 960,
+                     *             "co2_mg_l": 11.3124,
+                     *             "ph": 7.06936
+                     *           },
+                     *           {
+                     *             "t_min": 975,
+                     *             "co2_mg_l": 10.9814,
+                     *             "ph": 7.08224
+                     *           },
+                     *           {
+                     *             "t_min": 990,
+                     *             "co2_mg_l": 10.6607,
+                     *             "ph": 7.09509
+                     *           },
+                     *           {
+                     *             "t_min": 1005,
+                     *             "co2_mg_l": 10.3499,
+                     *             "ph": 7.10792
+                     *           },
+                     *           {
+                     *             "t_min": 1020,
+                     *             "co2_mg_l": 10.0486,
+                     *             "ph": 7.12073
+                     *           },
+                     *           {
+                     *             "t_min": 1035,
+                     *             "co2_mg_l": 9.75676,
+                     *             "ph": 7.13351
+                     *           },
+                     *           {
+                     *             "t_min": 1050,
+                     *             "co2_mg_l": 9.47391,
+                     *             "ph": 7.14627
+                     *           },
+                     *           {
+                     *             "t_min": 1065,
+                     *             "co2_mg_l": 9.19981,
+                     *             "ph": 7.15899
+                     *           },
+                     *           {
+                     *             "t_min": 1080,
+                     *             "co2_mg_l": 8.93419,
+                     *             "ph": 7.17169
+                     *           },
+                     *           {
+                     *             "t_min": 1095,
+                     *             "co2_mg_l": 8.67678,
+                     *             "ph": 7.18437
+                     *           },
+                     *           {
+                     *             "t_min": 1110,
+                     *             "co2_mg_l": 8.42734,
+                     *             "ph": 7.19701
+                     *           },
+                     *           {
+                     *             "t_min": 1125,
+                     *             "co2_mg_l": 8.18562,
+                     *             "ph": 7.20963
+                     *           },
+                     *           {
+                     *             "t_min": 1140,
+                     *             "co2_mg_l": 7.95138,
+                     *             "ph": 7.22221
+                     *           },
+                     *           {
+                     *             "t_min": 1155,
+                     *             "co2_mg_l": 7.72438,
+                     *             "ph": 7.23476
+                     *           },
+                     *           {
+                     *             "t_min": 1170,
+                     *             "co2_mg_l": 7.50441,
+                     *             "ph": 7.24728
+                     *           },
+                     *           {
+                     *             "t_min": 1185,
+                     *             "co2_mg_l": 7.29125,
+                     *             "ph": 7.25977
+                     *           },
+                     *           {
+                     *             "t_min": 1200,
+                     *             "co2_mg_l": 7.08467,
+                     *             "ph": 7.27222
+                     *           },
+                     *           {
+                     *             "t_min": 1215,
+                     *             "co2_mg_l": 6.8845,
+                     *             "ph": 7.28464
+                     *           },
+                     *           {
+                     *             "t_min": 1230,
+                     *             "co2_mg_l": 6.69051,
+                     *             "ph": 7.29703
+                     *           },
+                     *           {
+                     *             "t_min": 1245,
+                     *             "co2_mg_l": 6.50253,
+                     *             "ph": 7.30937
+                     *           },
+                     *           {
+                     *             "t_min": 1260,
+                     *             "co2_mg_l": 6.32036,
+                     *             "ph": 7.32168
+                     *           },
+                     *           {
+                     *             "t_min": 1275,
+                     *             "co2_mg_l": 6.14383,
+                     *             "ph": 7.33395
+                     *           },
+                     *           {
+                     *             "t_min": 1290,
+                     *             "co2_mg_l": 5.97276,
+                     *             "ph": 7.34618
+                     *           },
+                     *           {
+                     *             "t_min": 1305,
+                     *             "co2_mg_l": 5.80698,
+                     *             "ph": 7.35838
+                     *           },
+                     *           {
+                     *             "t_min": 1320,
+                     *             "co2_mg_l": 5.64633,
+                     *             "ph": 7.37053
+                     *           },
+                     *           {
+                     *             "t_min": 1335,
+                     *             "co2_mg_l": 5.49066,
+                     *             "ph": 7.38264
+                     *           },
+                     *           {
+                     *             "t_min": 1350,
+                     *             "co2_mg_l": 5.3398,
+                     *             "ph": 7.3947
+                     *           },
+                     *           {
+                     *             "t_min": 1365,
+                     *             "co2_mg_l": 5.1936,
+                     *             "ph": 7.40672
+                     *           },
+                     *           {
+                     *             "t_min": 1380,
+                     *             "co2_mg_l": 5.05193,
+                     *             "ph": 7.41869
+                     *           },
+                     *           {
+                     *             "t_min": 1395,
+                     *             "co2_mg_l": 4.91465,
+                     *             "ph": 7.43062
+                     *           },
+                     *           {
+                     *             "t_min": 1410,
+                     *             "co2_mg_l": 4.78161,
+                     *             "ph": 7.4425
+                     *           },
+                     *           {
+                     *             "t_min": 1425,
+                     *             "co2_mg_l": 4.65269,
+                     *             "ph": 7.45433
+                     *           },
+                     *           {
+                     *             "t_min": 1440,
+                     *             "co2_mg_l": 4.52775,
+                     *             "ph": 7.46611
+                     *           }
+                     *         ]
+                     *       },
+                     *       "uncertainty": {
+                     *         "lead_time_low_min": 52.9858,
+                     *         "lead_time_high_min": 98.2
+                     *       },
+                     *       "cautions": [
+                     *         {
+                     *           "code": "unthrottled_feed",
+                     *           "severity": "danger",
+                     *           "message": "This feed is 4.5 times what holds 30 mg/L. With nothing to throttle it CO2 reaches 110 mg/L when the gas closes, and 170 if it never closes. That kills livestock: run it only behind a pH controller that is gated by the light and limits how long the valve stays open."
+                     *         },
+                     *         {
+                     *           "code": "lead_needs_surplus",
+                     *           "severity": "info",
+                     *           "message": "A short lead is bought with feed, not with the reactor: 1 to 1.5 h takes 4 to 5 times the hold feed on a rippled surface, then throttling. At the hold feed alone, on a timer that opens 75 min before the lights, this tank holds 8.4 mg/L when the lights come on and 21 when the gas closes, not 30."
+                     *         },
+                     *         {
+                     *           "code": "livestock",
+                     *           "severity": "info",
+                     *           "message": "CO2 may be as high as 30 mg/L (20000 µatm). Healthy livestock usually bears that; low oxygen, the night, unfamiliar water and sensitive species change it. Watch for gasping at the surface, fast breathing, fish lying still, shrimp fleeing the water."
+                     *         },
+                     *         {
+                     *           "code": "raise_slowly",
+                     *           "severity": "warning",
+                     *           "message": "Raise CO2 in small steps over several days, with the livestock watched for the first hours after each step. At the first sign of distress stop the gas and aerate."
+                     *         },
+                     *         {
+                     *           "code": "local_rules",
+                     *           "severity": "info",
+                     *           "message": "Local codes, the makers' manuals and licensed practice come first. This result informs; it replaces none of them."
+                     *         }
+                     *       ],
+                     *       "assumptions": [
+                     *         {
+                     *           "code": "exchange",
+                     *           "message": "A rippled surface trades gas at 5 cm/h (k600), right within a factor of 2: the tank loses 13 % of its excess CO2 an hour. Two pH readings in one night with the gas off replace this guess."
+                     *         },
+                     *         {
+                     *           "code": "efficiency",
+                     *           "message": "100 % of the gas dissolves with an inline reactor (97 % to 100 %)."
+                     *         },
+                     *         {
+                     *           "code": "plant_uptake",
+                     *           "message": "The plants take 1 mg/L an hour in light: 0.3 where they are sparse, 1 usual, 2 dense under strong light."
+                     *         },
+                     *         {
+                     *           "code": "well_mixed",
+                     *           "message": "The whole tank mixes at once, and its alkalinity stays the same while CO2 comes and goes. A cover that keeps CO2 over the water is not counted."
+                     *         },
+                     *         {
+                     *           "code": "rests_at_air",
+                     *           "message": "Without gas the tank rests at 0.61 mg/L, the balance with air of 425 ppm. Tanks with fish and rich soil rest at 2 to 4; give your own level if you know it."
+                     *         },
+                     *         {
+                     *           "code": "throttled",
+                     *           "message": "The feed runs until the tank holds 30 mg/L and is then throttled to hold it; 95 % of that when the lights come on counts as reached. The gas closes 60 min before dark."
+                     *         }
+                     *       ],
+                     *       "method": {
+                     *         "name": "Lead time from the mass balance of the tank",
+                     *         "version": "2026.12.1",
+                     *         "sources": [
+                     *           {
+                     *             "title": "Wanninkhof, Limnology and Oceanography: Methods 12:351-362",
+                     *             "year": 2014,
+                     *             "detail": "Table 1: Schmidt number of CO2 in fresh water, -2 to 40 °C"
+                     *           },
+                     *           {
+                     *             "title": "Jähne, Münnich, Bösinger, Dutzi, Huber & Libner, Journal of Geophysical Research 92(C2):1937-1949",
+                     *             "year": 1987,
+                     *             "detail": "Exponent of the Schmidt number: 2/3 on a calm surface, 1/2 on a rippled one"
+                     *           },
+                     *           {
+                     *             "title": "Cole & Caraco, Limnology and Oceanography 43:647-656",
+                     *             "year": 1998,
+                     *             "detail": "Gas transfer of a lake without wind: k600 about 2 cm/h"
+                     *           },
+                     *           {
+                     *             "title": "Engineering judgement, no publication",
+                     *             "year": 2026,
+                     *             "detail": "A value with its range that the person may replace by a measurement"
+                     *           },
+                     *           {
+                     *             "title": "Engineering judgement, no publication",
+                     *             "year": 2026,
+                     *             "detail": "A value with its range that the person may replace by a measurement"
+                     *           },
+                     *           {
+                     *             "title": "Plummer & Busenberg, Geochimica et Cosmochimica Acta 46:1011-1040",
+                     *             "year": 1982,
+                     *             "detail": "K1, K2 and Henry's constant of CO2, 0-90 °C"
+                     *           },
+                     *           {
+                     *             "title": "Weiss & Price, Marine Chemistry 8:347-359",
+                     *             "year": 1980,
+                     *             "detail": "Vapour pressure of water, eq. 10"
+                     *           },
+                     *           {
+                     *             "title": "Truesdell & Jones, Journal of Research of the U.S. Geological Survey 2:233-248",
+                     *             "year": 1974,
+                     *             "detail": "Activity coefficients and Debye-Hückel constants, up to 0.05 mol/L"
+                     *           }
+                     *         ]
+                     *       },
+                     *       "input": {
+                     *         "volume_l": 180,
+                     *         "surface_area_m2": 0.4,
+                     *         "kh_dkh": 4,
+                     *         "temperature_c": 25,
+                     *         "air_co2_ppm": 425,
+                     *         "altitude_m": 0,
+                     *         "target_co2_mg_l": 30,
+                     *         "agitation": "rippled",
+                     *         "method": "inline_reactor",
+                     *         "plant_uptake_mg_l_h": 1,
+                     *         "photoperiod_h": 8,
+                     *         "close_before_lights_off_min": 60,
+                     *         "reach_fraction": 0.95,
+                     *         "feed_ratio": 4.5
+                     *       }
+                     *     }
+                     */
+                    "application/json": {
+                        result: {
+                            /** @description CO2 fed, in mg/min */
+                            feed_mg_min: number;
+                            /** @description CO2 fed, as gas at 1 atm and the water's temperature, in mL/min */
+                            feed_ml_min: number;
+                            /** @description Feed over the hold feed */
+                            feed_ratio: number;
+                            /** @description Feed that keeps the target in light, in mg/min */
+                            hold_feed_mg_min: number;
+                            /** @description CO2 when the gas closes in the evening if nothing throttles this feed, in mg/L */
+                            uncontrolled_co2_mg_l: number;
+                            /** @description CO2 that this feed leads to if the gas never closes, in mg/L */
+                            uncontrolled_limit_co2_mg_l: number;
+                            lead_time_min: number | null;
+                            /** @description CO2 when the lights come on over the target */
+                            reached_fraction: number;
+                            open_before_lights_min: number | null;
+                            /** @description Minutes before the lights go off that the gas closes, in min */
+                            close_before_lights_off_min: number;
+                            /** @description CO2 when the gas opens, in mg/L */
+                            start_co2_mg_l: number;
+                            /** @description CO2 when the lights come on, in mg/L */
+                            lights_on_co2_mg_l: number;
+                            /** @description CO2 when the gas closes, in mg/L */
+                            close_co2_mg_l: number;
+                            /** @description CO2 when the lights go off, in mg/L */
+                            lights_off_co2_mg_l: number;
+                            /** @description CO2 when the lights come on if the gas runs at the hold feed on a timer, in mg/L */
+                            hold_only_lights_on_co2_mg_l: number;
+                            /** @description CO2 when the gas closes if it runs at the hold feed on a timer, in mg/L */
+                            hold_only_close_co2_mg_l: number;
+                            /** @description CO2 used a day, in g/day */
+                            daily_use_g_day: number;
+                            /** @description pH of the water at the target, in pH */
+                            target_ph: number;
+                            /** @description Share of its excess CO2 that the tank loses to the air each hour, in 1/h */
+                            exchange_per_h: number;
+                            /** @description Share of the gas fed that dissolves in the water */
+                            dissolution_efficiency: number;
+                            series: {
+                                /** @description Minute of the series, in min */
+                                t_min: number;
+                                /** @description Free CO2 dissolved in the water, in mg/L */
+                                co2_mg_l: number;
+                                /** @description pH at the water's own temperature, in pH */
+                                ph: number;
+                            }[];
+                        };
+                        uncertainty: {
+                            lead_time_low_min: number | null;
+                            lead_time_high_min: number | null;
+                        };
+                        cautions: components["schemas"]["Caution"][];
+                        assumptions: components["schemas"]["Assumption"][];
+                        method: components["schemas"]["Method"];
+                        /** @description Your input with its defaults filled in */
+                        input: {
+                            [key: string]: unknown;
+                        };
+                    };
+                };
+            };
+            /** @description `key_in_url`: A key stands in the address. `malformed_json`: The body is not JSON. */
+            400: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `key_missing`: No key was sent. `key_unknown`: The key is not known. `key_revoked`: The key was revoked. `key_expired`: The key has expired. */
+            401: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `quota_reached`: The units of this period are used up. */
+            402: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `server_key_in_browser`: A server key was used from a browser. `origin_not_allowed`: The origin is not on the list. `address_not_allowed`: The network address is not on the list. `scope_missing`: The key lacks the scope. `account_suspended`: The account is suspended. */
+            403: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `not_found`: There is nothing here. */
+            404: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `method_not_allowed`: The method is not offered here. */
+            405: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `body_too_large`: The body is too large. */
+            413: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `media_type_unsupported`: The media type is not JSON. */
+            415: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `validation_failed`: The input is not valid. `out_of_domain`: The input is physically impossible or outside the method. */
+            422: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `rate_limited`: Too many calls. */
+            429: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `internal`: Something failed on our side. */
+            500: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `unavailable`: The service is resting for a moment. */
+            503: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+        };
+    };
+    gasController: {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        requestBody: {
+            content: {
+                /**
+                 * @example {
+                 *       "volume_l": 180,
+                 *       "surface_area_m2": 0.4,
+                 *       "kh_dkh": 4
+                 *     }
+                 */
+                "application/json": {
+                    /** @description Volume of the water, in L */
+                    volume_l?: number;
+                    /** @description Open water surface, in m² */
+                    surface_area_m2?: number;
+                    /** @description Inner length of the tank, in cm */
+                    length_cm?: number;
+                    /** @description Inner width of the tank, front to back, in cm */
+                    width_cm?: number;
+                    /** @description Height of the water in the tank, in cm */
+                    height_cm?: number;
+                    /** @description Carbonate hardness in German degrees: the alkalinity that a KH test titrates, in dKH */
+                    kh_dkh: number;
+                    /**
+                     * @description Water temperature, in °C
+                     * @default 25
+                     */
+                    temperature_c?: number;
+                    /**
+                     * @description CO2 in the room's dry air; outdoors 425, occupied rooms 600 to 1,500, in ppm
+                     * @default 425
+                     */
+                    air_co2_ppm?: number;
+                    /**
+                     * @description Height above the sea, in m
+                     * @default 0
+                     */
+                    altitude_m?: number;
+                    /** @description Ionic strength of the water, in mol/L */
+                    ionic_strength_mol_l?: number;
+                    /** @description Electric conductivity, referred to 25 °C, in µS/cm */
+                    conductivity_us_cm?: number;
+                    /** @description Dissolved solids, as a meter shows them or weighed, in mg/L */
+                    tds_mg_l?: number;
+                    /** @description What the TDS meter multiplies its conductivity with, commonly 0.5 to 0.7 */
+                    tds_factor?: number;
+                    /** @description Total hardness (calcium and magnesium) in German degrees, in dGH */
+                    gh_dgh?: number;
+                    /** @description Phosphate as PO4, in mg/L */
+                    phosphate_mg_l?: number;
+                    /**
+                     * @description CO2 that the tank should hold while the lights are on; 20 to 30 is usual, in mg/L
+                     * @default 30
+                     */
+                    target_co2_mg_l?: number;
+                    /**
+                     * @description How the surface moves; two pH readings of a night (`overnight`) replace the guess
+                     * @default rippled
+                     * @enum {string}
+                     */
+                    agitation?: "calm" | "rippled" | "agitated" | "strong";
+                    /** @description Two pH readings of one night with gas and light off */
+                    overnight?: {
+                        /** @description pH when the light and the gas went off, in pH */
+                        start_ph: number;
+                        /** @description pH later in the same night, gas still off, in pH */
+                        end_ph: number;
+                        /** @description Hours between the two readings, in h */
+                        elapsed_h: number;
+                    };
+                    /**
+                     * @description How the gas gets into the water
+                     * @default inline_reactor
+                     * @enum {string}
+                     */
+                    method?: "inline_reactor" | "diffuser" | "inline_diffuser";
+                    /** @description Share of the gas fed that dissolves in the water */
+                    dissolution_efficiency?: number;
+                    /** @description Diameter of the diffuser's bubbles, in mm */
+                    bubble_diameter_mm?: number;
+                    /** @description Depth of water above where the gas goes in, in m */
+                    depth_m?: number;
+                    /**
+                     * @description CO2 that the plants take in light: 0.3 sparse, 1 usual, 2 dense and bright, in mg/(L·h)
+                     * @default 1
+                     */
+                    plant_uptake_mg_l_h?: number;
+                    /** @description CO2 that the tank rests at without gas; commonly 2 to 4 with fish and soil, in mg/L */
+                    rest_co2_mg_l?: number;
+                    /** @description Hours of light a day, in h */
+                    photoperiod_h?: number;
+                    /**
+                     * @description Minutes before the lights go off that the gas closes, in min
+                     * @default 60
+                     */
+                    close_before_lights_off_min?: number;
+                    /**
+                     * @description Share of the target that counts as reached when the lights come on
+                     * @default 0.95
+                     */
+                    reach_fraction?: number;
+                    /** @description CO2 fed, in mg/min */
+                    feed_mg_min?: number;
+                    /** @description CO2 fed, as gas at 1 atm and the water's temperature, in mL/min */
+                    feed_ml_min?: number;
+                    /**
+                     * @description Feed over the hold feed
+                     * @default 4.5
+                     */
+                    feed_ratio?: number;
+                    /**
+                     * @description Standard error of the pH reading: 0.02 bench meter, 0.1 pen or probe, 0.2 liquid test, in pH
+                     * @default 0.1
+                     */
+                    ph_error?: number;
+                    /**
+                     * @description Standard error of the KH reading; a drop test's step over 2 is on the safe side, in dKH
+                     * @default 0.5
+                     */
+                    kh_error_dkh?: number;
+                    /**
+                     * @description Standard error of the temperature, in °C
+                     * @default 0.5
+                     */
+                    temperature_error_c?: number;
+                    /**
+                     * @description Hour of the day when the lights come on, in h
+                     * @default 10
+                     */
+                    lights_on_h?: number;
+                    /** @description Hour of the day when the lights go off, in h */
+                    lights_off_h?: number;
+                    /** @description Minutes before the lights to open the gas, in min */
+                    open_before_lights_min?: number;
+                    /** @description pH at which the controller closes the gas, in pH */
+                    setpoint_ph?: number;
+                    /**
+                     * @description How far above the set-point the pH rises before the controller opens the gas again, in pH
+                     * @default 0.1
+                     */
+                    hysteresis_ph?: number;
+                    /**
+                     * @description Time constant of the gas held in hose and reactor; 0.5 to 2, minutes in an old reactor, in min
+                     * @default 1
+                     */
+                    delay_min?: number;
+                    /**
+                     * @description Time constant of the probe and of the water's way to it; 0.5 to 2, in min
+                     * @default 1
+                     */
+                    probe_lag_min?: number;
+                };
+            };
+        };
+        responses: {
+            /** @description The answer. */
+            200: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    /**
+                     * @example {
+                     *       "result": {
+                     *         "duty_fraction": 0.20459,
+                     *         "cycles_per_h": 0.501185,
+                     *         "ideal_duty_fraction": 0.203438,
+                     *         "ideal_cycles_per_h": 0.554036,
+                     *         "switches_per_day": 8,
+                     *         "valve_open_min": 157.741,
+                     *         "overshoot_mg_l": 0.429992,
+                     *         "max_co2_mg_l": 30.43,
+                     *         "hold_low_co2_mg_l": 23.754,
+                     *         "min_ph": 6.64005,
+                     *         "daily_use_g_day": 9.99627,
+                     *         "setpoint_ph": 6.64622,
+                     *         "setpoint_co2_mg_l": 30,
+                     *         "open_before_lights_min": 76,
+                     *         "close_before_lights_off_min": 60,
+                     *         "reached_after_min": 84.2629,
+                     *         "lights_on_co2_mg_l": 27.9975,
+                     *         "feed_mg_min": 63.3714,
+                     *         "feed_ml_min": 35.0507,
+                     *         "feed_ratio": 4.5,
+                     *         "hold_feed_mg_min": 14.0825,
+                     *         "uncontrolled_co2_mg_l": 109.847,
+                     *         "uncontrolled_limit_co2_mg_l": 168.643,
+                     *         "series": [
+                     *           {
+                     *             "t_min": 0,
+                     *             "co2_mg_l": 10.9786,
+                     *             "ph": 7.08235
+                     *           },
+                     *           {
+                     *             "t_min": 10,
+                     *             "co2_mg_l": 10.7637,
+                     *             "ph": 7.09092
+                     *           },
+                     *           {
+                     *             "t_min": 20,
+                     *             "co2_mg_l": 10.5533,
+                     *             "ph": 7.09949
+                     *           },
+                     *           {
+                     *             "t_min": 30,
+                     *             "co2_mg_l": 10.3472,
+                     *             "ph": 7.10804
+                     *           },
+                     *           {
+                     *             "t_min": 40,
+                     *             "co2_mg_l": 10.1454,
+                     *             "ph": 7.11658
+                     *           },
+                     *           {
+                     *             "t_min": 50,
+                     *             "co2_mg_l": 9.94777,
+                     *             "ph": 7.12511
+                     *           },
+                     *           {
+                     *             "t_min": 60,
+                     *             "co2_mg_l": 9.75425,
+                     *             "ph": 7.13362
+                     *           },
+                     *           {
+                     *             "t_min": 70,
+                     *             "co2_mg_l": 9.56475,
+                     *             "ph": 7.14213
+                     *           },
+                     *           {
+                     *             "t_min": 80,
+                     *             "co2_mg_l": 9.37918,
+                     *             "ph": 7.15062
+                     *           },
+                     *           {
+                     *             "t_min": 90,
+                     *             "co2_mg_l": 9.19745,
+                     *             "ph": 7.1591
+                     *           },
+                     *           {
+                     *             "t_min": 100,
+                     *             "co2_mg_l": 9.01949,
+                     *             "ph": 7.16757
+                     *           },
+                     *           {
+                     *             "t_min": 110,
+                     *             "co2_mg_l": 8.84522,
+                     *             "ph": 7.17603
+                     *           },
+                     *           {
+                     *             "t_min": 120,
+                     *             "co2_mg_l": 8.67457,
+                     *             "ph": 7.18448
+                     *           },
+                     *           {
+                     *             "t_min": 130,
+                     *             "co2_mg_l": 8.50745,
+                     *             "ph": 7.19291
+                     *           },
+                     *           {
+                     *             "t_min": 140,
+                     *             "co2_mg_l": 8.3438,
+                     *             "ph": 7.20133
+                     *           },
+                     *           {
+                     *             "t_min": 150,
+                     *             "co2_mg_l": 8.18354,
+                     *             "ph": 7.20974
+                     *           },
+                     *           {
+                     *             "t_min": 160,
+                     *             "co2_mg_l": 8.02661,
+                     *             "ph": 7.21813
+                     *           },
+                     *           {
+                     *             "t_min": 170,
+                     *             "co2_mg_l": 7.87293,
+                     *             "ph": 7.22651
+                     *           },
+                     *           {
+                     *             "t_min": 180,
+                     *             "co2_mg_l": 7.72243,
+                     *             "ph": 7.23487
+                     *           },
+                     *           {
+                     *             "t_min": 190,
+                     *             "co2_mg_l": 7.57506,
+                     *             "ph": 7.24322
+                     *           },
+                     *           {
+                     *             "t_min": 200,
+                     *             "co2_mg_l": 7.43074,
+                     *             "ph": 7.25156
+                     *           },
+                     *           {
+                     *             "t_min": 210,
+                     *             "co2_mg_l": 7.28941,
+                     *             "ph": 7.25988
+                     *           },
+                     *           {
+                     *             "t_min": 220,
+                     *             "co2_mg_l": 7.15102,
+                     *             "ph": 7.26818
+                     *           },
+                     *           {
+                     *             "t_min": 230,
+                     *             "co2_mg_l": 7.01549,
+                     *             "ph": 7.27648
+                     *           },
+                     *           {
+                     *             "t_min": 240,
+                     *             "co2_mg_l": 6.88277,
+                     *             "ph": 7.28475
+                     *           },
+                     *           {
+                     *             "t_min": 250,
+                     *             "co2_mg_l": 6.75281,
+                     *             "ph": 7.29301
+                     *           },
+                     *           {
+                     *             "t_min": 260,
+                     *             "co2_mg_l": 6.62554,
+                     *             "ph": 7.30126
+                     *           },
+                     *           {
+                     *             "t_min": 270,
+                     *             "co2_mg_l": 6.50091,
+                     *             "ph": 7.30948
+                     *           },
+                     *           {
+                     *             "t_min": 280,
+                     *             "co2_mg_l": 6.37886,
+                     *             "ph": 7.31769
+                     *           },
+                     *           {
+                     *             "t_min": 290,
+                     *             "co2_mg_l": 6.25935,
+                     *             "ph": 7.32588
+                     *           },
+                     *           {
+                     *             "t_min": 300,
+                     *             "co2_mg_l": 6.14231,
+                     *             "ph": 7.33406
+                     *           },
+                     *           {
+                     *             "t_min": 310,
+                     *             "co2_mg_l": 6.0277,
+                     *             "ph": 7.34222
+                     *           },
+                     *           {
+                     *             "t_min": 320,
+                     *             "co2_mg_l": 5.91546,
+                     *             "ph": 7.35036
+                     *           },
+                     *           {
+                     *             "t_min": 330,
+                     *             "co2_mg_l": 5.80556,
+                     *             "ph": 7.35848
+                     *           },
+                     *           {
+                     *             "t_min": 340,
+                     *             "co2_mg_l": 5.69793,
+                     *             "ph": 7.36659
+                     *           },
+                     *           {
+                     *             "t_min": 350,
+                     *             "co2_mg_l": 5.59253,
+                     *             "ph": 7.37467
+                     *           },
+                     *           {
+                     *             "t_min": 360,
+                     *             "co2_mg_l": 5.48932,
+                     *             "ph": 7.38274
+                     *           },
+                     *           {
+                     *             "t_min": 370,
+                     *             "co2_mg_l": 5.38825,
+                     *             "ph": 7.39079
+                     *           },
+                     *           {
+                     *             "t_min": 380,
+                     *             "co2_mg_l": 5.28927,
+                     *             "ph": 7.39881
+                     *           },
+                     *           {
+                     *             "t_min": 390,
+                     *             "co2_mg_l": 5.19235,
+                     *             "ph": 7.40682
+                     *           },
+                     *           {
+                     *             "t_min": 400,
+                     *             "co2_mg_l": 5.09743,
+                     *             "ph": 7.41481
+                     *           },
+                     *           {
+                     *             "t_min": 410,
+                     *             "co2_mg_l": 5.00449,
+                     *             "ph": 7.42277
+                     *           },
+                     *           {
+                     *             "t_min": 420,
+                     *             "co2_mg_l": 4.91347,
+                     *             "ph": 7.43072
+                     *           },
+                     *           {
+                     *             "t_min": 430,
+                     *             "co2_mg_l": 4.82434,
+                     *             "ph": 7.43864
+                     *           },
+                     *           {
+                     *             "t_min": 440,
+                     *             "co2_mg_l": 4.73705,
+                     *             "ph": 7.44655
+                     *           },
+                     *           {
+                     *             "t_min": 450,
+                     *             "co2_mg_l": 4.65158,
+                     *             "ph": 7.45443
+                     *           },
+                     *           {
+                     *             "t_min": 460,
+                     *             "co2_mg_l": 4.56788,
+                     *             "ph": 7.46229
+                     *           },
+                     *           {
+                     *             "t_min": 470,
+                     *             "co2_mg_l": 4.48591,
+                     *             "ph": 7.47013
+                     *           },
+                     *           {
+                     *             "t_min": 480,
+                     *             "co2_mg_l": 4.40564,
+                     *             "ph": 7.47794
+                     *           },
+                     *           {
+                     *             "t_min": 490,
+                     *             "co2_mg_l": 4.32704,
+                     *             "ph": 7.48573
+                     *           },
+                     *           {
+                     *             "t_min": 500,
+                     *             "co2_mg_l": 4.25007,
+                     *             "ph": 7.49349
+                     *           },
+                     *           {
+                     *             "t_min": 510,
+                     *             "co2_mg_l": 4.17469,
+                     *             "ph": 7.50123
+                     *           },
+                     *           {
+                     *             "t_min": 520,
+                     *             "co2_mg_l": 4.10088,
+                     *             "ph": 7.50895
+                     *           },
+                     *           {
+                     *             "t_min": 530,
+                     *             "co2_mg_l": 5.78066,
+                     *             "ph": 7.36034
+                     *           },
+                     *           {
+                     *             "t_min": 540,
+                     *             "co2_mg_l": 9.1567,
+                     *             "ph": 7.16103
+                     *           },
+                     *           {
+                     *             "t_min": 550,
+                     *             "co2_mg_l": 12.4636,
+                     *             "ph": 7.02733
+                     *           },
+                     *           {
+                     *             "t_min": 560,
+                     *             "co2_mg_l": 15.7019,
+                     *             "ph": 6.92715
+                     *           },
+                     *           {
+                     *             "t_min": 570,
+                     *             "co2_mg_l": 18.8731,
+                     *             "ph": 6.84734
+                     *           },
+                     *           {
+                     *             "t_min": 580,
+                     *             "co2_mg_l": 21.9785,
+                     *             "ph": 6.78124
+                     *           },
+                     *           {
+                     *             "t_min": 590,
+                     *             "co2_mg_l": 25.0196,
+                     *             "ph": 6.72501
+                     *           },
+                     *           {
+                     *             "t_min": 600,
+                     *             "co2_mg_l": 27.9975,
+                     *             "ph": 6.6762
+                     *           },
+                     *           {
+                     *             "t_min": 610,
+                     *             "co2_mg_l": 30.4278,
+                     *             "ph": 6.64008
+                     *           },
+                     *           {
+                     *             "t_min": 620,
+                     *             "co2_mg_l": 29.7055,
+                     *             "ph": 6.6505
+                     *           },
+                     *           {
+                     *             "t_min": 630,
+                     *             "co2_mg_l": 28.9374,
+                     *             "ph": 6.66187
+                     *           },
+                     *           {
+                     *             "t_min": 640,
+                     *             "co2_mg_l": 28.1852,
+                     *             "ph": 6.6733
+                     *           },
+                     *           {
+                     *             "t_min": 650,
+                     *             "co2_mg_l": 27.4486,
+                     *             "ph": 6.6848
+                     *           },
+                     *           {
+                     *             "t_min": 660,
+                     *             "co2_mg_l": 26.7273,
+                     *             "ph": 6.69635
+                     *           },
+                     *           {
+                     *             "t_min": 670,
+                     *             "co2_mg_l": 26.0209,
+                     *             "ph": 6.70798
+                     *           },
+                     *           {
+                     *             "t_min": 680,
+                     *             "co2_mg_l": 25.3292,
+                     *             "ph": 6.71967
+                     *           },
+                     *           {
+                     *             "t_min": 690,
+                     *             "co2_mg_l": 24.6518,
+                     *             "ph": 6.73143
+                     *           },
+                     *           {
+                     *             "t_min": 700,
+                     *             "co2_mg_l": 23.9885,
+                     *             "ph": 6.74327
+                     *           },
+                     *           {
+                     *             "t_min": 710,
+                     *             "co2_mg_l": 25.269,
+                     *             "ph": 6.7207
+                     *           },
+                     *           {
+                     *             "t_min": 720,
+                     *             "co2_mg_l": 28.0764,
+                     *             "ph": 6.67498
+                     *           },
+                     *           {
+                     *             "t_min": 730,
+                     *             "co2_mg_l": 30.4207,
+                     *             "ph": 6.64018
+                     *           },
+                     *           {
+                     *             "t_min": 740,
+                     *             "co2_mg_l": 29.6835,
+                     *             "ph": 6.65083
+                     *           },
+                     *           {
+                     *             "t_min": 750,
+                     *             "co2_mg_l": 28.9159,
+                     *             "ph": 6.6622
+                     *           },
+                     *           {
+                     *             "t_min": 760,
+                     *             "co2_mg_l": 28.1641,
+                     *             "ph": 6.67363
+                     *           },
+                     *           {
+                     *             "t_min": 770,
+                     *             "co2_mg_l": 27.428,
+                     *             "ph": 6.68512
+                     *           },
+                     *           {
+                     *             "t_min": 780,
+                     *             "co2_mg_l": 26.7071,
+                     *             "ph": 6.69668
+                     *           },
+                     *           {
+                     *             "t_min": 790,
+                     *             "co2_mg_l": 26.0011,
+                     *             "ph": 6.70831
+                     *           },
+                     *           {
+                     *             "t_min": 800,
+                     *             "co2_mg_l": 25.3098,
+                     *             "ph": 6.72
+                     *           },
+                     *           {
+                     *             "t_min": 810,
+                     *             "co2_mg_l": 24.6328,
+                     *             "ph": 6.73177
+                     *           },
+                     *           {
+                     *             "t_min": 820,
+                     *             "co2_mg_l": 23.9699,
+                     *             "ph": 6.7436
+                     *           },
+                     *           {
+                     *             "t_min": 830,
+                     *             "co2_mg_l": 25.3493,
+                     *             "ph": 6.71932
+                     *           },
+                     *           {
+                     *             "t_min": 840,
+                     *             "co2_mg_l": 28.1551,
+                     *             "ph": 6.67377
+                     *           },
+                     *           {
+                     *             "t_min": 850,
+                     *             "co2_mg_l": 30.4098,
+                     *             "ph": 6.64034
+                     *           },
+                     *           {
+                     *             "t_min": 860,
+                     *             "co2_mg_l": 29.6615,
+                     *             "ph": 6.65115
+                     *           },
+                     *           {
+                     *             "t_min": 870,
+                     *             "co2_mg_l": 28.8943,
+                     *             "ph": 6.66252
+                     *           },
+                     *           {
+                     *             "t_min": 880,
+                     *             "co2_mg_l": 28.143,
+                     *             "ph": 6.67395
+                     *           },
+                     *           {
+                     *             "t_min": 890,
+                     *             "co2_mg_l": 27.4073,
+                     *             "ph": 6.68545
+                     *           },
+                     *           {
+                     *             "t_min": 900,
+                     *             "co2_mg_l": 26.6868,
+                     *             "ph": 6.69701
+                     *           },
+                     *           {
+                     *             "t_min": 910,
+                     *             "co2_mg_l": 25.9813,
+                     *             "ph": 6.70864
+                     *           },
+                     *           {
+                     *             "t_min": 920,
+                     *             "co2_mg_l": 25.2904,
+                     *             "ph": 6.72033
+                     *           },
+                     *           {
+                     *             "t_min": 930,
+                     *             "co2_mg_l": 24.6138,
+                     *             "ph": 6.7321
+                     *           },
+                     *           {
+                     *             "t_min": 940,
+                     *             "co2_mg_l": 23.9513,
+                     *             "ph": 6.74394
+                     *           },
+                     *           {
+                     *             "t_min": 950,
+                     *             "co2_mg_l": 25.4296,
+                     *             "ph": 6.71795
+                     *           },
+                     *           {
+                     *             "t_min": 960,
+                     *             "co2_mg_l": 28.2339,
+                     *             "ph": 6.67255
+                     *           },
+                     *           {
+                     *             "t_min": 970,
+                     *             "co2_mg_l": 30.396,
+                     *             "ph": 6.64053
+                     *           },
+                     *           {
+                     *             "t_min": 980,
+                     *             "co2_mg_l": 29.6395,
+                     *             "ph": 6.65147
+                     *           },
+                     *           {
+                     *             "t_min": 990,
+                     *             "co2_mg_l": 28.8728,
+                     *             "ph": 6.66284
+                     *           },
+                     *           {
+                     *             "t_min": 1000,
+                     *             "co2_mg_l": 28.1219,
+                     *             "ph": 6.67428
+                     *           },
+                     *           {
+                     *             "t_min": 1010,
+                     *             "co2_mg_l": 27.3867,
+                     *             "ph": 6.68578
+                     *           },
+                     *           {
+                     *             "t_min": 1020,
+                     *             "co2_mg_l": 26.6666,
+                     *             "ph": 6.69734
+                     *           },
+                     *           {
+                     *             "t_min": 1030,
+                     *             "co2_mg_l": 25.9615,
+                     *             "ph": 6.70897
+                     *           },
+                     *           {
+                     *             "t_min": 1040,
+                     *             "co2_mg_l": 25.271,
+                     *             "ph": 6.72067
+                     *           },
+                     *           {
+                     *             "t_min": 1050,
+                     *             "co2_mg_l": 24.5949,
+                     *             "ph": 6.73244
+                     *           },
+                     *           {
+                     *             "t_min": 1060,
+                     *             "co2_mg_l": 23.9327,
+                     *             "ph": 6.74428
+                     *           },
+                     *           {
+                     *             "t_min": 1070,
+                     *             "co2_mg_l": 23.2843,
+                     *             "ph": 6.7562
+                     *           },
+                     *           {
+                     *             "t_min": 1080,
+                     *             "co2_mg_l": 22.6493,
+                     *             "ph": 6.7682
+                     *           },
+                     *           {
+                     *             "t_min": 1090,
+                     *             "co2_mg_l": 22.1924,
+                     *             "ph": 6.77704
+                     *           },
+                     *           {
+                     *             "t_min": 1100,
+                     *             "co2_mg_l": 21.745,
+                     *             "ph": 6.78588
+                     *           },
+                     *           {
+                     *             "t_min": 1110,
+                     *             "co2_mg_l": 21.3069,
+                     *             "ph": 6.79471
+                     *           },
+                     *           {
+                     *             "t_min": 1120,
+                     *             "co2_mg_l": 20.8779,
+                     *             "ph": 6.80354
+                     *           },
+                     *           {
+                     *             "t_min": 1130,
+                     *             "co2_mg_l": 20.4577,
+                     *             "ph": 6.81236
+                     *           },
+                     *           {
+                     *             "t_min": 1140,
+                     *             "co2_mg_l": 20.0463,
+                     *             "ph": 6.82117
+                     *           },
+                     *           {
+                     *             "t_min": 1150,
+                     *             "co2_mg_l": 19.6434,
+                     *             "ph": 6.82998
+                     *           },
+                     *           {
+                     *             "t_min": 1160,
+                     *             "co2_mg_l": 19.2488,
+                     *             "ph": 6.83878
+                     *           },
+                     *           {
+                     *             "t_min": 1170,
+                     *             "co2_mg_l": 18.8625,
+                     *             "ph": 6.84758
+                     *           },
+                     *           {
+                     *             "t_min": 1180,
+                     *             "co2_mg_l": 18.4841,
+                     *             "ph": 6.85637
+                     *           },
+                     *           {
+                     *             "t_min": 1190,
+                     *             "co2_mg_l": 18.1136,
+                     *             "ph": 6.86516
+                     *           },
+                     *           {
+                     *             "t_min": 1200,
+                     *             "co2_mg_l": 17.7508,
+                     *             "ph": 6.87394
+                     *           },
+                     *           {
+                     *             "t_min": 1210,
+                     *             "co2_mg_l": 17.3954,
+                     *             "ph": 6.88271
+                     *           },
+                     *           {
+                     *             "t_min": 1220,
+                     *             "co2_mg_l": 17.0475,
+                     *             "ph": 6.89148
+                     *           },
+                     *           {
+                     *             "t_min": 1230,
+                     *             "co2_mg_l": 16.7068,
+                     *             "ph": 6.90024
+                     *           },
+                     *           {
+                     *             "t_min": 1240,
+                     *             "co2_mg_l": 16.3731,
+                     *             "ph": 6.90899
+                     *           },
+                     *           {
+                     *             "t_min": 1250,
+                     *             "co2_mg_l": 16.0464,
+                     *             "ph": 6.91773
+                     *           },
+                     *           {
+                     *             "t_min": 1260,
+                     *             "co2_mg_l": 15.7264,
+                     *             "ph": 6.92647
+                     *           },
+                     *           {
+                     *             "t_min": 1270,
+                     *             "co2_mg_l": 15.4131,
+                     *             "ph": 6.9352
+                     *           },
+                     *           {
+                     *             "t_min": 1280,
+                     *             "co2_mg_l": 15.1062,
+                     *             "ph": 6.94392
+                     *           },
+                     *           {
+                     *             "t_min": 1290,
+                     *             "co2_mg_l": 14.8058,
+                     *             "ph": 6.95264
+                     *           },
+                     *           {
+                     *             "t_min": 1300,
+                     *             "co2_mg_l": 14.5115,
+                     *             "ph": 6.96135
+                     *           },
+                     *           {
+                     *             "t_min": 1310,
+                     *             "co2_mg_l": 14.2234,
+                     *             "ph": 6.97005
+                     *           },
+                     *           {
+                     *             "t_min": 1320,
+                     *             "co2_mg_l": 13.9412,
+                     *             "ph": 6.97874
+                     *           },
+                     *           {
+                     *             "t_min": 1330,
+                     *             "co2_mg_l": 13.6649,
+                     *             "ph": 6.98742
+                     *           },
+                     *           {
+                     *             "t_min": 1340,
+                     *             "co2_mg_l": 13.3943,
+                     *             "ph": 6.9961
+                     *           },
+                     *           {
+                     *             "t_min": 1350,
+                     *             "co2_mg_l": 13.1293,
+                     *             "ph": 7.00476
+                     *           },
+                     *           {
+                     *             "t_min": 1360,
+                     *             "co2_mg_l": 12.8698,
+                     *             "ph": 7.01342
+                     *           },
+                     *           {
+                     *             "t_min": 1370,
+                     *             "co2_mg_l": 12.6157,
+                     *             "ph": 7.02207
+                     *           },
+                     *           {
+                     *             "t_min": 1380,
+                     *             "co2_mg_l": 12.3669,
+                     *             "ph": 7.03071
+                     *           },
+                     *           {
+                     *             "t_min": 1390,
+                     *             "co2_mg_l": 12.1232,
+                     *             "ph": 7.03934
+                     *           },
+                     *           {
+                     *             "t_min": 1400,
+                     *             "co2_mg_l": 11.8846,
+                     *             "ph": 7.04797
+                     *           },
+                     *           {
+                     *             "t_min": 1410,
+                     *             "co2_mg_l": 11.6509,
+                     *             "ph": 7.05658
+                     *           },
+                     *           {
+                     *             "t_min": 1420,
+                     *             "co2_mg_l": 11.4221,
+                     *             "ph": 7.06518
+                     *           },
+                     *           {
+                     *             "t_min": 1430,
+                     *             "co2_mg_l": 11.198,
+                     *             "ph": 7.07377
+                     *           },
+                     *           {
+                     *             "t_min": 1440,
+                     *             "co2_mg_l": 10.9786,
+                     *             "ph": 7.08235
+                     *           }
+                     *         ]
+                     *       },
+                     *       "uncertainty": {
+                     *         "max_co2_low_mg_l": 18.1744,
+                     *         "max_co2_high_mg_l": 50.95
+                     *       },
+                     *       "cautions": [
+                     *         {
+                     *           "code": "unthrottled_feed",
+                     *           "severity": "danger",
+                     *           "message": "This feed is 4.5 times what holds 30 mg/L. With nothing to throttle it CO2 reaches 110 mg/L when the gas closes, and 170 if it never closes. That kills livestock: run it only behind a pH controller that is gated by the light and limits how long the valve stays open."
+                     *         },
+                     *         {
+                     *           "code": "limit_open_time",
+                     *           "severity": "warning",
+                     *           "message": "Limit how long the valve may stay open at a stretch to 130 min: the longest stretch expected is 84 min, and a probe that fails or falls dry would let 110 mg/L build up by the evening."
+                     *         },
+                     *         {
+                     *           "code": "livestock",
+                     *           "severity": "warning",
+                     *           "message": "CO2 may be as high as 51 mg/L (34000 µatm). Above 40 mg/L many fish and shrimp suffer. Give less gas or measure more exactly, aerate, and watch for gasping at the surface, fast breathing, fish lying still, shrimp fleeing the water."
+                     *         },
+                     *         {
+                     *           "code": "probe_error",
+                     *           "severity": "warning",
+                     *           "message": "The controller holds what its probe reads. A probe that is off by 0.1 changes CO2 by 26 %, by 0.3 it doubles or halves it: calibrate at tank temperature every month, and check with a drop checker."
+                     *         },
+                     *         {
+                     *           "code": "gate_by_light",
+                     *           "severity": "warning",
+                     *           "message": "At night the pH rises and a controller would dose until morning: switch its solenoid with the light's timer. The coil gets warm while the valve is open; leave it room to cool."
+                     *         },
+                     *         {
+                     *           "code": "mains_near_water",
+                     *           "severity": "warning",
+                     *           "message": "Mains equipment stands near water: give every cable a drip loop, put the circuit behind a residual-current device (30 mA), and unplug before you reach into the water."
+                     *         },
+                     *         {
+                     *           "code": "raise_slowly",
+                     *           "severity": "warning",
+                     *           "message": "Raise CO2 in small steps over several days, with the livestock watched for the first hours after each step. At the first sign of distress stop the gas and aerate."
+                     *         },
+                     *         {
+                     *           "code": "local_rules",
+                     *           "severity": "info",
+                     *           "message": "Local codes, the makers' manuals and licensed practice come first. This result informs; it replaces none of them."
+                     *         }
+                     *       ],
+                     *       "assumptions": [
+                     *         {
+                     *           "code": "exchange",
+                     *           "message": "A rippled surface trades gas at 5 cm/h (k600), right within a factor of 2: the tank loses 13 % of its excess CO2 an hour. Two pH readings in one night with the gas off replace this guess."
+                     *         },
+                     *         {
+                     *           "code": "efficiency",
+                     *           "message": "100 % of the gas dissolves with an inline reactor (97 % to 100 %)."
+                     *         },
+                     *         {
+                     *           "code": "plant_uptake",
+                     *           "message": "The plants take 1 mg/L an hour in light: 0.3 where they are sparse, 1 usual, 2 dense under strong light."
+                     *         },
+                     *         {
+                     *           "code": "well_mixed",
+                     *           "message": "The whole tank mixes at once, and its alkalinity stays the same while CO2 comes and goes. A cover that keeps CO2 over the water is not counted."
+                     *         },
+                     *         {
+                     *           "code": "rests_at_air",
+                     *           "message": "Without gas the tank rests at 0.61 mg/L, the balance with air of 425 ppm. Tanks with fish and rich soil rest at 2 to 4; give your own level if you know it."
+                     *         },
+                     *         {
+                     *           "code": "lags",
+                     *           "message": "The probe follows the water within 1 min, and gas held in hose and reactor goes on dissolving for 1 min after the valve closes (time constants). An old reactor may hold gas for several minutes."
+                     *         },
+                     *         {
+                     *           "code": "gate",
+                     *           "message": "The valve may open from 76 min before the lights until 60 min before they go off."
+                     *         }
+                     *       ],
+                     *       "method": {
+                     *         "name": "Simulation of the controller over a day",
+                     *         "version": "2026.12.1",
+                     *         "sources": [
+                     *           {
+                     *             "title": "Wanninkhof, Limnology and Oceanography: Methods 12:351-362",
+                     *             "year": 2014,
+                     *             "detail": "Table 1: Schmidt number of CO2 in fresh water, -2 to 40 °C"
+                     *           },
+                     *           {
+                     *             "title": "Jähne, Münnich, Bösinger, Dutzi, Huber & Libner, Journal of Geophysical Research 92(C2):1937-1949",
+                     *             "year": 1987,
+                     *             "detail": "Exponent of the Schmidt number: 2/3 on a calm surface, 1/2 on a rippled one"
+                     *           },
+                     *           {
+                     *             "title": "Cole & Caraco, Limnology and Oceanography 43:647-656",
+                     *             "year": 1998,
+                     *             "detail": "Gas transfer of a lake without wind: k600 about 2 cm/h"
+                     *           },
+                     *           {
+                     *             "title": "Engineering judgement, no publication",
+                     *             "year": 2026,
+                     *             "detail": "A value with its range that the person may replace by a measurement"
+                     *           },
+                     *           {
+                     *             "title": "Engineering judgement, no publication",
+                     *             "year": 2026,
+                     *             "detail": "A value with its range that the person may replace by a measurement"
+                     *           },
+                     *           {
+                     *             "title": "Plummer & Busenberg, Geochimica et Cosmochimica Acta 46:1011-1040",
+                     *             "year": 1982,
+                     *             "detail": "K1, K2 and Henry's constant of CO2, 0-90 °C"
+                     *           },
+                     *           {
+                     *             "title": "Weiss & Price, Marine Chemistry 8:347-359",
+                     *             "year": 1980,
+                     *             "detail": "Vapour pressure of water, eq. 10"
+                     *           },
+                     *           {
+                     *             "title": "Truesdell & Jones, Journal of Research of the U.S. Geological Survey 2:233-248",
+                     *             "year": 1974,
+                     *             "detail": "Activity coefficients and Debye-Hückel constants, up to 0.05 mol/L"
+                     *           },
+                     *           {
+                     *             "title": "Engineering judgement, no publication",
+                     *             "year": 2026,
+                     *             "detail": "A value with its range that the person may replace by a measurement"
+                     *           }
+                     *         ]
+                     *       },
+                     *       "input": {
+                     *         "volume_l": 180,
+                     *         "surface_area_m2": 0.4,
+                     *         "kh_dkh": 4,
+                     *         "temperature_c": 25,
+                     *         "air_co2_ppm": 425,
+                     *         "altitude_m": 0,
+                     *         "target_co2_mg_l": 30,
+                     *         "agitation": "rippled",
+                     *         "method": "inline_reactor",
+                     *         "plant_uptake_mg_l_h": 1,
+                     *         "close_before_lights_off_min": 60,
+                     *         "reach_fraction": 0.95,
+                     *         "feed_ratio": 4.5,
+                     *         "ph_error": 0.1,
+                     *         "kh_error_dkh": 0.5,
+                     *         "temperature_error_c": 0.5,
+                     *         "lights_on_h": 10,
+                     *         "hysteresis_ph": 0.1,
+                     *         "delay_min": 1,
+                     *         "probe_lag_min": 1
+                     *       }
+                     *     }
+                     */
+                    "application/json": {
+                        result: {
+                            /** @description CO2 fed, in mg/min */
+                            feed_mg_min: number;
+                            /** @description CO2 fed, as gas at 1 atm and the water's temperature, in mL/min */
+                            feed_ml_min: number;
+                            /** @description Feed over the hold feed */
+                            feed_ratio: number;
+                            /** @description Feed that keeps the target in light, in mg/min */
+                            hold_feed_mg_min: number;
+                            /** @description CO2 when the gas closes in the evening if nothing throttles this feed, in mg/L */
+                            uncontrolled_co2_mg_l: number;
+                            /** @description CO2 that this feed leads to if the gas never closes, in mg/L */
+                            uncontrolled_limit_co2_mg_l: number;
+                            /** @description Share of the time that the valve is open while the controller holds */
+                            duty_fraction: number;
+                            /** @description Cycles of the valve an hour while holding, in 1/h */
+                            cycles_per_h: number;
+                            /** @description Duty of a controller whose probe and feed answer at once */
+                            ideal_duty_fraction: number;
+                            /** @description Cycles an hour of a controller whose probe and feed answer at once, in 1/h */
+                            ideal_cycles_per_h: number;
+                            /** @description Times the solenoid moves a day, opening and closing */
+                            switches_per_day: number;
+                            /** @description Minutes a day that the valve is open, in min */
+                            valve_open_min: number;
+                            /** @description Highest CO2 of the day above that of the set-point, in mg/L */
+                            overshoot_mg_l: number;
+                            /** @description Highest CO2 of the day, in mg/L */
+                            max_co2_mg_l: number;
+                            hold_low_co2_mg_l: number | null;
+                            /** @description Lowest pH of the day, in pH */
+                            min_ph: number;
+                            /** @description CO2 used a day, in g/day */
+                            daily_use_g_day: number;
+                            /** @description pH at which the controller closes the gas, in pH */
+                            setpoint_ph: number;
+                            /** @description CO2 at the set-point, in mg/L */
+                            setpoint_co2_mg_l: number;
+                            /** @description Minutes before the lights to open the gas, in min */
+                            open_before_lights_min: number;
+                            /** @description Minutes before the lights go off that the gas closes, in min */
+                            close_before_lights_off_min: number;
+                            reached_after_min: number | null;
+                            /** @description CO2 when the lights come on, in mg/L */
+                            lights_on_co2_mg_l: number;
+                            series: {
+                                /** @description Minute of the series, in min */
+                                t_min: number;
+                                /** @description Free CO2 dissolved in the water, in mg/L */
+                                co2_mg_l: number;
+                                /** @description pH at the water's own temperature, in pH */
+                                ph: number;
+                            }[];
+                        };
+                        uncertainty: {
+                            /** @description Lower end of the highest CO2, in mg/L */
+                            max_co2_low_mg_l: number;
+                            /** @description Upper end of the highest CO2, in mg/L */
+                            max_co2_high_mg_l: number;
+                        };
+                        cautions: components["schemas"]["Caution"][];
+                        assumptions: components["schemas"]["Assumption"][];
+                        method: components["schemas"]["Method"];
+                        /** @description Your input with its defaults filled in */
+                        input: {
+                            [key: string]: unknown;
+                        };
+                    };
+                };
+            };
+            /** @description `key_in_url`: A key stands in the address. `malformed_json`: The body is not JSON. */
+            400: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `key_missing`: No key was sent. `key_unknown`: The key is not known. `key_revoked`: The key was revoked. `key_expired`: The key has expired. */
+            401: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `quota_reached`: The units of this period are used up. */
+            402: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `server_key_in_browser`: A server key was used from a browser. `origin_not_allowed`: The origin is not on the list. `address_not_allowed`: The network address is not on the list. `scope_missing`: The key lacks the scope. `account_suspended`: The account is suspended. */
+            403: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `not_found`: There is nothing here. */
+            404: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `method_not_allowed`: The method is not offered here. */
+            405: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `body_too_large`: The body is too large. */
+            413: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `media_type_unsupported`: The media type is not JSON. */
+            415: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `validation_failed`: The input is not valid. `out_of_domain`: The input is physically impossible or outside the method. */
+            422: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `rate_limited`: Too many calls. */
+            429: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `internal`: Something failed on our side. */
+            500: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `unavailable`: The service is resting for a moment. */
+            503: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+        };
+    };
+    gasCylinder: {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        requestBody: {
+            content: {
+                /**
+                 * @example {
+                 *       "daily_use_g_day": 11,
+                 *       "cylinder_mass_g": 2000,
+                 *       "refill_price": 28
+                 *     }
+                 */
+                "application/json": {
+                    /** @description CO2 used a day, in g/day */
+                    daily_use_g_day: number;
+                    /** @description CO2 in a full cylinder, in g */
+                    cylinder_mass_g?: number;
+                    name?: string;
+                    /** @description CO2 still in the cylinder, by weighing, in g */
+                    remaining_g?: number;
+                    /** @description CO2 in the full cylinder over its water capacity, 0.66 to 0.76, in kg/L */
+                    fill_ratio_kg_l?: number;
+                    /** @description Test pressure stamped on the cylinder, 190 or 250, in bar */
+                    test_pressure_bar?: number;
+                    /** @description Price of the cylinder with its first charge */
+                    price?: number;
+                    /** @description Price of a refill */
+                    refill_price?: number;
+                    /** @description Several to compare, in place of `cylinder_mass_g` */
+                    cylinders?: {
+                        /** @description CO2 in a full cylinder, in g */
+                        cylinder_mass_g: number;
+                        name?: string;
+                        /** @description CO2 still in the cylinder, by weighing, in g */
+                        remaining_g?: number;
+                        /** @description CO2 in the full cylinder over its water capacity, 0.66 to 0.76, in kg/L */
+                        fill_ratio_kg_l?: number;
+                        /** @description Test pressure stamped on the cylinder, 190 or 250, in bar */
+                        test_pressure_bar?: number;
+                        /** @description Price of the cylinder with its first charge */
+                        price?: number;
+                        /** @description Price of a refill */
+                        refill_price?: number;
+                    }[];
+                    /**
+                     * @description Share of the charge that reaches the tank; the rest is leaks, purging and the last gas
+                     * @default 0.95
+                     */
+                    usable_fraction?: number;
+                    /**
+                     * @description Temperature of the cylinder, in °C
+                     * @default 22
+                     */
+                    ambient_c?: number;
+                    /**
+                     * @description Pressure below which the reducer no longer regulates, in bar
+                     * @default 6
+                     */
+                    cut_off_bar_abs?: number;
+                };
+            };
+        };
+        responses: {
+            /** @description The answer. */
+            200: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    /**
+                     * @example {
+                     *       "result": {
+                     *         "name": null,
+                     *         "cylinder_mass_g": 2000,
+                     *         "days": 172.727,
+                     *         "days_low": 145.455,
+                     *         "days_high": 179.126,
+                     *         "refills_per_year": 2.11461,
+                     *         "cost_per_month": 4.93408,
+                     *         "first_year_cost": null,
+                     *         "usable_g": 1900,
+                     *         "days_left": 172.727,
+                     *         "water_capacity_l": 2.66667,
+                     *         "residual_g": 29.6109,
+                     *         "liquid_gone_g": 562.878,
+                     *         "pressure_bar_abs": 60.0322,
+                     *         "phase": "two_phase",
+                     *         "liquid_present": true,
+                     *         "fill_ratio_kg_l": 0.75,
+                     *         "max_fill_ratio_kg_l": 0.76,
+                     *         "fill_ratio_ok": true,
+                     *         "liquid_full_c": 22.0642,
+                     *         "cylinders": [
+                     *           {
+                     *             "name": null,
+                     *             "cylinder_mass_g": 2000,
+                     *             "days": 172.727,
+                     *             "days_low": 145.455,
+                     *             "days_high": 179.126,
+                     *             "refills_per_year": 2.11461,
+                     *             "cost_per_month": 4.93408,
+                     *             "first_year_cost": null,
+                     *             "usable_g": 1900,
+                     *             "days_left": 172.727,
+                     *             "water_capacity_l": 2.66667,
+                     *             "residual_g": 29.6109,
+                     *             "liquid_gone_g": 562.878,
+                     *             "pressure_bar_abs": 60.0322,
+                     *             "phase": "two_phase",
+                     *             "liquid_present": true,
+                     *             "fill_ratio_kg_l": 0.75,
+                     *             "max_fill_ratio_kg_l": 0.76,
+                     *             "fill_ratio_ok": true,
+                     *             "liquid_full_c": 22.0642
+                     *           }
+                     *         ]
+                     *       },
+                     *       "uncertainty": {
+                     *         "days_low": 145.455,
+                     *         "days_high": 179.126
+                     *       },
+                     *       "cautions": [
+                     *         {
+                     *           "code": "gauge_is_flat",
+                     *           "severity": "info",
+                     *           "message": "The gauge of the cylinder of 2000 g stays the same until 560 g are left (28 %), and falls only then. Weigh the cylinder to know what is in it."
+                     *         },
+                     *         {
+                     *           "code": "end_of_charge",
+                     *           "severity": "warning",
+                     *           "message": "When the gauge falls, refill soon: the outlet pressure of a single-stage reducer rises as the cylinder empties and can send a surge of gas into the tank."
+                     *         },
+                     *         {
+                     *           "code": "cylinder_secured",
+                     *           "severity": "danger",
+                     *           "message": "Stand the cylinder upright and fasten it, valve protected. Never heat it, and keep it below 50 °C. Only a licensed filler may fill and test it; a disposable cartridge is never refilled."
+                     *         },
+                     *         {
+                     *           "code": "room_ventilation",
+                     *           "severity": "warning",
+                     *           "message": "CO2 is heavier than air and gathers in cabinets and cellars. Ventilate; 5,000 ppm is the limit over a working day, 30,000 ppm for minutes. If you feel short of breath or dizzy, leave and let in air from outside."
+                     *         },
+                     *         {
+                     *           "code": "local_rules",
+                     *           "severity": "info",
+                     *           "message": "Local codes, the makers' manuals and licensed practice come first. This result informs; it replaces none of them."
+                     *         }
+                     *       ],
+                     *       "assumptions": [
+                     *         {
+                     *           "code": "usable_share",
+                     *           "message": "95 % of the charge reaches the tank, less where the gas left at 6 bar weighs more than the rest. With a fifth lost to leaks and purging a charge lasts `days_low`, with none lost `days_high`."
+                     *         },
+                     *         {
+                     *           "code": "fill",
+                     *           "message": "Where the cylinder's stamps were not given: filled to 0.75 kg per litre of its water capacity, tested at 250 bar."
+                     *         }
+                     *       ],
+                     *       "method": {
+                     *         "name": "Contents and pressure of a CO2 cylinder",
+                     *         "version": "2026.12.1",
+                     *         "sources": [
+                     *           {
+                     *             "title": "Span & Wagner, Journal of Physical and Chemical Reference Data 25:1509-1596",
+                     *             "year": 1996,
+                     *             "detail": "Equation of state of CO2; saturation line, eqs 3.13 to 3.15"
+                     *           },
+                     *           {
+                     *             "title": "Tsonopoulos, AIChE Journal 20:263-272 (after Pitzer & Curl)",
+                     *             "year": 1974,
+                     *             "detail": "Second virial coefficient from critical constants"
+                     *           },
+                     *           {
+                     *             "title": "ADR, 4.1.4.1 packing instruction P200",
+                     *             "year": 2025,
+                     *             "detail": "UN 1013: filling ratio 0.68 kg/L at a test pressure of 190 bar, 0.76 kg/L at 250 bar"
+                     *           },
+                     *           {
+                     *             "title": "49 CFR 173.304a",
+                     *             "year": 2024,
+                     *             "detail": "Filling density of carbon dioxide cylinders, 68 % of the water capacity"
+                     *           }
+                     *         ]
+                     *       },
+                     *       "input": {
+                     *         "daily_use_g_day": 11,
+                     *         "cylinder_mass_g": 2000,
+                     *         "refill_price": 28,
+                     *         "usable_fraction": 0.95,
+                     *         "ambient_c": 22,
+                     *         "cut_off_bar_abs": 6
+                     *       }
+                     *     }
+                     */
+                    "application/json": {
+                        result: {
+                            name: string | null;
+                            /** @description CO2 in a full cylinder, in g */
+                            cylinder_mass_g: number;
+                            /** @description Days that a charge lasts, in days */
+                            days: number;
+                            /** @description Days that a charge lasts, in days */
+                            days_low: number;
+                            /** @description Days that a charge lasts, in days */
+                            days_high: number;
+                            /** @description Refills a year, in 1/year */
+                            refills_per_year: number;
+                            cost_per_month: number | null;
+                            first_year_cost: number | null;
+                            /** @description CO2 that a charge gives to the tank, in g */
+                            usable_g: number;
+                            /** @description Days that a charge lasts, in days */
+                            days_left: number;
+                            /** @description Absolute pressure in the cylinder, in bar */
+                            pressure_bar_abs: number;
+                            /** @enum {string} */
+                            phase: "two_phase" | "liquid_full" | "gas" | "supercritical";
+                            liquid_present: boolean;
+                            /** @description CO2 in the full cylinder over its water capacity, 0.66 to 0.76, in kg/L */
+                            fill_ratio_kg_l: number;
+                            /** @description Largest fill ratio allowed at the cylinder's test pressure, in kg/L */
+                            max_fill_ratio_kg_l: number;
+                            fill_ratio_ok: boolean;
+                            liquid_full_c: number | null;
+                            /** @description Inner volume of the cylinder, in L */
+                            water_capacity_l: number;
+                            /** @description CO2 that stays in at the cut-off pressure, in g */
+                            residual_g: number;
+                            liquid_gone_g: number | null;
+                            cylinders: {
+                                name: string | null;
+                                /** @description CO2 in a full cylinder, in g */
+                                cylinder_mass_g: number;
+                                /** @description Days that a charge lasts, in days */
+                                days: number;
+                                /** @description Days that a charge lasts, in days */
+                                days_low: number;
+                                /** @description Days that a charge lasts, in days */
+                                days_high: number;
+                                /** @description Refills a year, in 1/year */
+                                refills_per_year: number;
+                                cost_per_month: number | null;
+                                first_year_cost: number | null;
+                                /** @description CO2 that a charge gives to the tank, in g */
+                                usable_g: number;
+                                /** @description Days that a charge lasts, in days */
+                                days_left: number;
+                                /** @description Absolute pressure in the cylinder, in bar */
+                                pressure_bar_abs: number;
+                                /** @enum {string} */
+                                phase: "two_phase" | "liquid_full" | "gas" | "supercritical";
+                                liquid_present: boolean;
+                                /** @description CO2 in the full cylinder over its water capacity, 0.66 to 0.76, in kg/L */
+                                fill_ratio_kg_l: number;
+                                /** @description Largest fill ratio allowed at the cylinder's test pressure, in kg/L */
+                                max_fill_ratio_kg_l: number;
+                                fill_ratio_ok: boolean;
+                                liquid_full_c: number | null;
+                                /** @description Inner volume of the cylinder, in L */
+                                water_capacity_l: number;
+                                /** @description CO2 that stays in at the cut-off pressure, in g */
+                                residual_g: number;
+                                liquid_gone_g: number | null;
+                            }[];
+                        };
+                        uncertainty: {
+                            /** @description Days that a charge lasts, in days */
+                            days_low: number;
+                            /** @description Days that a charge lasts, in days */
+                            days_high: number;
+                        };
+                        cautions: components["schemas"]["Caution"][];
+                        assumptions: components["schemas"]["Assumption"][];
+                        method: components["schemas"]["Method"];
+                        /** @description Your input with its defaults filled in */
+                        input: {
+                            [key: string]: unknown;
+                        };
+                    };
+                };
+            };
+            /** @description `key_in_url`: A key stands in the address. `malformed_json`: The body is not JSON. */
+            400: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `key_missing`: No key was sent. `key_unknown`: The key is not known. `key_revoked`: The key was revoked. `key_expired`: The key has expired. */
+            401: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `quota_reached`: The units of this period are used up. */
+            402: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `server_key_in_browser`: A server key was used from a browser. `origin_not_allowed`: The origin is not on the list. `address_not_allowed`: The network address is not on the list. `scope_missing`: The key lacks the scope. `account_suspended`: The account is suspended. */
+            403: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `not_found`: There is nothing here. */
+            404: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `method_not_allowed`: The method is not offered here. */
+            405: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `body_too_large`: The body is too large. */
+            413: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `media_type_unsupported`: The media type is not JSON. */
+            415: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `validation_failed`: The input is not valid. `out_of_domain`: The input is physically impossible or outside the method. */
+            422: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `rate_limited`: Too many calls. */
+            429: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `internal`: Something failed on our side. */
+            500: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `unavailable`: The service is resting for a moment. */
+            503: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+        };
+    };
+    gasBubbleRate: {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        requestBody: {
+            content: {
+                /**
+                 * @example {
+                 *       "bubbles_per_s": 2
+                 *     }
+                 */
+                "application/json": {
+                    /**
+                     * @description Inner diameter of the tube in the bubble counter, in mm
+                     * @default 2.5
+                     */
+                    outlet_diameter_mm?: number;
+                    /** @description Bubbles a second, in 1/s */
+                    bubbles_per_s?: number;
+                    /** @description CO2 fed, as gas at 1 atm and the water's temperature, in mL/min */
+                    feed_ml_min?: number;
+                    /** @description CO2 fed, in mg/min */
+                    feed_mg_min?: number;
+                    /**
+                     * @description Water temperature, in °C
+                     * @default 25
+                     */
+                    temperature_c?: number;
+                    /**
+                     * @description Gauge pressure in the bubble counter: what the reactor or diffuser pushes back, in bar
+                     * @default 0
+                     */
+                    counter_pressure_bar?: number;
+                };
+            };
+        };
+        responses: {
+            /** @description The answer. */
+            200: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    /**
+                     * @example {
+                     *       "result": {
+                     *         "bubbles_per_s": 2,
+                     *         "feed_ml_min": 4.85584,
+                     *         "feed_mg_min": 8.77931,
+                     *         "bubble_volume_ul": 40.4653,
+                     *         "mg_per_bubble": 0.0731609,
+                     *         "syringe_10_ml_s": 123.563
+                     *       },
+                     *       "uncertainty": {
+                     *         "feed_low_mg_min": 6.58448,
+                     *         "feed_high_mg_min": 10.9741,
+                     *         "bubbles_per_s_low": 2,
+                     *         "bubbles_per_s_high": 2
+                     *       },
+                     *       "cautions": [
+                     *         {
+                     *           "code": "bubbles_do_not_compare",
+                     *           "severity": "warning",
+                     *           "message": "A bubble here carries 0.073 mg; in a counter at 2 bar the same bubble carries 0.22 mg, 3 times that of one at no pressure. Never carry a bubble rate over from another system."
+                     *         },
+                     *         {
+                     *           "code": "starting_point",
+                     *           "severity": "info",
+                     *           "message": "Counters differ by 25 % either way: start here and trim by the drop checker over days. To measure instead, collect 10 mL under water in a syringe: it takes 120 s."
+                     *         }
+                     *       ],
+                     *       "assumptions": [
+                     *         {
+                     *           "code": "counter_liquid",
+                     *           "message": "The counter is filled with water and its tube points up or sideways. Oil or glycol halve the bubble, and a pointed or soft tube changes it."
+                     *         },
+                     *         {
+                     *           "code": "counter_pressure",
+                     *           "message": "The gas in the counter stands at 0 bar above the air. Behind a needle valve that is what reactor or diffuser push back, about 0.1 to 0.3 bar for a reactor and 2 to 2.5 for a diffuser, not what the reducer is set to."
+                     *         }
+                     *       ],
+                     *       "method": {
+                     *         "name": "Bubble volume from the tube, mass from the gas's density",
+                     *         "version": "2026.12.1",
+                     *         "sources": [
+                     *           {
+                     *             "title": "Tate, Philosophical Magazine 27:176-180",
+                     *             "year": 1864,
+                     *             "detail": "Volume of a bubble or drop that leaves a tube"
+                     *           },
+                     *           {
+                     *             "title": "Lando & Oakley, Journal of Colloid and Interface Science 25:526-530",
+                     *             "year": 1967,
+                     *             "detail": "Polynomial of the Harkins and Brown correction, 0.3 < R/V^(1/3) < 1.2"
+                     *           },
+                     *           {
+                     *             "title": "Tsonopoulos, AIChE Journal 20:263-272 (after Pitzer & Curl)",
+                     *             "year": 1974,
+                     *             "detail": "Second virial coefficient from critical constants"
+                     *           },
+                     *           {
+                     *             "title": "IAPWS R1-76, Release on Surface Tension of Ordinary Water Substance",
+                     *             "year": 2014,
+                     *             "detail": "Surface tension of water, revision of 2014"
+                     *           },
+                     *           {
+                     *             "title": "Kell, Journal of Chemical and Engineering Data 20:97-105",
+                     *             "year": 1975,
+                     *             "detail": "Density of water, eq. 16"
+                     *           }
+                     *         ]
+                     *       },
+                     *       "input": {
+                     *         "outlet_diameter_mm": 2.5,
+                     *         "bubbles_per_s": 2,
+                     *         "temperature_c": 25,
+                     *         "counter_pressure_bar": 0
+                     *       }
+                     *     }
+                     */
+                    "application/json": {
+                        result: {
+                            /** @description Bubbles a second, in 1/s */
+                            bubbles_per_s: number;
+                            /** @description CO2 fed, as gas at 1 atm and the water's temperature, in mL/min */
+                            feed_ml_min: number;
+                            /** @description CO2 fed, in mg/min */
+                            feed_mg_min: number;
+                            /** @description Volume of a bubble, in µL */
+                            bubble_volume_ul: number;
+                            /** @description CO2 in a bubble, in mg */
+                            mg_per_bubble: number;
+                            /** @description Seconds in which 10 mL of gas collect in a syringe at the water's surface, in s */
+                            syringe_10_ml_s: number;
+                        };
+                        uncertainty: {
+                            /** @description Lower end of the feed, in mg/min */
+                            feed_low_mg_min: number;
+                            /** @description Upper end of the feed, in mg/min */
+                            feed_high_mg_min: number;
+                            /** @description Lower end of the bubble rate, in 1/s */
+                            bubbles_per_s_low: number;
+                            /** @description Upper end of the bubble rate, in 1/s */
+                            bubbles_per_s_high: number;
+                        };
+                        cautions: components["schemas"]["Caution"][];
+                        assumptions: components["schemas"]["Assumption"][];
+                        method: components["schemas"]["Method"];
+                        /** @description Your input with its defaults filled in */
+                        input: {
+                            [key: string]: unknown;
+                        };
+                    };
+                };
+            };
+            /** @description `key_in_url`: A key stands in the address. `malformed_json`: The body is not JSON. */
+            400: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `key_missing`: No key was sent. `key_unknown`: The key is not known. `key_revoked`: The key was revoked. `key_expired`: The key has expired. */
+            401: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `quota_reached`: The units of this period are used up. */
+            402: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `server_key_in_browser`: A server key was used from a browser. `origin_not_allowed`: The origin is not on the list. `address_not_allowed`: The network address is not on the list. `scope_missing`: The key lacks the scope. `account_suspended`: The account is suspended. */
+            403: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `not_found`: There is nothing here. */
+            404: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `method_not_allowed`: The method is not offered here. */
+            405: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `body_too_large`: The body is too large. */
+            413: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `media_type_unsupported`: The media type is not JSON. */
+            415: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `validation_failed`: The input is not valid. `out_of_domain`: The input is physically impossible or outside the method. */
+            422: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `rate_limited`: Too many calls. */
+            429: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `internal`: Something failed on our side. */
+            500: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `unavailable`: The service is resting for a moment. */
+            503: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+        };
+    };
+    gasWorkingPressure: {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        requestBody: {
+            content: {
+                /**
+                 * @example {
+                 *       "method": "inline_reactor"
+                 *     }
+                 */
+                "application/json": {
+                    /**
+                     * @description How the gas gets into the water
+                     * @default inline_reactor
+                     * @enum {string}
+                     */
+                    method?: "inline_reactor" | "diffuser" | "inline_diffuser";
+                    /**
+                     * @description Depth of water above where the gas goes in, in m
+                     * @default 0.4
+                     */
+                    depth_m?: number;
+                    /**
+                     * @description Cracking pressure of the check valve, 0.05 to 0.35, in bar
+                     * @default 0.15
+                     */
+                    check_valve_bar?: number;
+                    /**
+                     * @description Length of the gas line, in m
+                     * @default 2
+                     */
+                    line_length_m?: number;
+                    /**
+                     * @description Inner diameter of the gas line, in mm
+                     * @default 2.5
+                     */
+                    line_diameter_mm?: number;
+                    /** @description Largest pores of the ceramic or membrane, in µm */
+                    pore_diameter_um?: number;
+                    /** @description CO2 fed, in mg/min */
+                    feed_mg_min?: number;
+                    /** @description What the reducer is set to, in bar */
+                    setting_bar?: number;
+                };
+            };
+        };
+        responses: {
+            /** @description The answer. */
+            200: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    /**
+                     * @example {
+                     *       "result": {
+                     *         "working_pressure_bar": 0.839283,
+                     *         "low_bar": 0.689283,
+                     *         "high_bar": 1.08928,
+                     *         "verdict": "sufficient",
+                     *         "element_bar": 0.15,
+                     *         "water_bar": 0.0391107,
+                     *         "check_valve_bar": 0.15,
+                     *         "line_bar": 0.000171917
+                     *       },
+                     *       "uncertainty": {},
+                     *       "cautions": [
+                     *         {
+                     *           "code": "order_of_parts",
+                     *           "severity": "info",
+                     *           "message": "From the cylinder on: reducer, solenoid, needle valve, bubble counter, check valve, then reactor or diffuser. Raise the pressure slowly with the needle valve closed."
+                     *         },
+                     *         {
+                     *           "code": "check_valve",
+                     *           "severity": "warning",
+                     *           "message": "Put a check valve in the gas line close to the water, and replace it when it no longer holds: without gas, pump pressure and siphon push water back to the solenoid and the reducer."
+                     *         },
+                     *         {
+                     *           "code": "cylinder_secured",
+                     *           "severity": "danger",
+                     *           "message": "Stand the cylinder upright and fasten it, valve protected. Never heat it, and keep it below 50 °C. Only a licensed filler may fill and test it; a disposable cartridge is never refilled."
+                     *         },
+                     *         {
+                     *           "code": "local_rules",
+                     *           "severity": "info",
+                     *           "message": "Local codes, the makers' manuals and licensed practice come first. This result informs; it replaces none of them."
+                     *         }
+                     *       ],
+                     *       "assumptions": [
+                     *         {
+                     *           "code": "element",
+                     *           "message": "For an inline reactor 0.1 to 0.2 bar are usual."
+                     *         },
+                     *         {
+                     *           "code": "margin",
+                     *           "message": "0.5 bar are left to drop over the needle valve, so that it regulates steadily. Check valves open at 0.05 to 0.35 bar."
+                     *         }
+                     *       ],
+                     *       "method": {
+                     *         "name": "Sum of the pressures along the gas line",
+                     *         "version": "2026.12.1",
+                     *         "sources": [
+                     *           {
+                     *             "title": "Young 1805 and Laplace 1806, as in de Gennes, Brochard-Wyart & Quéré, Capillarity and Wetting Phenomena",
+                     *             "year": 2004,
+                     *             "detail": "Pressure that opens a pore under water: 4σ/d"
+                     *           },
+                     *           {
+                     *             "title": "Hagen 1839 and Poiseuille 1840, laminar flow in a tube",
+                     *             "year": 1840,
+                     *             "detail": "f = 64/Re, exact for developed laminar flow"
+                     *           },
+                     *           {
+                     *             "title": "IAPWS R1-76, Release on Surface Tension of Ordinary Water Substance",
+                     *             "year": 2014,
+                     *             "detail": "Surface tension of water, revision of 2014"
+                     *           },
+                     *           {
+                     *             "title": "Engineering judgement, no publication",
+                     *             "year": 2026,
+                     *             "detail": "A value with its range that the person may replace by a measurement"
+                     *           }
+                     *         ]
+                     *       },
+                     *       "input": {
+                     *         "method": "inline_reactor",
+                     *         "depth_m": 0.4,
+                     *         "check_valve_bar": 0.15,
+                     *         "line_length_m": 2,
+                     *         "line_diameter_mm": 2.5
+                     *       }
+                     *     }
+                     */
+                    "application/json": {
+                        result: {
+                            /** @description Pressure to set the reducer to, in bar */
+                            working_pressure_bar: number;
+                            /** @description Lower end of the pressure to expect, in bar */
+                            low_bar: number;
+                            /** @description Upper end of the pressure to expect, in bar */
+                            high_bar: number;
+                            /**
+                             * @description How the setting, or the recommended one, stands to what is needed
+                             * @enum {string}
+                             */
+                            verdict: "too_low" | "unsteady" | "sufficient" | "hard_to_trim" | "check_hose";
+                            /** @description Pressure that the reactor or the diffuser itself asks for, in bar */
+                            element_bar: number;
+                            /** @description Pressure of the water above the outlet, in bar */
+                            water_bar: number;
+                            /** @description Cracking pressure of the check valve, 0.05 to 0.35, in bar */
+                            check_valve_bar: number;
+                            /** @description Pressure lost along the gas line, in bar */
+                            line_bar: number;
+                        };
+                        uncertainty: Record<string, never>;
+                        cautions: components["schemas"]["Caution"][];
+                        assumptions: components["schemas"]["Assumption"][];
+                        method: components["schemas"]["Method"];
+                        /** @description Your input with its defaults filled in */
+                        input: {
+                            [key: string]: unknown;
+                        };
+                    };
+                };
+            };
+            /** @description `key_in_url`: A key stands in the address. `malformed_json`: The body is not JSON. */
+            400: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `key_missing`: No key was sent. `key_unknown`: The key is not known. `key_revoked`: The key was revoked. `key_expired`: The key has expired. */
+            401: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `quota_reached`: The units of this period are used up. */
+            402: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `server_key_in_browser`: A server key was used from a browser. `origin_not_allowed`: The origin is not on the list. `address_not_allowed`: The network address is not on the list. `scope_missing`: The key lacks the scope. `account_suspended`: The account is suspended. */
+            403: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `not_found`: There is nothing here. */
+            404: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `method_not_allowed`: The method is not offered here. */
+            405: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `body_too_large`: The body is too large. */
+            413: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `media_type_unsupported`: The media type is not JSON. */
+            415: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `validation_failed`: The input is not valid. `out_of_domain`: The input is physically impossible or outside the method. */
+            422: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `rate_limited`: Too many calls. */
+            429: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `internal`: Something failed on our side. */
+            500: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `unavailable`: The service is resting for a moment. */
+            503: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+        };
+    };
+    gasRoomSafety: {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        requestBody: {
+            content: {
+                /**
+                 * @example {
+                 *       "cylinder_mass_g": 2000,
+                 *       "room_volume_m3": 30
+                 *     }
+                 */
+                "application/json": {
+                    /** @description CO2 in a full cylinder, in g */
+                    cylinder_mass_g: number;
+                    /** @description Volume of the room, in m³ */
+                    room_volume_m3?: number;
+                    /** @description Length of the room, in m */
+                    room_length_m?: number;
+                    /** @description Width of the room, in m */
+                    room_width_m?: number;
+                    /** @description Height of the room, in m */
+                    room_height_m?: number;
+                    /**
+                     * @description How often the room's air changes an hour: 0.2 tight, 0.5 usual, 2 open window, in 1/h
+                     * @default 0.5
+                     */
+                    air_changes_per_h?: number;
+                    /**
+                     * @description Temperature of the room, in °C
+                     * @default 20
+                     */
+                    room_c?: number;
+                    /**
+                     * @description CO2 in the room before the release, in ppm
+                     * @default 425
+                     */
+                    background_ppm?: number;
+                    /** @description CO2 leaking into the room, in g/h */
+                    leak_g_h?: number;
+                    /** @description CO2 used a day, in g/day */
+                    daily_use_g_day?: number;
+                };
+            };
+        };
+        responses: {
+            /** @description The answer. */
+            200: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    /**
+                     * @example {
+                     *       "result": {
+                     *         "peak_ppm": 36005.3,
+                     *         "hours_above_5000_ppm": 4.10237,
+                     *         "verdict": "leave",
+                     *         "mean_8h_ppm": 9157.15,
+                     *         "gas_m3": 1.08733,
+                     *         "room_volume_m3": 30,
+                     *         "leak_steady_ppm": null,
+                     *         "dosing_ppm": null
+                     *       },
+                     *       "uncertainty": {
+                     *         "hours_above_low_h": 2.05118,
+                     *         "hours_above_high_h": 8.20474
+                     *       },
+                     *       "cautions": [
+                     *         {
+                     *           "code": "full_release",
+                     *           "severity": "danger",
+                     *           "message": "If 2000 g escape at once the room holds 36000 ppm, above the 30,000 ppm that are bearable for minutes. Leave, let in air from outside, do not go back in."
+                     *         },
+                     *         {
+                     *           "code": "pools_low",
+                     *           "severity": "warning",
+                     *           "message": "CO2 is one and a half times as heavy as air: near the floor, in a cabinet or a cellar it is many times what a mixed room holds. Children and animals breathe there first. Put a detector low."
+                     *         },
+                     *         {
+                     *           "code": "room_ventilation",
+                     *           "severity": "warning",
+                     *           "message": "CO2 is heavier than air and gathers in cabinets and cellars. Ventilate; 5,000 ppm is the limit over a working day, 30,000 ppm for minutes. If you feel short of breath or dizzy, leave and let in air from outside."
+                     *         },
+                     *         {
+                     *           "code": "cylinder_secured",
+                     *           "severity": "danger",
+                     *           "message": "Stand the cylinder upright and fasten it, valve protected. Never heat it, and keep it below 50 °C. Only a licensed filler may fill and test it; a disposable cartridge is never refilled."
+                     *         },
+                     *         {
+                     *           "code": "local_rules",
+                     *           "severity": "info",
+                     *           "message": "Local codes, the makers' manuals and licensed practice come first. This result informs; it replaces none of them."
+                     *         }
+                     *       ],
+                     *       "assumptions": [
+                     *         {
+                     *           "code": "well_mixed_room",
+                     *           "message": "The whole charge escapes at once and mixes with 30 m³ of air, which changes 0.5 times an hour (0.2 a tight home, 0.5 usual, 2 with a window open)."
+                     *         }
+                     *       ],
+                     *       "method": {
+                     *         "name": "Well-mixed room",
+                     *         "version": "2026.12.1",
+                     *         "sources": [
+                     *           {
+                     *             "title": "Tsonopoulos, AIChE Journal 20:263-272 (after Pitzer & Curl)",
+                     *             "year": 1974,
+                     *             "detail": "Second virial coefficient from critical constants"
+                     *           },
+                     *           {
+                     *             "title": "NIOSH Pocket Guide to Chemical Hazards, carbon dioxide",
+                     *             "year": 2019,
+                     *             "detail": "REL 5,000 ppm over 8 h, short term 30,000 ppm, immediately dangerous 40,000 ppm"
+                     *           },
+                     *           {
+                     *             "title": "Commission Directive 2006/15/EC",
+                     *             "year": 2006,
+                     *             "detail": "Indicative occupational exposure limit of carbon dioxide, 5,000 ppm (9,000 mg/m³) over 8 h"
+                     *           },
+                     *           {
+                     *             "title": "Engineering judgement, no publication",
+                     *             "year": 2026,
+                     *             "detail": "A value with its range that the person may replace by a measurement"
+                     *           }
+                     *         ]
+                     *       },
+                     *       "input": {
+                     *         "cylinder_mass_g": 2000,
+                     *         "room_volume_m3": 30,
+                     *         "air_changes_per_h": 0.5,
+                     *         "room_c": 20,
+                     *         "background_ppm": 425
+                     *       }
+                     *     }
+                     */
+                    "application/json": {
+                        result: {
+                            /** @description CO2 after the whole charge is released, in ppm */
+                            peak_ppm: number;
+                            hours_above_5000_ppm: number | null;
+                            /** @enum {string} */
+                            verdict: "ok" | "ventilate" | "leave" | "life_danger";
+                            /** @description Mean over the 8 h after the release, in ppm */
+                            mean_8h_ppm: number;
+                            /** @description Volume of the cylinder's charge as gas, in m³ */
+                            gas_m3: number;
+                            /** @description Volume of the room, in m³ */
+                            room_volume_m3: number;
+                            leak_steady_ppm: number | null;
+                            dosing_ppm: number | null;
+                        };
+                        uncertainty: {
+                            hours_above_low_h: number | null;
+                            hours_above_high_h: number | null;
+                        };
+                        cautions: components["schemas"]["Caution"][];
+                        assumptions: components["schemas"]["Assumption"][];
+                        method: components["schemas"]["Method"];
+                        /** @description Your input with its defaults filled in */
+                        input: {
+                            [key: string]: unknown;
+                        };
+                    };
+                };
+            };
+            /** @description `key_in_url`: A key stands in the address. `malformed_json`: The body is not JSON. */
+            400: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `key_missing`: No key was sent. `key_unknown`: The key is not known. `key_revoked`: The key was revoked. `key_expired`: The key has expired. */
+            401: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `quota_reached`: The units of this period are used up. */
+            402: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `server_key_in_browser`: A server key was used from a browser. `origin_not_allowed`: The origin is not on the list. `address_not_allowed`: The network address is not on the list. `scope_missing`: The key lacks the scope. `account_suspended`: The account is suspended. */
+            403: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `not_found`: There is nothing here. */
+            404: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `method_not_allowed`: The method is not offered here. */
+            405: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `body_too_large`: The body is too large. */
+            413: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `media_type_unsupported`: The media type is not JSON. */
+            415: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `validation_failed`: The input is not valid. `out_of_domain`: The input is physically impossible or outside the method. */
+            422: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `rate_limited`: Too many calls. */
+            429: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `internal`: Something failed on our side. */
+            500: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `unavailable`: The service is resting for a moment. */
+            503: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+        };
+    };
     batch: {
         parameters: {
             query?: never;
@@ -2888,6 +7279,1510 @@ export interface operations {
             };
             /** @description `method_not_allowed`: The method is not offered here. */
             405: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `validation_failed`: The input is not valid. */
+            422: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `rate_limited`: Too many calls. */
+            429: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `internal`: Something failed on our side. */
+            500: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `unavailable`: The service is resting for a moment. */
+            503: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+        };
+    };
+    listWebhooks: {
+        parameters: {
+            query?: {
+                /** @description Most items of a page */
+                limit?: number;
+                /** @description `next_cursor` of the page before; absent for the first page */
+                cursor?: string;
+            };
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        requestBody?: never;
+        responses: {
+            /** @description The answer. */
+            200: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    /**
+                     * @example {
+                     *       "data": [
+                     *         {
+                     *           "id": "hook_01kbc0x7qzf0ra2w6v8n4m3h5t",
+                     *           "url": "https://shop.example/hooks/tarnwright",
+                     *           "events": [
+                     *             "report.created",
+                     *             "key.revoked"
+                     *           ],
+                     *           "disabled_at": null,
+                     *           "disabled_reason": null,
+                     *           "created_at": "2026-12-01T09:00:00.000Z",
+                     *           "updated_at": "2026-12-01T09:00:00.000Z"
+                     *         }
+                     *       ],
+                     *       "next_cursor": null
+                     *     }
+                     */
+                    "application/json": {
+                        data: components["schemas"]["WebhookEndpoint"][];
+                        /** @description For the next page; null on the last */
+                        next_cursor: string | null;
+                    };
+                };
+            };
+            /** @description `key_in_url`: A key stands in the address. */
+            400: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `key_missing`: No key was sent. `key_unknown`: The key is not known. `key_revoked`: The key was revoked. `key_expired`: The key has expired. */
+            401: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `server_key_in_browser`: A server key was used from a browser. `origin_not_allowed`: The origin is not on the list. `address_not_allowed`: The network address is not on the list. `scope_missing`: The key lacks the scope. `account_suspended`: The account is suspended. */
+            403: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `not_found`: There is nothing here. */
+            404: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `method_not_allowed`: The method is not offered here. */
+            405: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `validation_failed`: The input is not valid. */
+            422: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `rate_limited`: Too many calls. */
+            429: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `internal`: Something failed on our side. */
+            500: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `unavailable`: The service is resting for a moment. */
+            503: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+        };
+    };
+    createWebhook: {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        requestBody: {
+            content: {
+                /**
+                 * @example {
+                 *       "url": "https://shop.example/hooks/tarnwright",
+                 *       "events": [
+                 *         "report.created",
+                 *         "key.revoked"
+                 *       ]
+                 *     }
+                 */
+                "application/json": {
+                    /** @description Where events are posted: https, port 443 or 8443, a host name whose addresses are all public, no redirects */
+                    url: string;
+                    /** @description Events that are sent there */
+                    events: ("report.created" | "enquiry.created" | "usage.threshold_reached" | "key.revoked" | "subscription.changed")[];
+                };
+            };
+        };
+        responses: {
+            /** @description It was made. */
+            201: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    /**
+                     * @example {
+                     *       "id": "hook_01kbc0x7qzf0ra2w6v8n4m3h5t",
+                     *       "url": "https://shop.example/hooks/tarnwright",
+                     *       "events": [
+                     *         "report.created",
+                     *         "key.revoked"
+                     *       ],
+                     *       "disabled_at": null,
+                     *       "disabled_reason": null,
+                     *       "created_at": "2026-12-01T09:00:00.000Z",
+                     *       "updated_at": "2026-12-01T09:00:00.000Z"
+                     *     }
+                     */
+                    "application/json": components["schemas"]["WebhookEndpoint"];
+                };
+            };
+            /** @description `key_in_url`: A key stands in the address. `malformed_json`: The body is not JSON. */
+            400: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `key_missing`: No key was sent. `key_unknown`: The key is not known. `key_revoked`: The key was revoked. `key_expired`: The key has expired. */
+            401: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `server_key_in_browser`: A server key was used from a browser. `origin_not_allowed`: The origin is not on the list. `address_not_allowed`: The network address is not on the list. `scope_missing`: The key lacks the scope. `account_suspended`: The account is suspended. */
+            403: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `not_found`: There is nothing here. */
+            404: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `method_not_allowed`: The method is not offered here. */
+            405: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `conflict`: The change conflicts with what is stored. */
+            409: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `body_too_large`: The body is too large. */
+            413: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `media_type_unsupported`: The media type is not JSON. */
+            415: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `validation_failed`: The input is not valid. */
+            422: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `rate_limited`: Too many calls. */
+            429: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `internal`: Something failed on our side. */
+            500: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `unavailable`: The service is resting for a moment. */
+            503: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+        };
+    };
+    readWebhook: {
+        parameters: {
+            query?: never;
+            header?: never;
+            path: {
+                /** @description Id of the endpoint */
+                endpoint_id: string;
+            };
+            cookie?: never;
+        };
+        requestBody?: never;
+        responses: {
+            /** @description The answer. */
+            200: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    /**
+                     * @example {
+                     *       "id": "hook_01kbc0x7qzf0ra2w6v8n4m3h5t",
+                     *       "url": "https://shop.example/hooks/tarnwright",
+                     *       "events": [
+                     *         "report.created",
+                     *         "key.revoked"
+                     *       ],
+                     *       "disabled_at": null,
+                     *       "disabled_reason": null,
+                     *       "created_at": "2026-12-01T09:00:00.000Z",
+                     *       "updated_at": "2026-12-01T09:00:00.000Z"
+                     *     }
+                     */
+                    "application/json": components["schemas"]["WebhookEndpoint"];
+                };
+            };
+            /** @description `key_in_url`: A key stands in the address. */
+            400: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `key_missing`: No key was sent. `key_unknown`: The key is not known. `key_revoked`: The key was revoked. `key_expired`: The key has expired. */
+            401: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `server_key_in_browser`: A server key was used from a browser. `origin_not_allowed`: The origin is not on the list. `address_not_allowed`: The network address is not on the list. `scope_missing`: The key lacks the scope. `account_suspended`: The account is suspended. */
+            403: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `not_found`: There is nothing here. */
+            404: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `method_not_allowed`: The method is not offered here. */
+            405: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `validation_failed`: The input is not valid. */
+            422: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `rate_limited`: Too many calls. */
+            429: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `internal`: Something failed on our side. */
+            500: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `unavailable`: The service is resting for a moment. */
+            503: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+        };
+    };
+    deleteWebhook: {
+        parameters: {
+            query?: never;
+            header?: never;
+            path: {
+                /** @description Id of the endpoint */
+                endpoint_id: string;
+            };
+            cookie?: never;
+        };
+        requestBody?: never;
+        responses: {
+            /** @description Done. */
+            204: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content?: never;
+            };
+            /** @description `key_in_url`: A key stands in the address. */
+            400: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `key_missing`: No key was sent. `key_unknown`: The key is not known. `key_revoked`: The key was revoked. `key_expired`: The key has expired. */
+            401: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `server_key_in_browser`: A server key was used from a browser. `origin_not_allowed`: The origin is not on the list. `address_not_allowed`: The network address is not on the list. `scope_missing`: The key lacks the scope. `account_suspended`: The account is suspended. */
+            403: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `not_found`: There is nothing here. */
+            404: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `method_not_allowed`: The method is not offered here. */
+            405: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `validation_failed`: The input is not valid. */
+            422: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `rate_limited`: Too many calls. */
+            429: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `internal`: Something failed on our side. */
+            500: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `unavailable`: The service is resting for a moment. */
+            503: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+        };
+    };
+    changeWebhook: {
+        parameters: {
+            query?: never;
+            header?: never;
+            path: {
+                /** @description Id of the endpoint */
+                endpoint_id: string;
+            };
+            cookie?: never;
+        };
+        requestBody: {
+            content: {
+                /**
+                 * @example {
+                 *       "events": [
+                 *         "report.created"
+                 *       ]
+                 *     }
+                 */
+                "application/json": {
+                    /** @description Where events are posted: https, port 443 or 8443, a host name whose addresses are all public, no redirects */
+                    url?: string;
+                    /** @description Events that are sent there */
+                    events?: ("report.created" | "enquiry.created" | "usage.threshold_reached" | "key.revoked" | "subscription.changed")[];
+                    /** @description Switches it off or on */
+                    disabled?: boolean;
+                };
+            };
+        };
+        responses: {
+            /** @description The answer. */
+            200: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    /**
+                     * @example {
+                     *       "id": "hook_01kbc0x7qzf0ra2w6v8n4m3h5t",
+                     *       "url": "https://shop.example/hooks/tarnwright",
+                     *       "events": [
+                     *         "report.created"
+                     *       ],
+                     *       "disabled_at": null,
+                     *       "disabled_reason": null,
+                     *       "created_at": "2026-12-01T09:00:00.000Z",
+                     *       "updated_at": "2026-12-02T09:00:00.000Z"
+                     *     }
+                     */
+                    "application/json": components["schemas"]["WebhookEndpoint"];
+                };
+            };
+            /** @description `key_in_url`: A key stands in the address. `malformed_json`: The body is not JSON. */
+            400: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `key_missing`: No key was sent. `key_unknown`: The key is not known. `key_revoked`: The key was revoked. `key_expired`: The key has expired. */
+            401: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `server_key_in_browser`: A server key was used from a browser. `origin_not_allowed`: The origin is not on the list. `address_not_allowed`: The network address is not on the list. `scope_missing`: The key lacks the scope. `account_suspended`: The account is suspended. */
+            403: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `not_found`: There is nothing here. */
+            404: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `method_not_allowed`: The method is not offered here. */
+            405: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `body_too_large`: The body is too large. */
+            413: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `media_type_unsupported`: The media type is not JSON. */
+            415: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `validation_failed`: The input is not valid. */
+            422: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `rate_limited`: Too many calls. */
+            429: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `internal`: Something failed on our side. */
+            500: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `unavailable`: The service is resting for a moment. */
+            503: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+        };
+    };
+    readWebhookSecret: {
+        parameters: {
+            query?: never;
+            header?: never;
+            path: {
+                /** @description Id of the endpoint */
+                endpoint_id: string;
+            };
+            cookie?: never;
+        };
+        requestBody?: never;
+        responses: {
+            /** @description The answer. */
+            200: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    /**
+                     * @example {
+                     *       "secret": "whsec_bm90LWEtcmVhbC1zZWNyZXQtb25seS1hbi1leGFtcGw=",
+                     *       "previous_until": null
+                     *     }
+                     */
+                    "application/json": {
+                        /** @description `whsec_` and 32 bytes in base64 */
+                        secret: string;
+                        /**
+                         * Format: date-time
+                         * @description Until then webhooks are signed with the replaced secret as well
+                         */
+                        previous_until: string | null;
+                    };
+                };
+            };
+            /** @description `key_in_url`: A key stands in the address. */
+            400: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `key_missing`: No key was sent. `key_unknown`: The key is not known. `key_revoked`: The key was revoked. `key_expired`: The key has expired. */
+            401: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `server_key_in_browser`: A server key was used from a browser. `origin_not_allowed`: The origin is not on the list. `address_not_allowed`: The network address is not on the list. `scope_missing`: The key lacks the scope. `account_suspended`: The account is suspended. */
+            403: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `not_found`: There is nothing here. */
+            404: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `method_not_allowed`: The method is not offered here. */
+            405: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `validation_failed`: The input is not valid. */
+            422: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `rate_limited`: Too many calls. */
+            429: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `internal`: Something failed on our side. */
+            500: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `unavailable`: The service is resting for a moment. */
+            503: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+        };
+    };
+    rotateWebhookSecret: {
+        parameters: {
+            query?: never;
+            header?: never;
+            path: {
+                /** @description Id of the endpoint */
+                endpoint_id: string;
+            };
+            cookie?: never;
+        };
+        requestBody: {
+            content: {
+                /**
+                 * @example {
+                 *       "overlap_h": 24
+                 *     }
+                 */
+                "application/json": {
+                    /**
+                     * @description Hours for which the replaced secret signs as well
+                     * @default 24
+                     */
+                    overlap_h?: number;
+                };
+            };
+        };
+        responses: {
+            /** @description The answer. */
+            200: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    /**
+                     * @example {
+                     *       "previous_until": "2026-12-02T09:00:00.000Z"
+                     *     }
+                     */
+                    "application/json": {
+                        /**
+                         * Format: date-time
+                         * @description Until then the replaced secret signs as well
+                         */
+                        previous_until: string | null;
+                    };
+                };
+            };
+            /** @description `key_in_url`: A key stands in the address. `malformed_json`: The body is not JSON. */
+            400: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `key_missing`: No key was sent. `key_unknown`: The key is not known. `key_revoked`: The key was revoked. `key_expired`: The key has expired. */
+            401: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `server_key_in_browser`: A server key was used from a browser. `origin_not_allowed`: The origin is not on the list. `address_not_allowed`: The network address is not on the list. `scope_missing`: The key lacks the scope. `account_suspended`: The account is suspended. */
+            403: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `not_found`: There is nothing here. */
+            404: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `method_not_allowed`: The method is not offered here. */
+            405: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `body_too_large`: The body is too large. */
+            413: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `media_type_unsupported`: The media type is not JSON. */
+            415: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `validation_failed`: The input is not valid. */
+            422: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `rate_limited`: Too many calls. */
+            429: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `internal`: Something failed on our side. */
+            500: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `unavailable`: The service is resting for a moment. */
+            503: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+        };
+    };
+    testWebhook: {
+        parameters: {
+            query?: never;
+            header?: never;
+            path: {
+                /** @description Id of the endpoint */
+                endpoint_id: string;
+            };
+            cookie?: never;
+        };
+        requestBody: {
+            content: {
+                /** @example {} */
+                "application/json": unknown;
+            };
+        };
+        responses: {
+            /** @description It was made. */
+            201: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    /**
+                     * @example {
+                     *       "id": "dlv_01kbc0x7qzf0ra2w6v8n4m3h5t",
+                     *       "endpoint_id": "hook_01kbc0x7qzf0ra2w6v8n4m3h5t",
+                     *       "event_id": "evt_01kbc0x7qzf0ra2w6v8n4m3h5t",
+                     *       "type": "webhook.test",
+                     *       "status": "pending",
+                     *       "attempts": 0,
+                     *       "created_at": "2026-12-01T09:30:00.000Z",
+                     *       "next_attempt_at": "2026-12-01T09:30:00.000Z",
+                     *       "last_attempt_at": null,
+                     *       "last_status": null,
+                     *       "last_failure": null,
+                     *       "last_duration_ms": null
+                     *     }
+                     */
+                    "application/json": components["schemas"]["WebhookDelivery"];
+                };
+            };
+            /** @description `key_in_url`: A key stands in the address. `malformed_json`: The body is not JSON. */
+            400: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `key_missing`: No key was sent. `key_unknown`: The key is not known. `key_revoked`: The key was revoked. `key_expired`: The key has expired. */
+            401: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `server_key_in_browser`: A server key was used from a browser. `origin_not_allowed`: The origin is not on the list. `address_not_allowed`: The network address is not on the list. `scope_missing`: The key lacks the scope. `account_suspended`: The account is suspended. */
+            403: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `not_found`: There is nothing here. */
+            404: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `method_not_allowed`: The method is not offered here. */
+            405: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `conflict`: The change conflicts with what is stored. */
+            409: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `body_too_large`: The body is too large. */
+            413: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `media_type_unsupported`: The media type is not JSON. */
+            415: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `validation_failed`: The input is not valid. */
+            422: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `rate_limited`: Too many calls. */
+            429: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `internal`: Something failed on our side. */
+            500: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `unavailable`: The service is resting for a moment. */
+            503: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+        };
+    };
+    listWebhookDeliveries: {
+        parameters: {
+            query?: {
+                status?: "pending" | "delivered" | "failed";
+                /** @description Most items of a page */
+                limit?: number;
+                /** @description `next_cursor` of the page before; absent for the first page */
+                cursor?: string;
+            };
+            header?: never;
+            path: {
+                /** @description Id of the endpoint */
+                endpoint_id: string;
+            };
+            cookie?: never;
+        };
+        requestBody?: never;
+        responses: {
+            /** @description The answer. */
+            200: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    /**
+                     * @example {
+                     *       "data": [
+                     *         {
+                     *           "id": "dlv_01kbc0x7qzf0ra2w6v8n4m3h5t",
+                     *           "endpoint_id": "hook_01kbc0x7qzf0ra2w6v8n4m3h5t",
+                     *           "event_id": "evt_01kbc0x7qzf0ra2w6v8n4m3h5t",
+                     *           "type": "key.revoked",
+                     *           "status": "pending",
+                     *           "attempts": 1,
+                     *           "created_at": "2026-12-01T09:30:00.000Z",
+                     *           "next_attempt_at": "2026-12-01T09:30:05.300Z",
+                     *           "last_attempt_at": "2026-12-01T09:30:00.100Z",
+                     *           "last_status": 503,
+                     *           "last_failure": "refused",
+                     *           "last_duration_ms": 84
+                     *         }
+                     *       ],
+                     *       "next_cursor": null
+                     *     }
+                     */
+                    "application/json": {
+                        data: components["schemas"]["WebhookDelivery"][];
+                        /** @description For the next page; null on the last */
+                        next_cursor: string | null;
+                    };
+                };
+            };
+            /** @description `key_in_url`: A key stands in the address. */
+            400: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `key_missing`: No key was sent. `key_unknown`: The key is not known. `key_revoked`: The key was revoked. `key_expired`: The key has expired. */
+            401: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `server_key_in_browser`: A server key was used from a browser. `origin_not_allowed`: The origin is not on the list. `address_not_allowed`: The network address is not on the list. `scope_missing`: The key lacks the scope. `account_suspended`: The account is suspended. */
+            403: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `not_found`: There is nothing here. */
+            404: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `method_not_allowed`: The method is not offered here. */
+            405: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `validation_failed`: The input is not valid. */
+            422: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `rate_limited`: Too many calls. */
+            429: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `internal`: Something failed on our side. */
+            500: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `unavailable`: The service is resting for a moment. */
+            503: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+        };
+    };
+    readWebhookDelivery: {
+        parameters: {
+            query?: never;
+            header?: never;
+            path: {
+                /** @description Id of the endpoint */
+                endpoint_id: string;
+                /** @description Id of the delivery */
+                delivery_id: string;
+            };
+            cookie?: never;
+        };
+        requestBody?: never;
+        responses: {
+            /** @description The answer. */
+            200: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    /**
+                     * @example {
+                     *       "id": "dlv_01kbc0x7qzf0ra2w6v8n4m3h5t",
+                     *       "endpoint_id": "hook_01kbc0x7qzf0ra2w6v8n4m3h5t",
+                     *       "event_id": "evt_01kbc0x7qzf0ra2w6v8n4m3h5t",
+                     *       "type": "key.revoked",
+                     *       "status": "pending",
+                     *       "attempts": 1,
+                     *       "created_at": "2026-12-01T09:30:00.000Z",
+                     *       "next_attempt_at": "2026-12-01T09:30:05.300Z",
+                     *       "last_attempt_at": "2026-12-01T09:30:00.100Z",
+                     *       "last_status": 503,
+                     *       "last_failure": "refused",
+                     *       "last_duration_ms": 84,
+                     *       "payload": {
+                     *         "type": "key.revoked",
+                     *         "timestamp": "2026-12-01T09:30:00.000Z",
+                     *         "data": {
+                     *           "key_id": "key_01kbc0x7qzf0ra2w6v8n4m3h5t",
+                     *           "name": "Shop back end",
+                     *           "kind": "server",
+                     *           "mode": "live",
+                     *           "last4": "9fQ2",
+                     *           "reason": "Found in a public repository",
+                     *           "revoked_at": "2026-12-01T09:30:00.000Z"
+                     *         }
+                     *       }
+                     *     }
+                     */
+                    "application/json": components["schemas"]["WebhookDeliveryWithPayload"];
+                };
+            };
+            /** @description `key_in_url`: A key stands in the address. */
+            400: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `key_missing`: No key was sent. `key_unknown`: The key is not known. `key_revoked`: The key was revoked. `key_expired`: The key has expired. */
+            401: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `server_key_in_browser`: A server key was used from a browser. `origin_not_allowed`: The origin is not on the list. `address_not_allowed`: The network address is not on the list. `scope_missing`: The key lacks the scope. `account_suspended`: The account is suspended. */
+            403: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `not_found`: There is nothing here. */
+            404: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `method_not_allowed`: The method is not offered here. */
+            405: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `validation_failed`: The input is not valid. */
+            422: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `rate_limited`: Too many calls. */
+            429: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `internal`: Something failed on our side. */
+            500: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `unavailable`: The service is resting for a moment. */
+            503: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+        };
+    };
+    replayWebhookDelivery: {
+        parameters: {
+            query?: never;
+            header?: never;
+            path: {
+                /** @description Id of the endpoint */
+                endpoint_id: string;
+                /** @description Id of the delivery */
+                delivery_id: string;
+            };
+            cookie?: never;
+        };
+        requestBody: {
+            content: {
+                /** @example {} */
+                "application/json": unknown;
+            };
+        };
+        responses: {
+            /** @description It was made. */
+            201: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    /**
+                     * @example {
+                     *       "id": "dlv_01kbc0y2a4e8xbm7r5s9d6k1qw",
+                     *       "endpoint_id": "hook_01kbc0x7qzf0ra2w6v8n4m3h5t",
+                     *       "event_id": "evt_01kbc0x7qzf0ra2w6v8n4m3h5t",
+                     *       "type": "key.revoked",
+                     *       "status": "pending",
+                     *       "attempts": 0,
+                     *       "created_at": "2026-12-01T09:30:00.000Z",
+                     *       "next_attempt_at": "2026-12-01T09:30:00.000Z",
+                     *       "last_attempt_at": null,
+                     *       "last_status": null,
+                     *       "last_failure": null,
+                     *       "last_duration_ms": null
+                     *     }
+                     */
+                    "application/json": components["schemas"]["WebhookDelivery"];
+                };
+            };
+            /** @description `key_in_url`: A key stands in the address. `malformed_json`: The body is not JSON. */
+            400: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `key_missing`: No key was sent. `key_unknown`: The key is not known. `key_revoked`: The key was revoked. `key_expired`: The key has expired. */
+            401: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `server_key_in_browser`: A server key was used from a browser. `origin_not_allowed`: The origin is not on the list. `address_not_allowed`: The network address is not on the list. `scope_missing`: The key lacks the scope. `account_suspended`: The account is suspended. */
+            403: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `not_found`: There is nothing here. */
+            404: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `method_not_allowed`: The method is not offered here. */
+            405: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `conflict`: The change conflicts with what is stored. */
+            409: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `body_too_large`: The body is too large. */
+            413: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `media_type_unsupported`: The media type is not JSON. */
+            415: {
                 headers: {
                     [name: string]: unknown;
                 };
@@ -3419,6 +9314,393 @@ export interface operations {
                 content: {
                     "application/problem+json": components["schemas"]["Problem"];
                 };
+            };
+        };
+    };
+    onReportCreated: {
+        parameters: {
+            query?: never;
+            header: {
+                /** @description Id of the event, the same whenever it is sent again */
+                "webhook-id": string;
+                /** @description When this attempt was made, in Unix seconds */
+                "webhook-timestamp": string;
+                /** @description `v1,` and HMAC-SHA-256 of `id.timestamp.body` in base64; two while a secret is replaced */
+                "webhook-signature": string;
+            };
+            path?: never;
+            cookie?: never;
+        };
+        requestBody: {
+            content: {
+                /**
+                 * @example {
+                 *       "type": "report.created",
+                 *       "timestamp": "2026-12-01T09:30:00.000Z",
+                 *       "data": {
+                 *         "report_id": "rep_01kbc0x7qzf0ra2w6v8n4m3h5t",
+                 *         "kind": "plan",
+                 *         "title": "180 l, medium light",
+                 *         "created_at": "2026-12-01T09:30:00.000Z"
+                 *       }
+                 *     }
+                 */
+                "application/json": {
+                    /** @enum {string} */
+                    type: "report.created";
+                    /** Format: date-time */
+                    timestamp: string;
+                    data: {
+                        report_id: string;
+                        /** @description What was calculated, as `plan` */
+                        kind: string;
+                        title: string | null;
+                        /**
+                         * Format: date-time
+                         * @description When it was stored, RFC 3339
+                         */
+                        created_at: string;
+                    };
+                };
+            };
+        };
+        responses: {
+            /** @description You want no more: the endpoint is switched off. */
+            410: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content?: never;
+            };
+            /** @description You have it. Any other answer, or none, is followed by up to nine more attempts. */
+            "2XX": {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content?: never;
+            };
+        };
+    };
+    onEnquiryCreated: {
+        parameters: {
+            query?: never;
+            header: {
+                /** @description Id of the event, the same whenever it is sent again */
+                "webhook-id": string;
+                /** @description When this attempt was made, in Unix seconds */
+                "webhook-timestamp": string;
+                /** @description `v1,` and HMAC-SHA-256 of `id.timestamp.body` in base64; two while a secret is replaced */
+                "webhook-signature": string;
+            };
+            path?: never;
+            cookie?: never;
+        };
+        requestBody: {
+            content: {
+                /**
+                 * @example {
+                 *       "type": "enquiry.created",
+                 *       "timestamp": "2026-12-01T09:30:00.000Z",
+                 *       "data": {
+                 *         "enquiry_id": "enq_01kbc0x7qzf0ra2w6v8n4m3h5t",
+                 *         "widget_id": "wdgt_01kbc0x7qzf0ra2w6v8n4m3h5t",
+                 *         "created_at": "2026-12-01T09:30:00.000Z"
+                 *       }
+                 *     }
+                 */
+                "application/json": {
+                    /** @enum {string} */
+                    type: "enquiry.created";
+                    /** Format: date-time */
+                    timestamp: string;
+                    data: {
+                        enquiry_id: string;
+                        widget_id: string | null;
+                        /**
+                         * Format: date-time
+                         * @description When it came, RFC 3339
+                         */
+                        created_at: string;
+                    };
+                };
+            };
+        };
+        responses: {
+            /** @description You want no more: the endpoint is switched off. */
+            410: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content?: never;
+            };
+            /** @description You have it. Any other answer, or none, is followed by up to nine more attempts. */
+            "2XX": {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content?: never;
+            };
+        };
+    };
+    onUsageThresholdReached: {
+        parameters: {
+            query?: never;
+            header: {
+                /** @description Id of the event, the same whenever it is sent again */
+                "webhook-id": string;
+                /** @description When this attempt was made, in Unix seconds */
+                "webhook-timestamp": string;
+                /** @description `v1,` and HMAC-SHA-256 of `id.timestamp.body` in base64; two while a secret is replaced */
+                "webhook-signature": string;
+            };
+            path?: never;
+            cookie?: never;
+        };
+        requestBody: {
+            content: {
+                /**
+                 * @example {
+                 *       "type": "usage.threshold_reached",
+                 *       "timestamp": "2026-12-01T09:30:00.000Z",
+                 *       "data": {
+                 *         "percent": 80,
+                 *         "units": 40000,
+                 *         "unit_cap": 50000,
+                 *         "period_start": "2026-12-01T00:00:00.000Z",
+                 *         "period_end": "2027-01-01T00:00:00.000Z"
+                 *       }
+                 *     }
+                 */
+                "application/json": {
+                    /** @enum {string} */
+                    type: "usage.threshold_reached";
+                    /** Format: date-time */
+                    timestamp: string;
+                    data: {
+                        /** @description Share of them that is spent */
+                        percent: 80 | 100;
+                        /** @description Units spent when it was reached */
+                        units: number;
+                        /** @description Units that the account may spend in the period */
+                        unit_cap: number;
+                        /**
+                         * Format: date-time
+                         * @description First instant of the period, RFC 3339
+                         */
+                        period_start: string;
+                        /**
+                         * Format: date-time
+                         * @description When counting begins anew, RFC 3339
+                         */
+                        period_end: string;
+                    };
+                };
+            };
+        };
+        responses: {
+            /** @description You want no more: the endpoint is switched off. */
+            410: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content?: never;
+            };
+            /** @description You have it. Any other answer, or none, is followed by up to nine more attempts. */
+            "2XX": {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content?: never;
+            };
+        };
+    };
+    onKeyRevoked: {
+        parameters: {
+            query?: never;
+            header: {
+                /** @description Id of the event, the same whenever it is sent again */
+                "webhook-id": string;
+                /** @description When this attempt was made, in Unix seconds */
+                "webhook-timestamp": string;
+                /** @description `v1,` and HMAC-SHA-256 of `id.timestamp.body` in base64; two while a secret is replaced */
+                "webhook-signature": string;
+            };
+            path?: never;
+            cookie?: never;
+        };
+        requestBody: {
+            content: {
+                /**
+                 * @example {
+                 *       "type": "key.revoked",
+                 *       "timestamp": "2026-12-01T09:30:00.000Z",
+                 *       "data": {
+                 *         "key_id": "key_01kbc0x7qzf0ra2w6v8n4m3h5t",
+                 *         "name": "Shop back end",
+                 *         "kind": "server",
+                 *         "mode": "live",
+                 *         "last4": "9fQ2",
+                 *         "reason": "Found in a public repository",
+                 *         "revoked_at": "2026-12-01T09:30:00.000Z"
+                 *       }
+                 *     }
+                 */
+                "application/json": {
+                    /** @enum {string} */
+                    type: "key.revoked";
+                    /** Format: date-time */
+                    timestamp: string;
+                    data: {
+                        key_id: string;
+                        name: string;
+                        /** @enum {string} */
+                        kind: "server" | "browser";
+                        /** @enum {string} */
+                        mode: "live" | "sandbox";
+                        /** @description Its last four characters */
+                        last4: string;
+                        reason: string | null;
+                        /**
+                         * Format: date-time
+                         * @description Since when it is refused, RFC 3339
+                         */
+                        revoked_at: string;
+                    };
+                };
+            };
+        };
+        responses: {
+            /** @description You want no more: the endpoint is switched off. */
+            410: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content?: never;
+            };
+            /** @description You have it. Any other answer, or none, is followed by up to nine more attempts. */
+            "2XX": {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content?: never;
+            };
+        };
+    };
+    onSubscriptionChanged: {
+        parameters: {
+            query?: never;
+            header: {
+                /** @description Id of the event, the same whenever it is sent again */
+                "webhook-id": string;
+                /** @description When this attempt was made, in Unix seconds */
+                "webhook-timestamp": string;
+                /** @description `v1,` and HMAC-SHA-256 of `id.timestamp.body` in base64; two while a secret is replaced */
+                "webhook-signature": string;
+            };
+            path?: never;
+            cookie?: never;
+        };
+        requestBody: {
+            content: {
+                /**
+                 * @example {
+                 *       "type": "subscription.changed",
+                 *       "timestamp": "2026-12-01T09:30:00.000Z",
+                 *       "data": {
+                 *         "plan": "storefront",
+                 *         "status": "active",
+                 *         "current_period_end": "2027-01-01T00:00:00.000Z",
+                 *         "cancel_at_period_end": false
+                 *       }
+                 *     }
+                 */
+                "application/json": {
+                    /** @enum {string} */
+                    type: "subscription.changed";
+                    /** Format: date-time */
+                    timestamp: string;
+                    data: {
+                        /** @description Plan now in force, as `storefront` */
+                        plan: string;
+                        /** @description State of the subscription; new values may come */
+                        status: string;
+                        /**
+                         * Format: date-time
+                         * @description End of the paid period, RFC 3339
+                         */
+                        current_period_end: string | null;
+                        cancel_at_period_end: boolean;
+                    };
+                };
+            };
+        };
+        responses: {
+            /** @description You want no more: the endpoint is switched off. */
+            410: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content?: never;
+            };
+            /** @description You have it. Any other answer, or none, is followed by up to nine more attempts. */
+            "2XX": {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content?: never;
+            };
+        };
+    };
+    onWebhookTest: {
+        parameters: {
+            query?: never;
+            header: {
+                /** @description Id of the event, the same whenever it is sent again */
+                "webhook-id": string;
+                /** @description When this attempt was made, in Unix seconds */
+                "webhook-timestamp": string;
+                /** @description `v1,` and HMAC-SHA-256 of `id.timestamp.body` in base64; two while a secret is replaced */
+                "webhook-signature": string;
+            };
+            path?: never;
+            cookie?: never;
+        };
+        requestBody: {
+            content: {
+                /**
+                 * @example {
+                 *       "type": "webhook.test",
+                 *       "timestamp": "2026-12-01T09:30:00.000Z",
+                 *       "data": {
+                 *         "message": "This is a test. Nothing happened in your account."
+                 *       }
+                 *     }
+                 */
+                "application/json": {
+                    /** @enum {string} */
+                    type: "webhook.test";
+                    /** Format: date-time */
+                    timestamp: string;
+                    data: {
+                        message: string;
+                    };
+                };
+            };
+        };
+        responses: {
+            /** @description You want no more: the endpoint is switched off. */
+            410: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content?: never;
+            };
+            /** @description You have it. Any other answer, or none, is followed by up to nine more attempts. */
+            "2XX": {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content?: never;
             };
         };
     };

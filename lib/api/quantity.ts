@@ -17,6 +17,11 @@ export function figure(name: QuantityName) {
   return z.number().meta({ description: describe(description, unit), "x-unit": ucum })
 }
 
+/** Schema of a result that may have no number; the answer says why. */
+export function figureOrNull(name: QuantityName) {
+  return z.union([figure(name), z.null()])
+}
+
 function describe(description: string, unit: string): string {
   return unit === "1" ? description : `${description}, in ${unit}`
 }

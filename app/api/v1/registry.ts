@@ -7,9 +7,24 @@ import { carbonateGrid } from "./carbonate/grid/operation"
 import { carbonateKh } from "./carbonate/kh/operation"
 import { carbonatePh } from "./carbonate/ph/operation"
 import { carbonatePhDrop } from "./carbonate/ph-drop/operation"
+import { gasBubbleRate } from "./gas/bubble-rate/operation"
+import { gasController } from "./gas/controller/operation"
+import { gasCylinder } from "./gas/cylinder/operation"
+import { gasDemand } from "./gas/demand/operation"
+import { gasLeadTime } from "./gas/lead-time/operation"
+import { gasRoomSafety } from "./gas/room-safety/operation"
+import { gasWorkingPressure } from "./gas/working-pressure/operation"
 import { health } from "./health/operation"
 import { openapi } from "./openapi.json/operation"
 import { usage } from "./usage/operation"
+import { readWebhookDelivery } from "./webhooks/[endpoint_id]/deliveries/[delivery_id]/operation"
+import { replayWebhookDelivery } from "./webhooks/[endpoint_id]/deliveries/[delivery_id]/replay/operation"
+import { listWebhookDeliveries } from "./webhooks/[endpoint_id]/deliveries/operation"
+import { changeWebhook, deleteWebhook, readWebhook } from "./webhooks/[endpoint_id]/operation"
+import { readWebhookSecret } from "./webhooks/[endpoint_id]/secret/operation"
+import { rotateWebhookSecret } from "./webhooks/[endpoint_id]/secret/rotate/operation"
+import { testWebhook } from "./webhooks/[endpoint_id]/test/operation"
+import { createWebhook, listWebhooks } from "./webhooks/operation"
 import { openWidgetSession } from "./widgets/[widget_id]/sessions/operation"
 import { readWidgetSettings } from "./widgets/[widget_id]/settings/operation"
 
@@ -21,9 +36,27 @@ export const registry: readonly AnyOperation[] = [
   carbonatePhDrop,
   carbonateDropChecker,
   carbonateGrid,
+  gasDemand,
+  gasLeadTime,
+  gasController,
+  gasCylinder,
+  gasBubbleRate,
+  gasWorkingPressure,
+  gasRoomSafety,
   batch,
   usage,
   account,
+  listWebhooks,
+  createWebhook,
+  readWebhook,
+  changeWebhook,
+  deleteWebhook,
+  readWebhookSecret,
+  rotateWebhookSecret,
+  testWebhook,
+  listWebhookDeliveries,
+  readWebhookDelivery,
+  replayWebhookDelivery,
   openWidgetSession,
   readWidgetSettings,
   health,
