@@ -56,7 +56,7 @@ const rooms: { room: RegExp; ours: RegExp; packages: RegExp | "any" }[] = [
   },
   {
     room: /^openapi\//,
-    ours: /^(openapi|app\/api\/v1\/registry|lib\/(api\/(define-operation|problem|tags)|chemistry\/engine-version|errors))/,
+    ours: /^(openapi|app\/api\/v1\/registry|lib\/(api\/(define-operation|problem|tags)|chemistry\/engine-version|errors|webhooks\/index))/,
     packages: "any",
   },
   {

@@ -2,6 +2,7 @@ import { z } from "zod"
 
 const instant = (description: string) => z.iso.datetime().meta({ description: `${description}, RFC 3339` })
 const units = (description: string) => z.int().meta({ description, "x-unit": "1" })
+const share = <Percent extends number>(percent: Percent) => z.literal(percent).meta({ "x-unit": "%" })
 
 /** Everything known about each event, a row each: what it tells, the data it carries, an example. */
 export const webhookEvents = {
@@ -37,7 +38,7 @@ export const webhookEvents = {
   "usage.threshold_reached": {
     summary: "80 or 100 percent of the period's units are spent; once for each and period",
     data: z.object({
-      percent: z.union([z.literal(80), z.literal(100)]).meta({ description: "Share reached", "x-unit": "%" }),
+      percent: z.union([share(80), share(100)]).meta({ description: "Share of them that is spent" }),
       units: units("Units spent when it was reached"),
       unit_cap: units("Units that the account may spend in the period"),
       period_start: instant("First instant of the period"),
