@@ -17,17 +17,12 @@ export interface DissolvingInto {
 export const DISSOLVED_BELOW_MM = 0.05
 
 /**
- * How fast a bubble of pure CO2 shrinks, mm of diameter per second; negative if the water is supersaturated and it
- * grows.
+ * How fast a bubble of pure CO2 shrinks, mm of diameter per second by its diameter in mm; negative if the water is
+ * supersaturated and the bubble grows. What does not depend on the diameter is computed once, for solvers.
  *
  * Mass balance of a sphere whose inner pressure is raised by 4σ/d; k_L from `bubbleMassTransfer`. Nitrogen and oxygen
  * that diffuse in are left out, so a real bubble leaves a residue of 2-3 % of its volume.
  */
-export function shrinkRate(diameter_mm: number, into: DissolvingInto): number {
-  return createShrinkRate(into)(diameter_mm)
-}
-
-/** `shrinkRate` with what does not depend on the diameter computed once; for solvers. */
 export function createShrinkRate(into: DissolvingInto): (diameter_mm: number) => number {
   const { water, pressure_pa, co2_mg_l, henry_mg_l_atm, vapour_pressure_atm } = into
   const laplace = 4 * water.surface_tension_n_m

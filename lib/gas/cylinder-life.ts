@@ -10,6 +10,7 @@ import {
   cylinderContents,
   cylinderState,
   liquidFullTemperature,
+  maxFillRatio,
 } from "./cylinder-state"
 import { gasDefaults } from "./defaults"
 
@@ -172,10 +173,4 @@ function requireSound(cylinder: Cylinder, field: (name: string) => string): void
     field("remaining_g"),
     `A cylinder of ${figures(cylinder_mass_g, 4)} g cannot hold ${figures(remaining_g, 4)} g. Subtract the empty weight stamped on it.`,
   )
-}
-
-/** Largest fill that a test pressure allows, kg/L; none below 190 bar. @source adrP200, UN 1013 */
-function maxFillRatio(test_pressure_bar: number): number {
-  if (test_pressure_bar >= 250) return 0.76
-  return test_pressure_bar >= 190 ? 0.68 : 0
 }

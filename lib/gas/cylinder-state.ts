@@ -80,5 +80,11 @@ export function liquidFullTemperature(fill_kg_l: number): number | null {
   })
 }
 
+/** Largest fill that a test pressure allows, kg/L; none below 190 bar. @source adrP200, UN 1013 */
+export function maxFillRatio(test_pressure_bar: number): number {
+  if (test_pressure_bar >= 250) return 0.76
+  return test_pressure_bar >= 190 ? 0.68 : 0
+}
+
 /** °C. @source spanWagner1996, eq. 3.7 */
 const TRIPLE_POINT_C = -56.558

@@ -6,7 +6,7 @@ import type { Uncontrolled } from "./feed"
 import type { PreparedTank } from "./tank-input"
 
 /** mg/L that a feed may lead to before it must not run unattended, and before it is deadly. Judgement. */
-const UNATTENDED_MG_L = 35
+export const UNATTENDED_MG_L = 35
 const DEADLY_MG_L = 60
 
 /** What the person must know about a feed: what it does unthrottled, and why a short lead needs a surplus. */
