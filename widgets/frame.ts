@@ -2,7 +2,8 @@ import { heightIn } from "./shared/height-message"
 import type { Mount } from "./shared/mount"
 
 /** The widget in a frame of its own, as tall as what it holds: for pages that keep foreign scripts out. */
-export const mount: Mount = async (host, { widgetUrl }) => {
+export const mount: Mount = async (host, { widgetUrl, ending }) => {
+  if (ending.aborted) return
   const { origin, pathname } = new URL(widgetUrl)
   const address = new URL(`/embed/${pathname.split("/").at(-1)}`, origin)
   address.searchParams.set("parent", location.origin)
@@ -24,13 +25,10 @@ export const mount: Mount = async (host, { widgetUrl }) => {
     if (height !== null) frame.height = String(height)
   }
 
-  window.addEventListener("message", onMessage)
+  window.addEventListener("message", onMessage, { signal: ending })
   const shadow = host.shadowRoot ?? host.attachShadow({ mode: "open" })
   shadow.replaceChildren(frame)
-  return () => {
-    window.removeEventListener("message", onMessage)
-    shadow.replaceChildren()
-  }
+  ending.addEventListener("abort", () => shadow.replaceChildren())
 }
 
 /** A frame cannot see the page's colour scheme: `page` where the page has both and the visitor's system decides. */

@@ -39,7 +39,7 @@ class TarnwrightWidget extends HTMLElement {
   /** What is shown, or being fetched, as its attributes say. */
   #shown = ""
   #isDue = false
-  #unmount: (() => void) | undefined
+  #ending: AbortController | undefined
 
   connectedCallback() {
     this.#changed()
@@ -64,13 +64,13 @@ class TarnwrightWidget extends HTMLElement {
         : ""
       if (wanted === this.#shown) return
       this.#shown = wanted
-      this.#unmount?.()
-      this.#unmount = undefined
-      if (wanted) this.#show(wanted).catch(() => {})
+      this.#ending?.abort()
+      this.#ending = new AbortController()
+      if (wanted) this.#show(this.#ending.signal).catch(() => {})
     })
   }
 
-  async #show(wanted: string) {
+  async #show(ending: AbortSignal) {
     const widgetUrl = `${origin}/api/v1/widgets/${this.getAttribute("widget-id")}`
     const given = this.getAttribute("settings")
     const shown: ShownWidget =
@@ -80,9 +80,7 @@ class TarnwrightWidget extends HTMLElement {
           ? JSON.parse(given)
           : await (await call(`${widgetUrl}/settings`)).json()
     const { mount } = await load(PARTS[shown.calculator] as Address)
-    const unmount = await mount(this, { shown, widgetUrl, load })
-    if (wanted === this.#shown) this.#unmount = unmount
-    else unmount()
+    await mount(this, { shown, widgetUrl, load, ending })
   }
 }
 

@@ -1,3 +1,4 @@
+import type { Co2Result } from "@/lib/chemistry/co2-from-ph"
 import { type Co2Level, co2Bands } from "@/lib/chemistry/level"
 import { fixed, type Locale } from "@/widgets/shared/locale"
 
@@ -5,12 +6,10 @@ import { fixed, type Locale } from "@/widgets/shared/locale"
 const from_mg_l = 2
 const to_mg_l = 200
 
-const ticks = [5, 10, 20, 30, 60, 100]
+const ticks = [5, 10, 20, 30, 40, 60, 100]
 
 interface RulerProps {
-  readonly co2_mg_l: number
-  readonly co2_low_mg_l: number
-  readonly co2_high_mg_l: number
+  readonly result: Pick<Co2Result, "co2_mg_l" | "co2_low_mg_l" | "co2_high_mg_l" | "level">
   readonly locale: Locale
 }
 
@@ -18,7 +17,8 @@ interface RulerProps {
  * The level on a ruler: the bands, the interval as a bar, the value as a mark. A drawing only; the sentence beside it
  * says the same in words.
  */
-export function Ruler({ co2_mg_l, co2_low_mg_l, co2_high_mg_l, locale }: RulerProps) {
+export function Ruler({ result, locale }: RulerProps) {
+  const { co2_mg_l, co2_low_mg_l, co2_high_mg_l } = result
   const low = placeOf(co2_low_mg_l)
   const high = placeOf(co2_high_mg_l)
   const value = placeOf(co2_mg_l)
@@ -27,7 +27,7 @@ export function Ruler({ co2_mg_l, co2_low_mg_l, co2_high_mg_l, locale }: RulerPr
       {bands().map(({ level, start, end }) => (
         <rect
           key={level}
-          className={`band ${level}`}
+          className={`band ${level}${level === result.level ? " reached" : ""}`}
           x={percent(start)}
           y="30"
           width={percent(end - start)}

@@ -22,7 +22,7 @@ export type KhTest = keyof typeof khTests
 export const TARGET_CO2_MG_L = 30
 
 /** What a planted tank that runs well may read; a widget's own settings go before it. */
-const usualTank = { ph: 6.9, kh_dkh: 4, temperature_c: carbonateDefaults.temperature_c }
+const usualTank = { ph: 6.8, kh_dkh: 4, temperature_c: carbonateDefaults.temperature_c }
 
 export type Water = Readonly<Record<FieldName, number>>
 

@@ -21,7 +21,11 @@ import {
   type State,
   startState,
 } from "./state"
+import { WaterMap } from "./water-map"
 import { cautionWords, type Speech, setPointWords, wordsOf } from "./words"
+
+/** Of the method more than of the water, and no matter of safety: it is said where the method is explained. */
+const asideCode = "common_chart"
 
 /** The calculator *CO2 level*: what pH and KH say about CO2, and where to set the controller. */
 export function Co2Level({ shown, session, locale, messages }: CalculatorProps<Co2LevelMessages>) {
@@ -62,8 +66,13 @@ export function Co2Level({ shown, session, locale, messages }: CalculatorProps<C
           <Measured state={state} messages={messages} onChange={change} />
         </div>
         <Outcome state={state} locale={locale} messages={messages} />
+        <WaterMap state={state} locale={locale} messages={messages} />
       </div>
-      <MethodView method={state.reading.method} messages={messages.shared} explanation={messages.method} />
+      <MethodView
+        method={state.reading.method}
+        messages={messages.shared}
+        explanation={`${messages.method} ${messages.cautions[asideCode]?.(wordsOf(state, { locale, messages }))}`}
+      />
     </Frame>
   )
 }
@@ -122,20 +131,20 @@ function Outcome({ state, ...speech }: Speech & { readonly state: State }) {
   const sentence = useSettled(messages.sentence(words))
   const setPoint = setPointWords(reading, speech)
   return (
-    // Focusable by the pointer alone: a click on the answer would else go to the first field and open a keyboard.
-    <div className="outcome" part="outcome" tabIndex={-1} data-current={isCurrent(state)}>
+    <div className="outcome" part="outcome" data-current={isCurrent(state)}>
       <div className="reading" aria-hidden="true">
         <p className="label">{messages.figureTitle}</p>
         <p className="line">
           <span className="figure" part="figure">
-            {words.co2} <span className="figure-unit">mg/L</span>
+            {words.co2}
+            <span className="figure-unit"> mg/L</span>
           </span>
           <span className={`level ${result.level}`} part="level">
             {words.level}
           </span>
         </p>
         <p className="interval-text">{messages.interval(words)}</p>
-        <Ruler {...result} locale={locale} />
+        <Ruler result={result} locale={locale} />
       </div>
       {/* biome-ignore lint/a11y/noRedundantRoles: some screen readers know the role and not the element. */}
       <output className="sentence" part="sentence" role="status" aria-live="polite">
@@ -148,7 +157,7 @@ function Outcome({ state, ...speech }: Speech & { readonly state: State }) {
         </p>
       )}
       <Cautions
-        cautions={reading.cautions}
+        cautions={reading.cautions.filter(({ code }) => code !== asideCode)}
         messages={messages.shared}
         say={(caution) => cautionWords(caution, reading, words, speech)}
       />

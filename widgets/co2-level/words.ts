@@ -1,4 +1,5 @@
 import type { Caution } from "@/lib/chemistry/answer"
+import { co2Band } from "@/lib/chemistry/level"
 import { shownValue, symbolOf } from "@/widgets/shared/field"
 import { fixed, type Locale, numberWriter, significant } from "@/widgets/shared/locale"
 import type { Co2LevelMessages, ReadingWords } from "./messages/co2-level-messages"
@@ -56,8 +57,9 @@ export function cautionWords(
   return messages.cautions[nameOf(caution, result.co2_high_mg_l)]?.(words)
 }
 
-/** `livestock` says four different things, by what the upper end of the interval means. */
-function nameOf({ code, severity }: Caution, co2_high_mg_l: number): string {
+/** `livestock` says something else in each band of the engine. */
+function nameOf({ code }: Caution, co2_high_mg_l: number): string {
   if (code !== "livestock") return code
-  return severity === "warning" && co2_high_mg_l > 40 ? "livestock_strong" : `livestock_${severity}`
+  const { up_to_mg_l } = co2Band(co2_high_mg_l)
+  return `livestock_${up_to_mg_l <= 30 ? "30" : Number.isFinite(up_to_mg_l) ? up_to_mg_l : "above"}`
 }

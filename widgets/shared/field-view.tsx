@@ -40,50 +40,48 @@ export function FieldView(props: FieldViewProps) {
         {label}
         {symbol && <span className="unseen">, {symbol}</span>}
       </label>
-      <div className="controls">
-        <input
-          className="slider"
-          part="slider"
-          type="range"
-          aria-label={label}
-          aria-valuetext={written}
-          min={unit.from}
-          max={unit.to}
-          step={unit.step}
-          value={shown}
-          onInput={({ currentTarget }) => onSlide(currentTarget.valueAsNumber)}
-        />
-        <input
-          className="number"
-          part="number"
-          id={`${id}number`}
-          type="text"
-          inputMode="decimal"
-          autoComplete="off"
-          spellCheck={false}
-          value={field.text}
-          aria-invalid={problem !== null}
-          aria-describedby={problem === null ? undefined : `${id}problem`}
-          onInput={({ currentTarget }) => onType(currentTarget.value)}
-        />
-        {kind.units.length > 1 ? (
-          <select
-            className="unit"
-            part="unit"
-            aria-label={messages.unitOf(label)}
-            value={unit.id ?? ""}
-            onChange={({ currentTarget }) => onUnit(currentTarget.value)}
-          >
-            {kind.units.map((each) => (
-              <option key={each.id} value={each.id ?? ""}>
-                {symbolOf(each)}
-              </option>
-            ))}
-          </select>
-        ) : (
-          <span className="unit" />
-        )}
-      </div>
+      <input
+        className="number"
+        part="number"
+        id={`${id}number`}
+        type="text"
+        inputMode="decimal"
+        autoComplete="off"
+        spellCheck={false}
+        value={field.text}
+        aria-invalid={problem !== null}
+        aria-describedby={problem === null ? undefined : `${id}problem`}
+        onInput={({ currentTarget }) => onType(currentTarget.value)}
+      />
+      {kind.units.length > 1 ? (
+        <select
+          className="unit"
+          part="unit"
+          aria-label={messages.unitOf(label)}
+          value={unit.id ?? ""}
+          onChange={({ currentTarget }) => onUnit(currentTarget.value)}
+        >
+          {kind.units.map((each) => (
+            <option key={each.id} value={each.id ?? ""}>
+              {symbolOf(each)}
+            </option>
+          ))}
+        </select>
+      ) : (
+        <span className="unit" />
+      )}
+      <input
+        className="slider"
+        part="slider"
+        type="range"
+        aria-label={label}
+        aria-valuetext={written}
+        min={unit.from}
+        max={unit.to}
+        step={unit.step}
+        value={shown}
+        onInput={({ currentTarget }) => onSlide(currentTarget.valueAsNumber)}
+      />
       {problem !== null && (
         <p className="problem" part="problem" id={`${id}problem`}>
           {problem}

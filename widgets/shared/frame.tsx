@@ -19,7 +19,15 @@ export function Frame({ title, locale, messages, shown, session, children }: Fra
   const state = useSessionState(session)
   const { link, theme } = shown.settings ?? {}
   return (
-    <section className="widget" part="widget" data-theme={theme} lang={locale.tag} aria-labelledby={id}>
+    // Focusable, but not by Tab: a click on the answer would else go to the first field and open a phone's keyboard.
+    <section
+      className="widget"
+      part="widget"
+      data-theme={theme}
+      lang={locale.tag}
+      aria-labelledby={id}
+      tabIndex={-1}
+    >
       <header className="header" part="header">
         <h2 className="title" part="title" id={id}>
           {title}

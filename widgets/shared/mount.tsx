@@ -17,8 +17,8 @@ export interface Part {
   readonly messages: unknown
 }
 
-/** Shows something in an element; resolves to how it is taken away again. */
-export type Mount = (host: HTMLElement, mounting: Mounting) => Promise<() => void>
+/** Shows something in an element, until the signal says that it is over. */
+export type Mount = (host: HTMLElement, mounting: Mounting) => Promise<void>
 
 /** What the loader hands over with an element. */
 export interface Mounting {
@@ -26,6 +26,8 @@ export interface Mounting {
   /** The widget's address in the API. */
   readonly widgetUrl: string
   readonly load: Load
+  /** Aborted when the element has gone or is to show something else; perhaps before anything was shown. */
+  readonly ending: AbortSignal
 }
 
 /** What every calculator is given. */
@@ -41,9 +43,10 @@ declare const CATALOGUES: Readonly<Record<Language, Address>>
 
 /** How a calculator is shown in an element's shadow tree. */
 export function mountOf<Messages>(Calculator: ComponentType<CalculatorProps<Messages>>): Mount {
-  return async (host, { shown, widgetUrl, load }) => {
+  return async (host, { shown, widgetUrl, load, ending }) => {
     const locale = localeOf(host, shown)
     const { messages } = await load(CATALOGUES[locale.language])
+    if (ending.aborted) return
     const shadow = host.shadowRoot ?? host.attachShadow({ mode: "open", delegatesFocus: true })
     const sheet = new CSSStyleSheet()
     sheet.replaceSync(css)
@@ -57,7 +60,7 @@ export function mountOf<Messages>(Calculator: ComponentType<CalculatorProps<Mess
         messages={messages as Messages}
       />,
     )
-    return () => root.unmount()
+    ending.addEventListener("abort", () => root.unmount())
   }
 }
 

@@ -27,12 +27,15 @@ export interface Co2LevelMessages {
   readonly sentence: (words: ReadingWords) => string
   readonly setPoint: (words: { target: string; ph: string }) => string
   readonly setPointInterval: (words: { low: string; high: string }) => string
+  readonly mapTitle: string
+  /** The table that says what the map shows. */
+  readonly tableTitle: string
   readonly measuredTitle: string
   readonly phMeter: string
   readonly phMeters: Readonly<Record<PhMeter, string>>
   readonly khTest: string
   readonly khTests: Readonly<Record<KhTest, string>>
-  /** By the caution's code; `livestock` by what its upper bound means. */
+  /** By the caution's code; `livestock_…` by the band that the upper end lies in. */
   readonly cautions: Readonly<Record<string, (words: CautionWords) => string>>
   /** Why pH and KH cannot be so together, by the field that has to change. */
   readonly impossible: Readonly<Record<"ph" | "kh_dkh", string>>

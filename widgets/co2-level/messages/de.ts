@@ -10,10 +10,12 @@ export const messages: Co2LevelMessages = {
   interval: ({ low, high }) => (low === null ? `höchstens ${high} mg/L` : `zwischen ${low} und ${high} mg/L`),
   sentence: ({ ph, kh, temperature, co2, low, high, level }) =>
     `Bei pH ${ph}, ${kh} und ${temperature} enthält das Wasser etwa ${co2} mg/L CO2, ` +
-    `${low === null ? `höchstens aber ${high} mg/L` : `mit 95 % Sicherheit zwischen ${low} und ${high} mg/L`}. ` +
+    `${low === null ? `höchstens aber ${high} mg/L` : `mit 95\u00a0% Sicherheit zwischen ${low} und ${high} mg/L`}. ` +
     `Nach dem oberen Ende beurteilt ist das ${level}.`,
   setPoint: ({ target, ph }) => `Für ${target} mg/L den Regler auf pH ${ph} stellen.`,
   setPointInterval: ({ low, high }) => `Ihr Messgerät kann dann zwischen ${low} und ${high} anzeigen.`,
+  mapTitle: "Wo dieses Wasser liegt",
+  tableTitle: "Der pH für jeden CO2-Gehalt bei dieser KH",
   measuredTitle: "So haben Sie gemessen",
   phMeter: "pH gemessen mit",
   phMeters: {
@@ -24,14 +26,14 @@ export const messages: Co2LevelMessages = {
   khTest: "KH gemessen mit",
   khTests: { fine: "Tropfentest, 0,5 dKH je Tropfen", coarse: "Tropfentest, 1 dKH je Tropfen" },
   cautions: {
-    livestock_info: ({ high }) =>
+    livestock_30: ({ high }) =>
       `Es können bis zu ${high} mg/L CO2 sein. Gesunde Fische vertragen das meist; Sauerstoffmangel, die Nacht und empfindliche Arten ändern das.`,
-    livestock_warning: ({ high }) =>
+    livestock_40: ({ high }) =>
       `Es können bis zu ${high} mg/L CO2 sein, mehr als die 30 mg/L, die man für Pflanzenbecken anstrebt. Messen Sie auf einem zweiten Weg, bevor Sie mehr Gas geben.`,
-    livestock_strong: ({ high }) =>
+    livestock_60: ({ high }) =>
       `Es können bis zu ${high} mg/L CO2 sein. Über 40 mg/L leiden viele Fische und Garnelen: weniger Gas geben, belüften und auf Luftschnappen und schnelle Atmung achten.`,
-    livestock_danger: ({ high }) =>
-      `Es können bis zu ${high} mg/L CO2 sein; das kann töten. Sind Tiere im Becken, das Gas sofort abstellen und belüften.`,
+    livestock_above: ({ high }) =>
+      `Es können bis zu ${high} mg/L CO2 sein; das kann töten. Sind Tiere im Becken, das Gas abstellen und belüften, bis eine sicherere Messung weniger zeigt.`,
     raise_slowly: () =>
       "CO2 über mehrere Tage in kleinen Schritten erhöhen und die Tiere nach jedem Schritt beobachten. Schnappen sie nach Luft oder liegen sie still, das Gas abstellen und belüften.",
     upper_bound_only: () =>

@@ -14,24 +14,26 @@ export const messages: Co2LevelMessages = {
   interval: ({ low, high }) => (low === null ? `at most ${high} mg/L` : `between ${low} and ${high} mg/L`),
   sentence: ({ ph, kh, temperature, co2, low, high, level }) =>
     `At pH ${ph}, ${kh} and ${temperature} the water holds about ${co2} mg/L CO2, ` +
-    `${low === null ? `and ${high} mg/L at most` : `and with 95 % certainty between ${low} and ${high} mg/L`}. ` +
+    `${low === null ? `and ${high} mg/L at most` : `and with 95\u00a0% certainty between ${low} and ${high} mg/L`}. ` +
     `Judged by the upper end, that is ${level}.`,
   setPoint: ({ target, ph }) => `For ${target} mg/L, set the controller to pH ${ph}.`,
   setPointInterval: ({ low, high }) => `Your meter may then read anything from ${low} to ${high}.`,
+  mapTitle: "Where this water lies",
+  tableTitle: "The pH for each CO2 level at this KH",
   measuredTitle: "How you measured",
   phMeter: "pH measured with",
   phMeters: { bench: "a bench meter, just calibrated", pen: "a pen or probe", liquid: "a liquid test" },
   khTest: "KH measured with",
   khTests: { fine: "a drop test, 0.5 dKH a drop", coarse: "a drop test, 1 dKH a drop" },
   cautions: {
-    livestock_info: ({ high }) =>
+    livestock_30: ({ high }) =>
       `CO2 may be as high as ${high} mg/L. Healthy fish usually bear that; low oxygen, the night and sensitive species change it.`,
-    livestock_warning: ({ high }) =>
+    livestock_40: ({ high }) =>
       `CO2 may be as high as ${high} mg/L, above the 30 mg/L that planted tanks aim at. Measure in a second way before you add gas.`,
-    livestock_strong: ({ high }) =>
+    livestock_60: ({ high }) =>
       `CO2 may be as high as ${high} mg/L. Above 40 mg/L many fish and shrimp suffer: give less gas, aerate, and watch for gasping at the surface and fast breathing.`,
-    livestock_danger: ({ high }) =>
-      `CO2 may be as high as ${high} mg/L, which can kill. With animals in the tank stop the gas and aerate now.`,
+    livestock_above: ({ high }) =>
+      `CO2 may be as high as ${high} mg/L, which can kill. With animals in the tank stop the gas and aerate until a surer reading shows less.`,
     raise_slowly: () =>
       "Raise CO2 in small steps over several days and watch the animals after each step. If they gasp or lie still, stop the gas and aerate.",
     upper_bound_only: () =>

@@ -14,10 +14,12 @@ export const messages: Co2LevelMessages = {
   interval: ({ low, high }) => (low === null ? `como máximo ${high} mg/L` : `entre ${low} y ${high} mg/L`),
   sentence: ({ ph, kh, temperature, co2, low, high, level }) =>
     `Con pH ${ph}, ${kh} y ${temperature} el agua contiene unos ${co2} mg/L de CO2, ` +
-    `${low === null ? `y como máximo ${high} mg/L` : `y con un 95 % de certeza entre ${low} y ${high} mg/L`}. ` +
-    `Juzgado por el extremo superior, el nivel es ${level}.`,
+    `${low === null ? `y como máximo ${high} mg/L` : `y con un 95\u00a0% de certeza entre ${low} y ${high} mg/L`}. ` +
+    `Nivel según el extremo superior: ${level}.`,
   setPoint: ({ target, ph }) => `Para ${target} mg/L, ajuste el controlador a pH ${ph}.`,
   setPointInterval: ({ low, high }) => `Su medidor puede marcar entonces entre ${low} y ${high}.`,
+  mapTitle: "Dónde está esta agua",
+  tableTitle: "El pH de cada nivel de CO2 con esta KH",
   measuredTitle: "Cómo ha medido",
   phMeter: "pH medido con",
   phMeters: {
@@ -28,14 +30,14 @@ export const messages: Co2LevelMessages = {
   khTest: "KH medida con",
   khTests: { fine: "test de gotas, 0,5 dKH por gota", coarse: "test de gotas, 1 dKH por gota" },
   cautions: {
-    livestock_info: ({ high }) =>
+    livestock_30: ({ high }) =>
       `Puede haber hasta ${high} mg/L de CO2. Los peces sanos suelen tolerarlo; la falta de oxígeno, la noche y las especies sensibles lo cambian.`,
-    livestock_warning: ({ high }) =>
+    livestock_40: ({ high }) =>
       `Puede haber hasta ${high} mg/L de CO2, más de los 30 mg/L que se buscan en un acuario plantado. Mida de otra manera antes de añadir gas.`,
-    livestock_strong: ({ high }) =>
+    livestock_60: ({ high }) =>
       `Puede haber hasta ${high} mg/L de CO2. Por encima de 40 mg/L muchos peces y gambas sufren: dé menos gas, airee y vigile si boquean en la superficie o respiran deprisa.`,
-    livestock_danger: ({ high }) =>
-      `Puede haber hasta ${high} mg/L de CO2, lo que puede matar. Si hay animales en el acuario, corte el gas y airee ahora mismo.`,
+    livestock_above: ({ high }) =>
+      `Puede haber hasta ${high} mg/L de CO2, lo que puede matar. Si hay animales en el acuario, corte el gas y airee hasta que una medida más segura muestre menos.`,
     raise_slowly: () =>
       "Suba el CO2 en pasos pequeños durante varios días y observe a los animales después de cada paso. Si boquean o se quedan quietos, corte el gas y airee.",
     upper_bound_only: () =>

@@ -14,20 +14,22 @@ export const messages: Co2LevelMessages = {
     `上限で判断すると「${level}」です。`,
   setPoint: ({ target, ph }) => `${target} mg/Lにするには、コントローラーをpH ${ph}に設定します。`,
   setPointInterval: ({ low, high }) => `そのとき測定器の表示は${low}～${high}の間になります。`,
+  mapTitle: "この水の位置",
+  tableTitle: "このKHでのCO2濃度ごとのpH",
   measuredTitle: "測定の方法",
   phMeter: "pHの測定",
   phMeters: { bench: "校正したての卓上pH計", pen: "ペン型またはプローブ", liquid: "液体試薬" },
   khTest: "KHの測定",
   khTests: { fine: "滴定試薬（1滴0.5 dKH）", coarse: "滴定試薬（1滴1 dKH）" },
   cautions: {
-    livestock_info: ({ high }) =>
+    livestock_30: ({ high }) =>
       `CO2は${high} mg/Lに達している可能性があります。健康な魚は通常耐えられますが、酸素不足や夜間、敏感な種では異なります。`,
-    livestock_warning: ({ high }) =>
+    livestock_40: ({ high }) =>
       `CO2は${high} mg/Lに達している可能性があり、水草水槽の目安の30 mg/Lを超えます。添加量を増やす前に別の方法でも測ってください。`,
-    livestock_strong: ({ high }) =>
+    livestock_60: ({ high }) =>
       `CO2は${high} mg/Lに達している可能性があります。40 mg/Lを超えると多くの魚やエビが苦しみます。添加を減らし、エアレーションをして、鼻上げや速い呼吸に注意してください。`,
-    livestock_danger: ({ high }) =>
-      `CO2は${high} mg/Lに達している可能性があり、死に至ることがあります。生き物がいる場合は、すぐに添加を止めてエアレーションをしてください。`,
+    livestock_above: ({ high }) =>
+      `CO2は${high} mg/Lに達している可能性があり、死に至ることがあります。生き物がいる場合は添加を止め、より確かな測定で下がったとわかるまでエアレーションをしてください。`,
     raise_slowly: () =>
       "CO2は数日かけて少しずつ増やし、そのたびに生き物を観察してください。鼻上げや動かない様子が見られたら、添加を止めてエアレーションをしてください。",
     upper_bound_only: () =>
