@@ -134,12 +134,9 @@ function webhookOf(type: string, event: (typeof webhookEvents)[keyof typeof webh
   const headers = z.object({
     "webhook-id": z.string().meta({ description: "Id of the event, the same whenever it is sent again" }),
     "webhook-timestamp": z.string().meta({ description: "When this attempt was made, in Unix seconds" }),
-    "webhook-signature": z
-      .string()
-      .meta({
-        description:
-          "`v1,` and HMAC-SHA-256 of `id.timestamp.body` in base64; two while a secret is replaced",
-      }),
+    "webhook-signature": z.string().meta({
+      description: "`v1,` and the HMAC-SHA-256 of `id.timestamp.body` in base64; two during a rotation",
+    }),
   })
   const schema = z.object({ type: z.literal(type), timestamp: z.iso.datetime(), data: event.data })
   const example = { type, timestamp: "2026-12-01T09:30:00.000Z", data: event.example }

@@ -269,6 +269,66 @@ export interface paths {
         patch?: never;
         trace?: never;
     };
+    "/flow/operating-point": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        get?: never;
+        put?: never;
+        /**
+         * What a filter pushes through its loop, and where its head goes
+         * @description Needs a key with the scope `calculate`. Costs 2 units.
+         */
+        post: operations["flowOperatingPoint"];
+        delete?: never;
+        options?: never;
+        head?: never;
+        patch?: never;
+        trace?: never;
+    };
+    "/flow/reactor": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        get?: never;
+        put?: never;
+        /**
+         * Whether a filter drives a reactor, with every reason
+         * @description Needs a key with the scope `calculate`. Costs 2 units.
+         */
+        post: operations["flowReactor"];
+        delete?: never;
+        options?: never;
+        head?: never;
+        patch?: never;
+        trace?: never;
+    };
+    "/flow/clogging": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        get?: never;
+        put?: never;
+        /**
+         * Flow and verdict from a clean filter to a blocked one
+         * @description Needs a key with the scope `calculate`. Costs 2 units.
+         */
+        post: operations["flowClogging"];
+        delete?: never;
+        options?: never;
+        head?: never;
+        patch?: never;
+        trace?: never;
+    };
     "/batch": {
         parameters: {
             query?: never;
@@ -786,6 +846,18 @@ export interface components {
             }[];
         } & {
             [key: string]: unknown;
+        };
+        /**
+         * @description The worst of the reasons
+         * @enum {string}
+         */
+        Verdict: "suitable" | "marginal" | "unsuitable";
+        Reason: {
+            criterion: string;
+            verdict: components["schemas"]["Verdict"];
+            /** @description What was found, in the unit of the message */
+            value: number;
+            message: string;
         };
         WebhookEndpoint: {
             /** @description Id of the endpoint */
@@ -6877,6 +6949,1881 @@ export interface operations {
             };
         };
     };
+    flowOperatingPoint: {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        requestBody: {
+            content: {
+                /**
+                 * @example {
+                 *       "pump": {
+                 *         "max_flow_l_h": 1000,
+                 *         "max_head_m": 1.6
+                 *       },
+                 *       "hose": {
+                 *         "inner_diameter_mm": 16,
+                 *         "length_m": 3
+                 *       },
+                 *       "elements": [
+                 *         {
+                 *           "kind": "intake_strainer"
+                 *         },
+                 *         {
+                 *           "kind": "barb",
+                 *           "count": 4
+                 *         },
+                 *         {
+                 *           "kind": "quick_release"
+                 *         },
+                 *         {
+                 *           "kind": "bend",
+                 *           "count": 4
+                 *         },
+                 *         {
+                 *           "kind": "reactor"
+                 *         },
+                 *         {
+                 *           "kind": "lily_outflow"
+                 *         }
+                 *       ],
+                 *       "volume_l": 180
+                 *     }
+                 */
+                "application/json": {
+                    pump: {
+                        /** @description Pump flow at no head, in L/h */
+                        max_flow_l_h: number;
+                        /** @description Pump head at no flow, in m */
+                        max_head_m: number;
+                        /**
+                         * @description Pump speed over its full speed
+                         * @default 1
+                         */
+                        speed_ratio?: number;
+                    } | {
+                        points: {
+                            /** @description Flow of water, in L/h */
+                            flow_l_h: number;
+                            /** @description Head of water, in m */
+                            head_m: number;
+                        }[];
+                        /**
+                         * @description Pump speed over its full speed
+                         * @default 1
+                         */
+                        speed_ratio?: number;
+                    };
+                    hose: {
+                        /** @description Inner diameter, in mm */
+                        inner_diameter_mm: number;
+                        /** @description Length of hose, in m */
+                        length_m: number;
+                        /**
+                         * @description Roughness of the hose's inner wall, in mm
+                         * @default 0.0015
+                         */
+                        roughness_mm?: number;
+                        /**
+                         * @description Friction of the hose over that of a smooth one: 1 smooth, about 2.5 corrugated
+                         * @default 1
+                         */
+                        corrugation_factor?: number;
+                    };
+                    /** @description The return side, where its bore differs */
+                    return_hose?: {
+                        /** @description Inner diameter, in mm */
+                        inner_diameter_mm: number;
+                        /** @description Length of hose, in m */
+                        length_m: number;
+                        /**
+                         * @description Roughness of the hose's inner wall, in mm
+                         * @default 0.0015
+                         */
+                        roughness_mm?: number;
+                        /**
+                         * @description Friction of the hose over that of a smooth one: 1 smooth, about 2.5 corrugated
+                         * @default 1
+                         */
+                        corrugation_factor?: number;
+                    };
+                    elements: {
+                        /** @enum {string} */
+                        kind: "intake_strainer" | "intake_pipe" | "intake_flush" | "intake_rounded" | "barb" | "expansion" | "contraction" | "elbow" | "bend" | "quick_release" | "lily_outflow" | "spray_bar" | "exit" | "heater" | "uv" | "inline_diffuser" | "reactor" | "reactor_with_internals" | "other";
+                        /** @description Loss coefficient K in h = K v²/2g */
+                        k?: number;
+                        /** @description Inner diameter, in mm */
+                        inner_diameter_mm?: number;
+                        /** @description Whether it sits in the return hose */
+                        in_return?: boolean;
+                        /** @description How many of them */
+                        count?: number;
+                        /** @description Holes of a spray bar */
+                        hole_count?: number;
+                        /** @description Diameter of a spray bar's hole, in mm */
+                        hole_diameter_mm?: number;
+                    }[];
+                    /** @description Volume of the water, in L */
+                    volume_l?: number;
+                    /**
+                     * @description Water temperature, in °C
+                     * @default 25
+                     */
+                    temperature_c?: number;
+                    /**
+                     * @description State of the filter media: 0 clean, 0.3 loaded, 0.7 due for cleaning, 1 blocked
+                     * @default 0
+                     */
+                    clogging?: number;
+                    /**
+                     * @description Height of the outflow above the water, in m
+                     * @default 0
+                     */
+                    lift_m?: number;
+                    /**
+                     * @description Share of the advertised flow with clean media and no hose; 1 if advertised with media
+                     * @default 0.8
+                     */
+                    clean_media_fraction?: number;
+                };
+            };
+        };
+        responses: {
+            /** @description The answer. */
+            200: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    /**
+                     * @example {
+                     *       "result": {
+                     *         "flow_l_h": 567.652,
+                     *         "velocity_m_s": 0.784241,
+                     *         "reynolds": 14057.1,
+                     *         "head_m": 0.915706,
+                     *         "head_budget": [
+                     *           {
+                     *             "element": "media",
+                     *             "head_m": 0.28126
+                     *           },
+                     *           {
+                     *             "element": "hose",
+                     *             "head_m": 0.167212
+                     *           },
+                     *           {
+                     *             "element": "intake_strainer",
+                     *             "head_m": 0.062716
+                     *           },
+                     *           {
+                     *             "element": "barb",
+                     *             "head_m": 0.100346
+                     *           },
+                     *           {
+                     *             "element": "quick_release",
+                     *             "head_m": 0.094074
+                     *           },
+                     *           {
+                     *             "element": "bend",
+                     *             "head_m": 0.0376296
+                     *           },
+                     *           {
+                     *             "element": "reactor",
+                     *             "head_m": 0.125432
+                     *           },
+                     *           {
+                     *             "element": "lily_outflow",
+                     *             "head_m": 0.047037
+                     *           }
+                     *         ],
+                     *         "turnover_per_h": 3.15362,
+                     *         "turnover_level": "acceptable",
+                     *         "clean_flow_l_h": 567.652,
+                     *         "due_flow_l_h": 397.873,
+                     *         "hoses": [
+                     *           {
+                     *             "hose": "hose",
+                     *             "velocity_m_s": 0.784241,
+                     *             "reynolds": 14057.1,
+                     *             "regime": "turbulent"
+                     *           }
+                     *         ],
+                     *         "pump_curve": [
+                     *           {
+                     *             "flow_l_h": 0,
+                     *             "head_m": 1.6
+                     *           },
+                     *           {
+                     *             "flow_l_h": 50,
+                     *             "head_m": 1.58211
+                     *           },
+                     *           {
+                     *             "flow_l_h": 100,
+                     *             "head_m": 1.5494
+                     *           },
+                     *           {
+                     *             "flow_l_h": 150,
+                     *             "head_m": 1.50705
+                     *           },
+                     *           {
+                     *             "flow_l_h": 200,
+                     *             "head_m": 1.45689
+                     *           },
+                     *           {
+                     *             "flow_l_h": 250,
+                     *             "head_m": 1.4
+                     *           },
+                     *           {
+                     *             "flow_l_h": 300,
+                     *             "head_m": 1.33709
+                     *           },
+                     *           {
+                     *             "flow_l_h": 350,
+                     *             "head_m": 1.2687
+                     *           },
+                     *           {
+                     *             "flow_l_h": 400,
+                     *             "head_m": 1.19523
+                     *           },
+                     *           {
+                     *             "flow_l_h": 450,
+                     *             "head_m": 1.11701
+                     *           },
+                     *           {
+                     *             "flow_l_h": 500,
+                     *             "head_m": 1.03431
+                     *           },
+                     *           {
+                     *             "flow_l_h": 550,
+                     *             "head_m": 0.947375
+                     *           },
+                     *           {
+                     *             "flow_l_h": 600,
+                     *             "head_m": 0.856387
+                     *           },
+                     *           {
+                     *             "flow_l_h": 650,
+                     *             "head_m": 0.761525
+                     *           },
+                     *           {
+                     *             "flow_l_h": 700,
+                     *             "head_m": 0.662941
+                     *           },
+                     *           {
+                     *             "flow_l_h": 750,
+                     *             "head_m": 0.56077
+                     *           },
+                     *           {
+                     *             "flow_l_h": 800,
+                     *             "head_m": 0.455133
+                     *           },
+                     *           {
+                     *             "flow_l_h": 850,
+                     *             "head_m": 0.346142
+                     *           },
+                     *           {
+                     *             "flow_l_h": 900,
+                     *             "head_m": 0.233896
+                     *           },
+                     *           {
+                     *             "flow_l_h": 950,
+                     *             "head_m": 0.118487
+                     *           },
+                     *           {
+                     *             "flow_l_h": 1000,
+                     *             "head_m": 0
+                     *           }
+                     *         ],
+                     *         "loop_curve": [
+                     *           {
+                     *             "flow_l_h": 0,
+                     *             "head_m": 0
+                     *           },
+                     *           {
+                     *             "flow_l_h": 50,
+                     *             "head_m": 0.0225763
+                     *           },
+                     *           {
+                     *             "flow_l_h": 100,
+                     *             "head_m": 0.0545545
+                     *           },
+                     *           {
+                     *             "flow_l_h": 150,
+                     *             "head_m": 0.103411
+                     *           },
+                     *           {
+                     *             "flow_l_h": 200,
+                     *             "head_m": 0.161299
+                     *           },
+                     *           {
+                     *             "flow_l_h": 250,
+                     *             "head_m": 0.229661
+                     *           },
+                     *           {
+                     *             "flow_l_h": 300,
+                     *             "head_m": 0.308917
+                     *           },
+                     *           {
+                     *             "flow_l_h": 350,
+                     *             "head_m": 0.398987
+                     *           },
+                     *           {
+                     *             "flow_l_h": 400,
+                     *             "head_m": 0.499808
+                     *           },
+                     *           {
+                     *             "flow_l_h": 450,
+                     *             "head_m": 0.611328
+                     *           },
+                     *           {
+                     *             "flow_l_h": 500,
+                     *             "head_m": 0.733503
+                     *           },
+                     *           {
+                     *             "flow_l_h": 550,
+                     *             "head_m": 0.866296
+                     *           },
+                     *           {
+                     *             "flow_l_h": 600,
+                     *             "head_m": 1.00967
+                     *           },
+                     *           {
+                     *             "flow_l_h": 650,
+                     *             "head_m": 1.16361
+                     *           },
+                     *           {
+                     *             "flow_l_h": 700,
+                     *             "head_m": 1.32807
+                     *           },
+                     *           {
+                     *             "flow_l_h": 750,
+                     *             "head_m": 1.50303
+                     *           },
+                     *           {
+                     *             "flow_l_h": 800,
+                     *             "head_m": 1.68849
+                     *           },
+                     *           {
+                     *             "flow_l_h": 850,
+                     *             "head_m": 1.8844
+                     *           },
+                     *           {
+                     *             "flow_l_h": 900,
+                     *             "head_m": 2.09076
+                     *           },
+                     *           {
+                     *             "flow_l_h": 950,
+                     *             "head_m": 2.30756
+                     *           },
+                     *           {
+                     *             "flow_l_h": 1000,
+                     *             "head_m": 2.53476
+                     *           }
+                     *         ]
+                     *       },
+                     *       "uncertainty": {
+                     *         "flow_low_l_h": 485.005,
+                     *         "flow_high_l_h": 613.24,
+                     *         "curve_low_l_h": 533.957,
+                     *         "curve_high_l_h": 586.823,
+                     *         "fittings_low_l_h": 492.186,
+                     *         "fittings_high_l_h": 609.013
+                     *       },
+                     *       "cautions": [
+                     *         {
+                     *           "code": "real_flow_below_advertised",
+                     *           "severity": "info",
+                     *           "message": "The real flow is 568 L/h, 57 % of the pump's greatest flow: hoses, fittings and media take the rest. Time a bucket to confirm it."
+                     *         }
+                     *       ],
+                     *       "assumptions": [
+                     *         {
+                     *           "code": "clogging_scale",
+                     *           "message": "Clogging runs from 0 (clean) over 0.3 (loaded, twice the loss) and 0.7 (due for cleaning, five times) to 1 (blocked, ten times); 0 makes the media cost 1 times their clean loss. The scale is a convention, not a measurement."
+                     *         },
+                     *         {
+                     *           "code": "clean_media",
+                     *           "message": "With clean media and no hose the filter passes 80 % of its advertised flow (65 to 90 % is usual); a measured bucket flow replaces this."
+                     *         },
+                     *         {
+                     *           "code": "pump_curve_shape",
+                     *           "message": "Between its two advertised numbers the pump's curve is taken to fall with the power 1.5 of the flow; the interval spans 1 to 2. Points of the maker's curve replace this."
+                     *         },
+                     *         {
+                     *           "code": "typical_losses",
+                     *           "message": "Losses from the table of typical parts: intake strainer and pipe, hose barb, pair of quick-release taps, gentle 90° bend of the hose, reactor, empty tube, flared outflow with its bends."
+                     *         }
+                     *       ],
+                     *       "method": {
+                     *         "name": "Pump curve against loop curve",
+                     *         "version": "2026.12.1",
+                     *         "sources": [
+                     *           {
+                     *             "title": "Hagen 1839 and Poiseuille 1840, laminar flow in a tube",
+                     *             "year": 1840,
+                     *             "detail": "f = 64/Re, exact for developed laminar flow"
+                     *           },
+                     *           {
+                     *             "title": "Colebrook, Journal of the Institution of Civil Engineers 11:133-156",
+                     *             "year": 1939,
+                     *             "detail": "Turbulent friction between smooth and rough"
+                     *           },
+                     *           {
+                     *             "title": "Swamee & Jain, Journal of the Hydraulics Division ASCE 102:657-664",
+                     *             "year": 1976,
+                     *             "detail": "Explicit friction factor, the first guess of the Colebrook solution"
+                     *           },
+                     *           {
+                     *             "title": "Kell, Journal of Chemical and Engineering Data 20:97-105",
+                     *             "year": 1975,
+                     *             "detail": "Density of water, eq. 16"
+                     *           },
+                     *           {
+                     *             "title": "Pátek, Hrubý, Klomfar, Součková & Harvey, Journal of Physical and Chemical Reference Data 38:21-29",
+                     *             "year": 2009,
+                     *             "detail": "Viscosity of water at 0.1 MPa (IAPWS SR6-08)"
+                     *           },
+                     *           {
+                     *             "title": "Engineering judgement, no publication",
+                     *             "year": 2026,
+                     *             "detail": "A value with its range that the person may replace by a measurement"
+                     *           },
+                     *           {
+                     *             "title": "Crane, Technical Paper 410, Flow of Fluids",
+                     *             "year": 2009,
+                     *             "detail": "Loss coefficients of entrances, exits, contractions and bends"
+                     *           }
+                     *         ]
+                     *       },
+                     *       "input": {
+                     *         "pump": {
+                     *           "max_flow_l_h": 1000,
+                     *           "max_head_m": 1.6,
+                     *           "speed_ratio": 1
+                     *         },
+                     *         "hose": {
+                     *           "inner_diameter_mm": 16,
+                     *           "length_m": 3,
+                     *           "roughness_mm": 0.0015,
+                     *           "corrugation_factor": 1
+                     *         },
+                     *         "elements": [
+                     *           {
+                     *             "kind": "intake_strainer"
+                     *           },
+                     *           {
+                     *             "kind": "barb",
+                     *             "count": 4
+                     *           },
+                     *           {
+                     *             "kind": "quick_release"
+                     *           },
+                     *           {
+                     *             "kind": "bend",
+                     *             "count": 4
+                     *           },
+                     *           {
+                     *             "kind": "reactor"
+                     *           },
+                     *           {
+                     *             "kind": "lily_outflow"
+                     *           }
+                     *         ],
+                     *         "volume_l": 180,
+                     *         "temperature_c": 25,
+                     *         "clogging": 0,
+                     *         "lift_m": 0,
+                     *         "clean_media_fraction": 0.8
+                     *       }
+                     *     }
+                     */
+                    "application/json": {
+                        result: {
+                            /** @description Flow of water, in L/h */
+                            flow_l_h: number;
+                            /** @description Speed of the water in the hose, in m/s */
+                            velocity_m_s: number;
+                            /** @description Reynolds number in the hose */
+                            reynolds: number;
+                            /** @description Head of water, in m */
+                            head_m: number;
+                            /** @description Where the head goes; adds up to `head_m` */
+                            head_budget: {
+                                element: string;
+                                /** @description Head of water, in m */
+                                head_m: number;
+                            }[];
+                            /** @description Real flow over water volume, in 1/h */
+                            turnover_per_h?: number;
+                            /** @enum {string} */
+                            turnover_level?: "good" | "acceptable" | "low";
+                            /** @description Flow of water, in L/h */
+                            clean_flow_l_h: number;
+                            /** @description Flow of water, in L/h */
+                            due_flow_l_h: number;
+                            hoses: {
+                                /** @enum {string} */
+                                hose: "hose" | "return_hose";
+                                /** @description Speed of the water in the hose, in m/s */
+                                velocity_m_s: number;
+                                /** @description Reynolds number in the hose */
+                                reynolds: number;
+                                /** @enum {string} */
+                                regime: "laminar" | "transitional" | "turbulent";
+                            }[];
+                            pump_curve: {
+                                /** @description Flow of water, in L/h */
+                                flow_l_h: number;
+                                /** @description Head of water, in m */
+                                head_m: number;
+                            }[];
+                            loop_curve: {
+                                /** @description Flow of water, in L/h */
+                                flow_l_h: number;
+                                /** @description Head of water, in m */
+                                head_m: number;
+                            }[];
+                        };
+                        uncertainty: {
+                            /** @description Flow of water, in L/h */
+                            flow_low_l_h: number;
+                            /** @description Flow of water, in L/h */
+                            flow_high_l_h: number;
+                            /** @description Flow of water, in L/h */
+                            curve_low_l_h?: number;
+                            /** @description Flow of water, in L/h */
+                            curve_high_l_h?: number;
+                            /** @description Flow of water, in L/h */
+                            fittings_low_l_h: number;
+                            /** @description Flow of water, in L/h */
+                            fittings_high_l_h: number;
+                        };
+                        cautions: components["schemas"]["Caution"][];
+                        assumptions: components["schemas"]["Assumption"][];
+                        method: components["schemas"]["Method"];
+                        /** @description Your input with its defaults filled in */
+                        input: {
+                            [key: string]: unknown;
+                        };
+                    };
+                };
+            };
+            /** @description `key_in_url`: A key stands in the address. `malformed_json`: The body is not JSON. */
+            400: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `key_missing`: No key was sent. `key_unknown`: The key is not known. `key_revoked`: The key was revoked. `key_expired`: The key has expired. */
+            401: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `quota_reached`: The units of this period are used up. */
+            402: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `server_key_in_browser`: A server key was used from a browser. `origin_not_allowed`: The origin is not on the list. `address_not_allowed`: The network address is not on the list. `scope_missing`: The key lacks the scope. `account_suspended`: The account is suspended. */
+            403: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `not_found`: There is nothing here. */
+            404: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `method_not_allowed`: The method is not offered here. */
+            405: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `body_too_large`: The body is too large. */
+            413: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `media_type_unsupported`: The media type is not JSON. */
+            415: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `validation_failed`: The input is not valid. `out_of_domain`: The input is physically impossible or outside the method. */
+            422: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `rate_limited`: Too many calls. */
+            429: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `internal`: Something failed on our side. */
+            500: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `unavailable`: The service is resting for a moment. */
+            503: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+        };
+    };
+    flowReactor: {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        requestBody: {
+            content: {
+                /**
+                 * @example {
+                 *       "pump": {
+                 *         "max_flow_l_h": 1000,
+                 *         "max_head_m": 1.6
+                 *       },
+                 *       "hose": {
+                 *         "inner_diameter_mm": 16,
+                 *         "length_m": 3
+                 *       },
+                 *       "elements": [
+                 *         {
+                 *           "kind": "intake_strainer"
+                 *         },
+                 *         {
+                 *           "kind": "barb",
+                 *           "count": 4
+                 *         },
+                 *         {
+                 *           "kind": "quick_release"
+                 *         },
+                 *         {
+                 *           "kind": "bend",
+                 *           "count": 4
+                 *         },
+                 *         {
+                 *           "kind": "reactor"
+                 *         },
+                 *         {
+                 *           "kind": "lily_outflow"
+                 *         }
+                 *       ],
+                 *       "volume_l": 180,
+                 *       "reactor": {
+                 *         "body_diameter_mm": 60,
+                 *         "body_length_mm": 350
+                 *       },
+                 *       "feed_mg_min": 63
+                 *     }
+                 */
+                "application/json": {
+                    pump: {
+                        /** @description Pump flow at no head, in L/h */
+                        max_flow_l_h: number;
+                        /** @description Pump head at no flow, in m */
+                        max_head_m: number;
+                        /**
+                         * @description Pump speed over its full speed
+                         * @default 1
+                         */
+                        speed_ratio?: number;
+                    } | {
+                        points: {
+                            /** @description Flow of water, in L/h */
+                            flow_l_h: number;
+                            /** @description Head of water, in m */
+                            head_m: number;
+                        }[];
+                        /**
+                         * @description Pump speed over its full speed
+                         * @default 1
+                         */
+                        speed_ratio?: number;
+                    };
+                    hose: {
+                        /** @description Inner diameter, in mm */
+                        inner_diameter_mm: number;
+                        /** @description Length of hose, in m */
+                        length_m: number;
+                        /**
+                         * @description Roughness of the hose's inner wall, in mm
+                         * @default 0.0015
+                         */
+                        roughness_mm?: number;
+                        /**
+                         * @description Friction of the hose over that of a smooth one: 1 smooth, about 2.5 corrugated
+                         * @default 1
+                         */
+                        corrugation_factor?: number;
+                    };
+                    /** @description The return side, where its bore differs */
+                    return_hose?: {
+                        /** @description Inner diameter, in mm */
+                        inner_diameter_mm: number;
+                        /** @description Length of hose, in m */
+                        length_m: number;
+                        /**
+                         * @description Roughness of the hose's inner wall, in mm
+                         * @default 0.0015
+                         */
+                        roughness_mm?: number;
+                        /**
+                         * @description Friction of the hose over that of a smooth one: 1 smooth, about 2.5 corrugated
+                         * @default 1
+                         */
+                        corrugation_factor?: number;
+                    };
+                    elements: {
+                        /** @enum {string} */
+                        kind: "intake_strainer" | "intake_pipe" | "intake_flush" | "intake_rounded" | "barb" | "expansion" | "contraction" | "elbow" | "bend" | "quick_release" | "lily_outflow" | "spray_bar" | "exit" | "heater" | "uv" | "inline_diffuser" | "reactor" | "reactor_with_internals" | "other";
+                        /** @description Loss coefficient K in h = K v²/2g */
+                        k?: number;
+                        /** @description Inner diameter, in mm */
+                        inner_diameter_mm?: number;
+                        /** @description Whether it sits in the return hose */
+                        in_return?: boolean;
+                        /** @description How many of them */
+                        count?: number;
+                        /** @description Holes of a spray bar */
+                        hole_count?: number;
+                        /** @description Diameter of a spray bar's hole, in mm */
+                        hole_diameter_mm?: number;
+                    }[];
+                    /** @description Volume of the water, in L */
+                    volume_l?: number;
+                    /**
+                     * @description Water temperature, in °C
+                     * @default 25
+                     */
+                    temperature_c?: number;
+                    /**
+                     * @description State of the filter media: 0 clean, 0.3 loaded, 0.7 due for cleaning, 1 blocked
+                     * @default 0
+                     */
+                    clogging?: number;
+                    /**
+                     * @description Height of the outflow above the water, in m
+                     * @default 0
+                     */
+                    lift_m?: number;
+                    /**
+                     * @description Share of the advertised flow with clean media and no hose; 1 if advertised with media
+                     * @default 0.8
+                     */
+                    clean_media_fraction?: number;
+                    reactor: {
+                        /** @description Bore of the reactor's body, in mm */
+                        body_diameter_mm: number;
+                        /** @description Free length of the body, in mm */
+                        body_length_mm: number;
+                        /** @description Loss coefficient K in h = K v²/2g */
+                        k?: number;
+                        /** @description Bore of the reactor's inlet, in mm */
+                        nozzle_diameter_mm?: number;
+                        /**
+                         * @description Absolute pressure of the water in the reactor, in bar
+                         * @default 1.12
+                         */
+                        water_pressure_bar_abs?: number;
+                        /**
+                         * @description Share of the loop's flow that goes around the reactor
+                         * @default 0
+                         */
+                        bypass_fraction?: number;
+                        /**
+                         * @description Largest bubble that the inlet jet makes, in mm
+                         * @default 3
+                         */
+                        feed_bubble_diameter_mm?: number;
+                    };
+                    /** @description CO2 fed, in mg/min */
+                    feed_mg_min: number;
+                    /**
+                     * @description CO2 entering the reactor, in mg/L
+                     * @default 30
+                     */
+                    inlet_co2_mg_l?: number;
+                };
+            };
+        };
+        responses: {
+            /** @description The answer. */
+            200: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    /**
+                     * @example {
+                     *       "result": {
+                     *         "flow_l_h": 567.652,
+                     *         "flow_without_reactor_l_h": 596.982,
+                     *         "turnover_per_h": 3.15362,
+                     *         "body_velocity_m_s": 0.0557683,
+                     *         "nozzle_velocity_m_s": 1.22538,
+                     *         "bubble_rise_m_s": 0.250377,
+                     *         "required_length_m": 0.114618,
+                     *         "holds_bubbles": true,
+                     *         "outlet_co2_mg_l": 36.659,
+                     *         "outlet_saturation_ratio": 0.022846,
+                     *         "dissolution_fraction": 1,
+                     *         "minimum_flow_l_h": 370.597,
+                     *         "comfortable_flow_l_h": 463.247,
+                     *         "maximum_flow_l_h": 992.199,
+                     *         "limit": "reached",
+                     *         "limit_clogging": 0.776841,
+                     *         "fresh_cap_mg_min": 26.7126,
+                     *         "aged_cap_mg_min": 2.12955,
+                     *         "verdict": "suitable",
+                     *         "reasons": [
+                     *           {
+                     *             "criterion": "jet_velocity",
+                     *             "verdict": "suitable",
+                     *             "value": 1.22538,
+                     *             "message": "The inlet jet of 1.2 m/s breaks up the gas under the lid."
+                     *           },
+                     *           {
+                     *             "criterion": "carry_over",
+                     *             "verdict": "suitable",
+                     *             "value": 0.327481,
+                     *             "message": "At 0.056 m/s in the body a bubble needs 11 cm to dissolve, and it has 35 cm: none gets out."
+                     *           },
+                     *           {
+                     *             "criterion": "gas_capacity",
+                     *             "verdict": "suitable",
+                     *             "value": 0.374262,
+                     *             "message": "63 mg/min of gas asks for 0.37 L of bubbly water, and the body holds 0.99 L."
+                     *           },
+                     *           {
+                     *             "criterion": "flow_loss",
+                     *             "verdict": "suitable",
+                     *             "value": 0.0491311,
+                     *             "message": "The reactor takes 4.9 % of the flow."
+                     *           },
+                     *           {
+                     *             "criterion": "real_flow",
+                     *             "verdict": "suitable",
+                     *             "value": 567.652,
+                     *             "message": "The real flow is 568 L/h; a reactor wants at least 250, better 450."
+                     *           },
+                     *           {
+                     *             "criterion": "turnover",
+                     *             "verdict": "suitable",
+                     *             "value": 3.15362,
+                     *             "message": "The water passes the reactor 3.2 times an hour."
+                     *           },
+                     *           {
+                     *             "criterion": "water_volume",
+                     *             "verdict": "suitable",
+                     *             "value": 180,
+                     *             "message": "The tank holds 180 L; a reactor suits tanks from 80 L, better from 150."
+                     *           }
+                     *         ],
+                     *         "when_due": {
+                     *           "flow_l_h": 397.873,
+                     *           "verdict": "marginal",
+                     *           "reasons": [
+                     *             {
+                     *               "criterion": "jet_velocity",
+                     *               "verdict": "marginal",
+                     *               "value": 0.85888,
+                     *               "message": "The inlet jet of 0.86 m/s breaks up the gas only just; from 1 m/s it does so for sure. Expect noise when the filter clogs."
+                     *             },
+                     *             {
+                     *               "criterion": "carry_over",
+                     *               "verdict": "suitable",
+                     *               "value": 0.163831,
+                     *               "message": "At 0.039 m/s in the body a bubble needs 5.7 cm to dissolve, and it has 35 cm: none gets out."
+                     *             },
+                     *             {
+                     *               "criterion": "gas_capacity",
+                     *               "verdict": "suitable",
+                     *               "value": 0.374262,
+                     *               "message": "63 mg/min of gas asks for 0.37 L of bubbly water, and the body holds 0.99 L."
+                     *             },
+                     *             {
+                     *               "criterion": "flow_loss",
+                     *               "verdict": "suitable",
+                     *               "value": 0.0267628,
+                     *               "message": "The reactor takes 2.7 % of the flow."
+                     *             },
+                     *             {
+                     *               "criterion": "real_flow",
+                     *               "verdict": "marginal",
+                     *               "value": 397.873,
+                     *               "message": "The real flow is 398 L/h; a reactor wants at least 250, better 450."
+                     *             },
+                     *             {
+                     *               "criterion": "turnover",
+                     *               "verdict": "marginal",
+                     *               "value": 2.21041,
+                     *               "message": "The water passes the reactor 2.2 times an hour; from 3 on CO2 spreads evenly. Add a second filter or a circulation pump."
+                     *             },
+                     *             {
+                     *               "criterion": "water_volume",
+                     *               "verdict": "suitable",
+                     *               "value": 180,
+                     *               "message": "The tank holds 180 L; a reactor suits tanks from 80 L, better from 150."
+                     *             }
+                     *           ]
+                     *         }
+                     *       },
+                     *       "uncertainty": {
+                     *         "flow_low_l_h": 485.005,
+                     *         "flow_high_l_h": 613.24,
+                     *         "curve_low_l_h": 533.957,
+                     *         "curve_high_l_h": 586.823,
+                     *         "fittings_low_l_h": 492.186,
+                     *         "fittings_high_l_h": 609.013,
+                     *         "dissolution_fraction_low": 1
+                     *       },
+                     *       "cautions": [
+                     *         {
+                     *           "code": "bleed_air",
+                     *           "severity": "warning",
+                     *           "message": "Air that is trapped in the reactor never dissolves, since the tank's water is full of air already: bleed it at the start and after every cleaning, and mount the reactor upright."
+                     *         },
+                     *         {
+                     *           "code": "worse_when_clogged",
+                     *           "severity": "warning",
+                     *           "message": "After months without cleaning the flow falls to 398 L/h and the reactor becomes marginal. Clean the filter before the flow is down to 371 L/h, below which it grows noisy and gas-locks."
+                     *         },
+                     *         {
+                     *           "code": "real_flow_below_advertised",
+                     *           "severity": "info",
+                     *           "message": "The real flow is 568 L/h, 57 % of the pump's greatest flow: hoses, fittings and media take the rest. Time a bucket to confirm it."
+                     *         }
+                     *       ],
+                     *       "assumptions": [
+                     *         {
+                     *           "code": "clogging_scale",
+                     *           "message": "Clogging runs from 0 (clean) over 0.3 (loaded, twice the loss) and 0.7 (due for cleaning, five times) to 1 (blocked, ten times); 0 makes the media cost 1 times their clean loss. The scale is a convention, not a measurement."
+                     *         },
+                     *         {
+                     *           "code": "clean_media",
+                     *           "message": "With clean media and no hose the filter passes 80 % of its advertised flow (65 to 90 % is usual); a measured bucket flow replaces this."
+                     *         },
+                     *         {
+                     *           "code": "pump_curve_shape",
+                     *           "message": "Between its two advertised numbers the pump's curve is taken to fall with the power 1.5 of the flow; the interval spans 1 to 2. Points of the maker's curve replace this."
+                     *         },
+                     *         {
+                     *           "code": "typical_losses",
+                     *           "message": "Losses from the table of typical parts: intake strainer and pipe, hose barb, pair of quick-release taps, gentle 90° bend of the hose, reactor, empty tube, flared outflow with its bends."
+                     *         },
+                     *         {
+                     *           "code": "reactor_inlet",
+                     *           "message": "The reactor's inlet is 12.8 mm wide (0.8 of the hose if you did not say); its jet leaves no bubble above 3 mm whole."
+                     *         },
+                     *         {
+                     *           "code": "reactor_pressure",
+                     *           "message": "The water in the reactor stands at 1.12 bar absolute and enters with 30 mg/L CO2."
+                     *         },
+                     *         {
+                     *           "code": "jetting",
+                     *           "message": "Bubbles need 1.5 times the length of calm flow, since the jet stirs the body; two numbers with another shape of pump curve (exponent 1 to 2) move the flow by about 5 %."
+                     *         }
+                     *       ],
+                     *       "method": {
+                     *         "name": "Four criteria of a through-flow reactor",
+                     *         "version": "2026.12.1",
+                     *         "sources": [
+                     *           {
+                     *             "title": "Hagen 1839 and Poiseuille 1840, laminar flow in a tube",
+                     *             "year": 1840,
+                     *             "detail": "f = 64/Re, exact for developed laminar flow"
+                     *           },
+                     *           {
+                     *             "title": "Colebrook, Journal of the Institution of Civil Engineers 11:133-156",
+                     *             "year": 1939,
+                     *             "detail": "Turbulent friction between smooth and rough"
+                     *           },
+                     *           {
+                     *             "title": "Swamee & Jain, Journal of the Hydraulics Division ASCE 102:657-664",
+                     *             "year": 1976,
+                     *             "detail": "Explicit friction factor, the first guess of the Colebrook solution"
+                     *           },
+                     *           {
+                     *             "title": "Kell, Journal of Chemical and Engineering Data 20:97-105",
+                     *             "year": 1975,
+                     *             "detail": "Density of water, eq. 16"
+                     *           },
+                     *           {
+                     *             "title": "Pátek, Hrubý, Klomfar, Součková & Harvey, Journal of Physical and Chemical Reference Data 38:21-29",
+                     *             "year": 2009,
+                     *             "detail": "Viscosity of water at 0.1 MPa (IAPWS SR6-08)"
+                     *           },
+                     *           {
+                     *             "title": "Engineering judgement, no publication",
+                     *             "year": 2026,
+                     *             "detail": "A value with its range that the person may replace by a measurement"
+                     *           },
+                     *           {
+                     *             "title": "Crane, Technical Paper 410, Flow of Fluids",
+                     *             "year": 2009,
+                     *             "detail": "Loss coefficients of entrances, exits, contractions and bends"
+                     *           },
+                     *           {
+                     *             "title": "Biń, Chemical Engineering Science 48:3585-3630",
+                     *             "year": 1993,
+                     *             "detail": "Onset of gas entrainment by a plunging liquid jet, 0.8 to 1.0 m/s"
+                     *           },
+                     *           {
+                     *             "title": "Schiller & Naumann, Zeitschrift des Vereines Deutscher Ingenieure 77:318-320",
+                     *             "year": 1935,
+                     *             "detail": "Drag of a rigid sphere"
+                     *           },
+                     *           {
+                     *             "title": "Clift, Grace & Weber, Bubbles, Drops and Particles",
+                     *             "year": 1978,
+                     *             "detail": "Chapter 7: rise of bubbles in contaminated water (eqs 7-3 to 7-5)"
+                     *           },
+                     *           {
+                     *             "title": "Frössling, Gerlands Beiträge zur Geophysik 52:170-216",
+                     *             "year": 1938,
+                     *             "detail": "Mass transfer of a rigid sphere: Sh = 2 + 0.552 Re^(1/2) Sc^(1/3)"
+                     *           },
+                     *           {
+                     *             "title": "Jähne, Heinz & Dietrich, Journal of Geophysical Research 92(C10):10767-10776",
+                     *             "year": 1987,
+                     *             "detail": "Diffusivity of CO2 in water"
+                     *           },
+                     *           {
+                     *             "title": "Plummer & Busenberg, Geochimica et Cosmochimica Acta 46:1011-1040",
+                     *             "year": 1982,
+                     *             "detail": "K1, K2 and Henry's constant of CO2, 0-90 °C"
+                     *           }
+                     *         ]
+                     *       },
+                     *       "input": {
+                     *         "pump": {
+                     *           "max_flow_l_h": 1000,
+                     *           "max_head_m": 1.6,
+                     *           "speed_ratio": 1
+                     *         },
+                     *         "hose": {
+                     *           "inner_diameter_mm": 16,
+                     *           "length_m": 3,
+                     *           "roughness_mm": 0.0015,
+                     *           "corrugation_factor": 1
+                     *         },
+                     *         "elements": [
+                     *           {
+                     *             "kind": "intake_strainer"
+                     *           },
+                     *           {
+                     *             "kind": "barb",
+                     *             "count": 4
+                     *           },
+                     *           {
+                     *             "kind": "quick_release"
+                     *           },
+                     *           {
+                     *             "kind": "bend",
+                     *             "count": 4
+                     *           },
+                     *           {
+                     *             "kind": "reactor"
+                     *           },
+                     *           {
+                     *             "kind": "lily_outflow"
+                     *           }
+                     *         ],
+                     *         "volume_l": 180,
+                     *         "temperature_c": 25,
+                     *         "clogging": 0,
+                     *         "lift_m": 0,
+                     *         "clean_media_fraction": 0.8,
+                     *         "reactor": {
+                     *           "body_diameter_mm": 60,
+                     *           "body_length_mm": 350,
+                     *           "water_pressure_bar_abs": 1.12,
+                     *           "bypass_fraction": 0,
+                     *           "feed_bubble_diameter_mm": 3
+                     *         },
+                     *         "feed_mg_min": 63,
+                     *         "inlet_co2_mg_l": 30
+                     *       }
+                     *     }
+                     */
+                    "application/json": {
+                        result: {
+                            /** @description Flow of water, in L/h */
+                            flow_l_h: number;
+                            /** @description Flow of water, in L/h */
+                            flow_without_reactor_l_h: number;
+                            /** @description Real flow over water volume, in 1/h */
+                            turnover_per_h?: number;
+                            /** @enum {string} */
+                            turnover_level?: "good" | "acceptable" | "low";
+                            /** @description Water speed in the body, in m/s */
+                            body_velocity_m_s: number;
+                            /** @description Water speed in the inlet, in m/s */
+                            nozzle_velocity_m_s: number;
+                            /** @description Rise of the largest bubble, in m/s */
+                            bubble_rise_m_s: number;
+                            /** @description Length of hose, in m */
+                            required_length_m: number;
+                            holds_bubbles: boolean;
+                            /** @description CO2 leaving the reactor, in mg/L */
+                            outlet_co2_mg_l: number;
+                            /** @description CO2 leaving the reactor over what the water could hold at the reactor's pressure */
+                            outlet_saturation_ratio: number;
+                            /** @description Share of the gas dissolved */
+                            dissolution_fraction: number;
+                            /** @description Flow below which the inlet jet no longer breaks up the gas under the lid, in L/h */
+                            minimum_flow_l_h: number;
+                            /** @description Flow of water, in L/h */
+                            comfortable_flow_l_h: number;
+                            /** @description Flow of water, in L/h */
+                            maximum_flow_l_h: number;
+                            /**
+                             * @description Why there is a clogging at which the reactor gas-locks, or none
+                             * @enum {string}
+                             */
+                            limit: "reached" | "already" | "never" | "beyond";
+                            limit_clogging: number | null;
+                            /** @description CO2 fed, in mg/min */
+                            fresh_cap_mg_min: number;
+                            /** @description CO2 fed, in mg/min */
+                            aged_cap_mg_min: number;
+                            verdict: components["schemas"]["Verdict"];
+                            reasons: components["schemas"]["Reason"][];
+                            /** @description The same reactor when the filter is due for cleaning */
+                            when_due: {
+                                /** @description Flow of water, in L/h */
+                                flow_l_h: number;
+                                verdict: components["schemas"]["Verdict"];
+                                reasons: components["schemas"]["Reason"][];
+                            };
+                        };
+                        uncertainty: {
+                            /** @description Flow of water, in L/h */
+                            flow_low_l_h: number;
+                            /** @description Flow of water, in L/h */
+                            flow_high_l_h: number;
+                            /** @description Flow of water, in L/h */
+                            curve_low_l_h?: number;
+                            /** @description Flow of water, in L/h */
+                            curve_high_l_h?: number;
+                            /** @description Flow of water, in L/h */
+                            fittings_low_l_h: number;
+                            /** @description Flow of water, in L/h */
+                            fittings_high_l_h: number;
+                            /** @description Share of the gas dissolved */
+                            dissolution_fraction_low: number;
+                        };
+                        cautions: components["schemas"]["Caution"][];
+                        assumptions: components["schemas"]["Assumption"][];
+                        method: components["schemas"]["Method"];
+                        /** @description Your input with its defaults filled in */
+                        input: {
+                            [key: string]: unknown;
+                        };
+                    };
+                };
+            };
+            /** @description `key_in_url`: A key stands in the address. `malformed_json`: The body is not JSON. */
+            400: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `key_missing`: No key was sent. `key_unknown`: The key is not known. `key_revoked`: The key was revoked. `key_expired`: The key has expired. */
+            401: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `quota_reached`: The units of this period are used up. */
+            402: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `server_key_in_browser`: A server key was used from a browser. `origin_not_allowed`: The origin is not on the list. `address_not_allowed`: The network address is not on the list. `scope_missing`: The key lacks the scope. `account_suspended`: The account is suspended. */
+            403: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `not_found`: There is nothing here. */
+            404: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `method_not_allowed`: The method is not offered here. */
+            405: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `body_too_large`: The body is too large. */
+            413: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `media_type_unsupported`: The media type is not JSON. */
+            415: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `validation_failed`: The input is not valid. `out_of_domain`: The input is physically impossible or outside the method. */
+            422: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `rate_limited`: Too many calls. */
+            429: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `internal`: Something failed on our side. */
+            500: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `unavailable`: The service is resting for a moment. */
+            503: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+        };
+    };
+    flowClogging: {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        requestBody: {
+            content: {
+                /**
+                 * @example {
+                 *       "pump": {
+                 *         "max_flow_l_h": 1000,
+                 *         "max_head_m": 1.6
+                 *       },
+                 *       "hose": {
+                 *         "inner_diameter_mm": 16,
+                 *         "length_m": 3
+                 *       },
+                 *       "elements": [
+                 *         {
+                 *           "kind": "intake_strainer"
+                 *         },
+                 *         {
+                 *           "kind": "barb",
+                 *           "count": 4
+                 *         },
+                 *         {
+                 *           "kind": "quick_release"
+                 *         },
+                 *         {
+                 *           "kind": "bend",
+                 *           "count": 4
+                 *         },
+                 *         {
+                 *           "kind": "reactor"
+                 *         },
+                 *         {
+                 *           "kind": "lily_outflow"
+                 *         }
+                 *       ],
+                 *       "volume_l": 180,
+                 *       "reactor": {
+                 *         "body_diameter_mm": 60,
+                 *         "body_length_mm": 350
+                 *       },
+                 *       "feed_mg_min": 63
+                 *     }
+                 */
+                "application/json": {
+                    pump: {
+                        /** @description Pump flow at no head, in L/h */
+                        max_flow_l_h: number;
+                        /** @description Pump head at no flow, in m */
+                        max_head_m: number;
+                        /**
+                         * @description Pump speed over its full speed
+                         * @default 1
+                         */
+                        speed_ratio?: number;
+                    } | {
+                        points: {
+                            /** @description Flow of water, in L/h */
+                            flow_l_h: number;
+                            /** @description Head of water, in m */
+                            head_m: number;
+                        }[];
+                        /**
+                         * @description Pump speed over its full speed
+                         * @default 1
+                         */
+                        speed_ratio?: number;
+                    };
+                    hose: {
+                        /** @description Inner diameter, in mm */
+                        inner_diameter_mm: number;
+                        /** @description Length of hose, in m */
+                        length_m: number;
+                        /**
+                         * @description Roughness of the hose's inner wall, in mm
+                         * @default 0.0015
+                         */
+                        roughness_mm?: number;
+                        /**
+                         * @description Friction of the hose over that of a smooth one: 1 smooth, about 2.5 corrugated
+                         * @default 1
+                         */
+                        corrugation_factor?: number;
+                    };
+                    /** @description The return side, where its bore differs */
+                    return_hose?: {
+                        /** @description Inner diameter, in mm */
+                        inner_diameter_mm: number;
+                        /** @description Length of hose, in m */
+                        length_m: number;
+                        /**
+                         * @description Roughness of the hose's inner wall, in mm
+                         * @default 0.0015
+                         */
+                        roughness_mm?: number;
+                        /**
+                         * @description Friction of the hose over that of a smooth one: 1 smooth, about 2.5 corrugated
+                         * @default 1
+                         */
+                        corrugation_factor?: number;
+                    };
+                    elements: {
+                        /** @enum {string} */
+                        kind: "intake_strainer" | "intake_pipe" | "intake_flush" | "intake_rounded" | "barb" | "expansion" | "contraction" | "elbow" | "bend" | "quick_release" | "lily_outflow" | "spray_bar" | "exit" | "heater" | "uv" | "inline_diffuser" | "reactor" | "reactor_with_internals" | "other";
+                        /** @description Loss coefficient K in h = K v²/2g */
+                        k?: number;
+                        /** @description Inner diameter, in mm */
+                        inner_diameter_mm?: number;
+                        /** @description Whether it sits in the return hose */
+                        in_return?: boolean;
+                        /** @description How many of them */
+                        count?: number;
+                        /** @description Holes of a spray bar */
+                        hole_count?: number;
+                        /** @description Diameter of a spray bar's hole, in mm */
+                        hole_diameter_mm?: number;
+                    }[];
+                    /** @description Volume of the water, in L */
+                    volume_l?: number;
+                    /**
+                     * @description Water temperature, in °C
+                     * @default 25
+                     */
+                    temperature_c?: number;
+                    /**
+                     * @description State of the filter media: 0 clean, 0.3 loaded, 0.7 due for cleaning, 1 blocked
+                     * @default 0
+                     */
+                    clogging?: number;
+                    /**
+                     * @description Height of the outflow above the water, in m
+                     * @default 0
+                     */
+                    lift_m?: number;
+                    /**
+                     * @description Share of the advertised flow with clean media and no hose; 1 if advertised with media
+                     * @default 0.8
+                     */
+                    clean_media_fraction?: number;
+                    reactor: {
+                        /** @description Bore of the reactor's body, in mm */
+                        body_diameter_mm: number;
+                        /** @description Free length of the body, in mm */
+                        body_length_mm: number;
+                        /** @description Loss coefficient K in h = K v²/2g */
+                        k?: number;
+                        /** @description Bore of the reactor's inlet, in mm */
+                        nozzle_diameter_mm?: number;
+                        /**
+                         * @description Absolute pressure of the water in the reactor, in bar
+                         * @default 1.12
+                         */
+                        water_pressure_bar_abs?: number;
+                        /**
+                         * @description Share of the loop's flow that goes around the reactor
+                         * @default 0
+                         */
+                        bypass_fraction?: number;
+                        /**
+                         * @description Largest bubble that the inlet jet makes, in mm
+                         * @default 3
+                         */
+                        feed_bubble_diameter_mm?: number;
+                    };
+                    /** @description CO2 fed, in mg/min */
+                    feed_mg_min: number;
+                    /**
+                     * @description CO2 entering the reactor, in mg/L
+                     * @default 30
+                     */
+                    inlet_co2_mg_l?: number;
+                    /**
+                     * @description States of the media to look at, from clean to blocked
+                     * @default 11
+                     */
+                    steps?: number;
+                };
+            };
+        };
+        responses: {
+            /** @description The answer. */
+            200: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    /**
+                     * @example {
+                     *       "result": {
+                     *         "series": [
+                     *           {
+                     *             "clogging": 0,
+                     *             "flow_l_h": 567.652,
+                     *             "nozzle_velocity_m_s": 1.22538,
+                     *             "verdict": "suitable"
+                     *           },
+                     *           {
+                     *             "clogging": 0.1,
+                     *             "flow_l_h": 552.396,
+                     *             "nozzle_velocity_m_s": 1.19245,
+                     *             "verdict": "suitable"
+                     *           },
+                     *           {
+                     *             "clogging": 0.2,
+                     *             "flow_l_h": 534.324,
+                     *             "nozzle_velocity_m_s": 1.15343,
+                     *             "verdict": "marginal"
+                     *           },
+                     *           {
+                     *             "clogging": 0.3,
+                     *             "flow_l_h": 513.19,
+                     *             "nozzle_velocity_m_s": 1.10781,
+                     *             "verdict": "marginal"
+                     *           },
+                     *           {
+                     *             "clogging": 0.4,
+                     *             "flow_l_h": 488.85,
+                     *             "nozzle_velocity_m_s": 1.05527,
+                     *             "verdict": "marginal"
+                     *           },
+                     *           {
+                     *             "clogging": 0.5,
+                     *             "flow_l_h": 461.3,
+                     *             "nozzle_velocity_m_s": 0.995799,
+                     *             "verdict": "marginal"
+                     *           },
+                     *           {
+                     *             "clogging": 0.6,
+                     *             "flow_l_h": 430.725,
+                     *             "nozzle_velocity_m_s": 0.929795,
+                     *             "verdict": "marginal"
+                     *           },
+                     *           {
+                     *             "clogging": 0.7,
+                     *             "flow_l_h": 397.52,
+                     *             "nozzle_velocity_m_s": 0.858117,
+                     *             "verdict": "marginal"
+                     *           },
+                     *           {
+                     *             "clogging": 0.8,
+                     *             "flow_l_h": 362.302,
+                     *             "nozzle_velocity_m_s": 0.782092,
+                     *             "verdict": "unsuitable"
+                     *           },
+                     *           {
+                     *             "clogging": 0.9,
+                     *             "flow_l_h": 325.873,
+                     *             "nozzle_velocity_m_s": 0.703454,
+                     *             "verdict": "unsuitable"
+                     *           },
+                     *           {
+                     *             "clogging": 1,
+                     *             "flow_l_h": 289.162,
+                     *             "nozzle_velocity_m_s": 0.624207,
+                     *             "verdict": "unsuitable"
+                     *           }
+                     *         ],
+                     *         "limit_clogging": 0.776841,
+                     *         "limit_flow_l_h": 370.597,
+                     *         "limit": "reached"
+                     *       },
+                     *       "uncertainty": {
+                     *         "limit_clogging_low": 0.734141,
+                     *         "limit_clogging_high": 0.80975
+                     *       },
+                     *       "cautions": [
+                     *         {
+                     *           "code": "clean_before_limit",
+                     *           "severity": "warning",
+                     *           "message": "Clean the filter before its flow has fallen to 371 L/h; below it the reactor grows noisy and gas-locks."
+                     *         }
+                     *       ],
+                     *       "assumptions": [
+                     *         {
+                     *           "code": "clogging_scale",
+                     *           "message": "Clogging runs from 0 (clean) over 0.3 (loaded, twice the loss) and 0.7 (due for cleaning, five times) to 1 (blocked, ten times); 0 makes the media cost 1 times their clean loss. The scale is a convention, not a measurement."
+                     *         },
+                     *         {
+                     *           "code": "clean_media",
+                     *           "message": "With clean media and no hose the filter passes 80 % of its advertised flow (65 to 90 % is usual); a measured bucket flow replaces this."
+                     *         },
+                     *         {
+                     *           "code": "pump_curve_shape",
+                     *           "message": "Between its two advertised numbers the pump's curve is taken to fall with the power 1.5 of the flow; the interval spans 1 to 2. Points of the maker's curve replace this."
+                     *         },
+                     *         {
+                     *           "code": "typical_losses",
+                     *           "message": "Losses from the table of typical parts: intake strainer and pipe, hose barb, pair of quick-release taps, gentle 90° bend of the hose, reactor, empty tube, flared outflow with its bends."
+                     *         }
+                     *       ],
+                     *       "method": {
+                     *         "name": "Flow against clogging of the media",
+                     *         "version": "2026.12.1",
+                     *         "sources": [
+                     *           {
+                     *             "title": "Hagen 1839 and Poiseuille 1840, laminar flow in a tube",
+                     *             "year": 1840,
+                     *             "detail": "f = 64/Re, exact for developed laminar flow"
+                     *           },
+                     *           {
+                     *             "title": "Colebrook, Journal of the Institution of Civil Engineers 11:133-156",
+                     *             "year": 1939,
+                     *             "detail": "Turbulent friction between smooth and rough"
+                     *           },
+                     *           {
+                     *             "title": "Swamee & Jain, Journal of the Hydraulics Division ASCE 102:657-664",
+                     *             "year": 1976,
+                     *             "detail": "Explicit friction factor, the first guess of the Colebrook solution"
+                     *           },
+                     *           {
+                     *             "title": "Kell, Journal of Chemical and Engineering Data 20:97-105",
+                     *             "year": 1975,
+                     *             "detail": "Density of water, eq. 16"
+                     *           },
+                     *           {
+                     *             "title": "Pátek, Hrubý, Klomfar, Součková & Harvey, Journal of Physical and Chemical Reference Data 38:21-29",
+                     *             "year": 2009,
+                     *             "detail": "Viscosity of water at 0.1 MPa (IAPWS SR6-08)"
+                     *           },
+                     *           {
+                     *             "title": "Engineering judgement, no publication",
+                     *             "year": 2026,
+                     *             "detail": "A value with its range that the person may replace by a measurement"
+                     *           },
+                     *           {
+                     *             "title": "Crane, Technical Paper 410, Flow of Fluids",
+                     *             "year": 2009,
+                     *             "detail": "Loss coefficients of entrances, exits, contractions and bends"
+                     *           },
+                     *           {
+                     *             "title": "Biń, Chemical Engineering Science 48:3585-3630",
+                     *             "year": 1993,
+                     *             "detail": "Onset of gas entrainment by a plunging liquid jet, 0.8 to 1.0 m/s"
+                     *           }
+                     *         ]
+                     *       },
+                     *       "input": {
+                     *         "pump": {
+                     *           "max_flow_l_h": 1000,
+                     *           "max_head_m": 1.6,
+                     *           "speed_ratio": 1
+                     *         },
+                     *         "hose": {
+                     *           "inner_diameter_mm": 16,
+                     *           "length_m": 3,
+                     *           "roughness_mm": 0.0015,
+                     *           "corrugation_factor": 1
+                     *         },
+                     *         "elements": [
+                     *           {
+                     *             "kind": "intake_strainer"
+                     *           },
+                     *           {
+                     *             "kind": "barb",
+                     *             "count": 4
+                     *           },
+                     *           {
+                     *             "kind": "quick_release"
+                     *           },
+                     *           {
+                     *             "kind": "bend",
+                     *             "count": 4
+                     *           },
+                     *           {
+                     *             "kind": "reactor"
+                     *           },
+                     *           {
+                     *             "kind": "lily_outflow"
+                     *           }
+                     *         ],
+                     *         "volume_l": 180,
+                     *         "temperature_c": 25,
+                     *         "clogging": 0,
+                     *         "lift_m": 0,
+                     *         "clean_media_fraction": 0.8,
+                     *         "reactor": {
+                     *           "body_diameter_mm": 60,
+                     *           "body_length_mm": 350,
+                     *           "water_pressure_bar_abs": 1.12,
+                     *           "bypass_fraction": 0,
+                     *           "feed_bubble_diameter_mm": 3
+                     *         },
+                     *         "feed_mg_min": 63,
+                     *         "inlet_co2_mg_l": 30,
+                     *         "steps": 11
+                     *       }
+                     *     }
+                     */
+                    "application/json": {
+                        result: {
+                            series: {
+                                /** @description State of the filter media: 0 clean, 0.3 loaded, 0.7 due for cleaning, 1 blocked */
+                                clogging: number;
+                                /** @description Flow of water, in L/h */
+                                flow_l_h: number;
+                                /** @description Water speed in the inlet, in m/s */
+                                nozzle_velocity_m_s: number;
+                                verdict: components["schemas"]["Verdict"];
+                            }[];
+                            limit_clogging: number | null;
+                            /** @description Flow at which the reactor gas-locks, in L/h */
+                            limit_flow_l_h: number;
+                            /**
+                             * @description Why there is a clogging at which the reactor gas-locks, or none
+                             * @enum {string}
+                             */
+                            limit: "reached" | "already" | "never" | "beyond";
+                        };
+                        uncertainty: {
+                            limit_clogging_low: number | null;
+                            limit_clogging_high: number | null;
+                        };
+                        cautions: components["schemas"]["Caution"][];
+                        assumptions: components["schemas"]["Assumption"][];
+                        method: components["schemas"]["Method"];
+                        /** @description Your input with its defaults filled in */
+                        input: {
+                            [key: string]: unknown;
+                        };
+                    };
+                };
+            };
+            /** @description `key_in_url`: A key stands in the address. `malformed_json`: The body is not JSON. */
+            400: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `key_missing`: No key was sent. `key_unknown`: The key is not known. `key_revoked`: The key was revoked. `key_expired`: The key has expired. */
+            401: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `quota_reached`: The units of this period are used up. */
+            402: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `server_key_in_browser`: A server key was used from a browser. `origin_not_allowed`: The origin is not on the list. `address_not_allowed`: The network address is not on the list. `scope_missing`: The key lacks the scope. `account_suspended`: The account is suspended. */
+            403: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `not_found`: There is nothing here. */
+            404: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `method_not_allowed`: The method is not offered here. */
+            405: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `body_too_large`: The body is too large. */
+            413: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `media_type_unsupported`: The media type is not JSON. */
+            415: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `validation_failed`: The input is not valid. `out_of_domain`: The input is physically impossible or outside the method. */
+            422: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `rate_limited`: Too many calls. */
+            429: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `internal`: Something failed on our side. */
+            500: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `unavailable`: The service is resting for a moment. */
+            503: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+        };
+    };
     batch: {
         parameters: {
             query?: never;
@@ -9325,7 +11272,7 @@ export interface operations {
                 "webhook-id": string;
                 /** @description When this attempt was made, in Unix seconds */
                 "webhook-timestamp": string;
-                /** @description `v1,` and HMAC-SHA-256 of `id.timestamp.body` in base64; two while a secret is replaced */
+                /** @description `v1,` and the HMAC-SHA-256 of `id.timestamp.body` in base64; two during a rotation */
                 "webhook-signature": string;
             };
             path?: never;
@@ -9389,7 +11336,7 @@ export interface operations {
                 "webhook-id": string;
                 /** @description When this attempt was made, in Unix seconds */
                 "webhook-timestamp": string;
-                /** @description `v1,` and HMAC-SHA-256 of `id.timestamp.body` in base64; two while a secret is replaced */
+                /** @description `v1,` and the HMAC-SHA-256 of `id.timestamp.body` in base64; two during a rotation */
                 "webhook-signature": string;
             };
             path?: never;
@@ -9450,7 +11397,7 @@ export interface operations {
                 "webhook-id": string;
                 /** @description When this attempt was made, in Unix seconds */
                 "webhook-timestamp": string;
-                /** @description `v1,` and HMAC-SHA-256 of `id.timestamp.body` in base64; two while a secret is replaced */
+                /** @description `v1,` and the HMAC-SHA-256 of `id.timestamp.body` in base64; two during a rotation */
                 "webhook-signature": string;
             };
             path?: never;
@@ -9522,7 +11469,7 @@ export interface operations {
                 "webhook-id": string;
                 /** @description When this attempt was made, in Unix seconds */
                 "webhook-timestamp": string;
-                /** @description `v1,` and HMAC-SHA-256 of `id.timestamp.body` in base64; two while a secret is replaced */
+                /** @description `v1,` and the HMAC-SHA-256 of `id.timestamp.body` in base64; two during a rotation */
                 "webhook-signature": string;
             };
             path?: never;
@@ -9594,7 +11541,7 @@ export interface operations {
                 "webhook-id": string;
                 /** @description When this attempt was made, in Unix seconds */
                 "webhook-timestamp": string;
-                /** @description `v1,` and HMAC-SHA-256 of `id.timestamp.body` in base64; two while a secret is replaced */
+                /** @description `v1,` and the HMAC-SHA-256 of `id.timestamp.body` in base64; two during a rotation */
                 "webhook-signature": string;
             };
             path?: never;
@@ -9659,7 +11606,7 @@ export interface operations {
                 "webhook-id": string;
                 /** @description When this attempt was made, in Unix seconds */
                 "webhook-timestamp": string;
-                /** @description `v1,` and HMAC-SHA-256 of `id.timestamp.body` in base64; two while a secret is replaced */
+                /** @description `v1,` and the HMAC-SHA-256 of `id.timestamp.body` in base64; two during a rotation */
                 "webhook-signature": string;
             };
             path?: never;

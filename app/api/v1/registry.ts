@@ -7,6 +7,9 @@ import { carbonateGrid } from "./carbonate/grid/operation"
 import { carbonateKh } from "./carbonate/kh/operation"
 import { carbonatePh } from "./carbonate/ph/operation"
 import { carbonatePhDrop } from "./carbonate/ph-drop/operation"
+import { flowClogging } from "./flow/clogging/operation"
+import { flowOperatingPoint } from "./flow/operating-point/operation"
+import { flowReactor } from "./flow/reactor/operation"
 import { gasBubbleRate } from "./gas/bubble-rate/operation"
 import { gasController } from "./gas/controller/operation"
 import { gasCylinder } from "./gas/cylinder/operation"
@@ -43,6 +46,9 @@ export const registry: readonly AnyOperation[] = [
   gasBubbleRate,
   gasWorkingPressure,
   gasRoomSafety,
+  flowOperatingPoint,
+  flowReactor,
+  flowClogging,
   batch,
   usage,
   account,
