@@ -158,7 +158,9 @@ function importsOf(file: string): Import[] {
     .map(({ fileName }) => {
       if (fileName.startsWith("@/")) return { from: file, to: fileName.slice(2), ours: true }
       if (!fileName.startsWith(".")) return { from: file, to: fileName, ours: false }
-      return { from: file, to: relative(root, resolve(root, dirname(file), fileName)), ours: true }
+      const to = relative(root, resolve(root, dirname(file), fileName))
+      const parcel = /^node_modules\/(.+)/.exec(to)?.[1]
+      return parcel ? { from: file, to: parcel, ours: false } : { from: file, to, ours: true }
     })
     .map((each) =>
       each.ours && /^(lib\/\w+|db)$/.test(each.to) && isFolder(each.to)
