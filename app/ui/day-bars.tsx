@@ -12,8 +12,8 @@ export interface DayValue {
   readonly note: string
 }
 
-const height = 220
-const edge = { top: 14, right: 4, bottom: 40, left: 60 }
+const height = 232
+const edge = { top: 26, right: 4, bottom: 40, left: 60 }
 
 /** One bar a day, with an even pace drawn across where there is one. */
 export function DayBars({

@@ -19,7 +19,7 @@ export function Figure({
         {value}
         {unit && <span className="ml-2 text-sm font-normal tracking-normal text-soft">{unit}</span>}
       </dd>
-      {under && <dd className="mt-1 font-mono text-xs text-soft">{under}</dd>}
+      {under && <dd className="mt-1 text-sm text-soft">{under}</dd>}
     </div>
   )
 }

@@ -23,12 +23,12 @@ export function NavLinks({ label, groups }: { label: string; groups: readonly Na
   return (
     <nav aria-label={label} className="lg:sticky lg:top-6">
       <Button
-        className="w-full justify-between lg:hidden"
+        className="w-full lg:hidden"
         aria-expanded={open}
         aria-controls="area-menu"
         onClick={() => setOpen(!open)}
       >
-        {current?.label ?? "Pages"}
+        <span className="grow text-left">{current?.label ?? "Pages"}</span>
         {open ? <CloseMark /> : <MenuMark />}
       </Button>
       <div

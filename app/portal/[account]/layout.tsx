@@ -35,7 +35,7 @@ export default async function AccountLayout({ params, children }: OfAccount & { 
     <Area
       name={account.name}
       mark={
-        <p className="border border-line px-2 py-0.5 text-sm text-soft">
+        <p className="hidden border border-line px-2 py-0.5 text-sm text-soft sm:block">
           {planOf(account.plan).name}, {role}
         </p>
       }

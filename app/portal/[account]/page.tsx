@@ -27,7 +27,12 @@ export default async function Overview({ params }: OfAccount) {
     <>
       <PageHead title={`Hello ${person.name.split(" ")[0]}`} lead={leadOf(opened)} />
       {keys && can(actor, "key.create") && (
-        <NextStep base={`/portal/${account.slug}`} keys={keys} now={ctx.now} />
+        <NextStep
+          base={`/portal/${account.slug}`}
+          keys={keys}
+          called={Boolean(live?.used || sandbox?.used)}
+          now={ctx.now}
+        />
       )}
       {live && sandbox && (
         <Section title="Where you stand" note={`The period ends on ${minuteOf(live.period_end)}.`}>
@@ -82,11 +87,21 @@ export default async function Overview({ params }: OfAccount) {
 }
 
 /** The way from an open account to live answers, with the first step that is still to do put forward. */
-function NextStep({ base, keys, now }: { base: string; keys: readonly KeyRow[]; now: Date }) {
+function NextStep({
+  base,
+  keys,
+  called,
+  now,
+}: {
+  base: string
+  keys: readonly KeyRow[]
+  called: boolean
+  now: Date
+}) {
   const own = keys.filter((key) => worksAt(key, now))
   const steps = [
     {
-      done: keys.some(({ last_used_at }) => last_used_at !== null),
+      done: called || keys.some(({ last_used_at }) => last_used_at !== null),
       title: "Get a first answer",
       text: "The explorer makes a sandbox key by itself: choose an operation and execute it.",
       href: `${base}/explorer`,
