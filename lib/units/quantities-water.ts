@@ -230,6 +230,13 @@ export const waterQuantities = {
     max: 8.5,
     description: "pH that the colour of the drop checker tells",
   },
+  indicator_ph_error: {
+    unit: "pH",
+    ucum: "[pH]",
+    min: 0,
+    max: 1,
+    description: "Standard error of the pH read from the colour",
+  },
   ph_from: { unit: "pH", ucum: "[pH]", min: 4, max: 9.5, description: "First pH of the grid" },
   ph_to: { unit: "pH", ucum: "[pH]", min: 4, max: 9.5, description: "Last pH of the grid" },
   ph_step: { unit: "pH", ucum: "[pH]", min: 0.01, max: 5.5, description: "Step of pH" },
