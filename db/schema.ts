@@ -15,6 +15,7 @@ export interface Schema {
   subscription: Subscription
   invoice: Invoice
   stripe_event: StripeEvent
+  overage_report: OverageReport
   widget: Widget
   audit_log: AuditLog
   usage_threshold: UsageThreshold
@@ -24,6 +25,8 @@ export interface Schema {
   webhook_delivery: WebhookDelivery
   refused_call: RefusedCall
   idempotency: Idempotency
+  catalog_item: CatalogItem
+  report: Report
 }
 
 export type AccountStatus = "active" | "suspended" | "closing"
@@ -182,6 +185,15 @@ interface StripeEvent {
   processed_at: Date | null
 }
 
+interface OverageReport {
+  account_id: string
+  hour: Date
+  units: number
+  included_units: number
+  revision: Generated<number>
+  delivered_at: Date | null
+}
+
 interface Widget {
   account_id: string
   id: string
@@ -289,4 +301,33 @@ interface WebhookDelivery {
   last_status: number | null
   last_failure: string | null
   last_duration_ms: number | null
+}
+
+interface CatalogItem {
+  account_id: string
+  id: string
+  kind: string
+  name: string
+  sku: string | null
+  url: string | null
+  price_minor: number | null
+  currency: string | null
+  attributes: ColumnType<Record<string, unknown>, string, string>
+  created_at: CreatedAt
+  updated_at: Generated<Date>
+}
+
+interface Report {
+  account_id: string
+  id: string
+  kind: string
+  title: string
+  /** Whom it was made for, as the counter wrote it. */
+  shopper: string | null
+  input: ColumnType<Record<string, unknown>, string, never>
+  answer: ColumnType<Record<string, unknown>, string, never>
+  engine_version: string
+  created_by: string
+  created_at: CreatedAt
+  share_slug: string | null
 }

@@ -3,9 +3,13 @@ import { setTimeout as pause } from "node:timers/promises"
 import { parseCronItems, type Runner, run, type TaskList } from "graphile-worker"
 import { closePools } from "@/db"
 import {
+  COMPARE_OVERAGE,
+  compareOverage,
   PROCESS_STRIPE_EVENT,
   processStripeEvent,
+  REPORT_METER_HOURS,
   REVIEW_SUBSCRIPTIONS,
+  reportOverage,
   reviewSubscriptions,
 } from "@/lib/billing"
 import { env } from "@/lib/env"
@@ -32,6 +36,13 @@ const taskList: TaskList = {
   [SEND_MAIL]: (payload, { job }) => deliverMail(payload as Mail, `job-${job.id}`),
   [PROCESS_STRIPE_EVENT]: (payload) => processStripeEvent({ input: payload as { event_id: string } }),
   [REVIEW_SUBSCRIPTIONS]: async () => void (await reviewSubscriptions({ now: new Date() })),
+  [REPORT_METER_HOURS]: (payload) =>
+    reportOverage({ ...(payload as { account_id?: string }), now: new Date() }),
+  async [COMPARE_OVERAGE]() {
+    for (const difference of await compareOverage({ now: new Date() })) {
+      console.error(`overage differs: ${JSON.stringify(difference)}`)
+    }
+  },
   [ANNOUNCE_THRESHOLD]: (payload) => announceThreshold(payload as ReachedThreshold),
   roll_up_usage: async () => void (await rollUpUsage()),
   async reconcile_usage() {
@@ -47,6 +58,8 @@ const taskList: TaskList = {
 /** Minutes and hours are UTC. */
 const timetable = parseCronItems([
   { task: REVIEW_SUBSCRIPTIONS, match: "7 * * * *" },
+  { task: REPORT_METER_HOURS, match: "4 * * * *" },
+  { task: COMPARE_OVERAGE, match: "50 2 * * *", options: { backfillPeriod: 86_400_000 } },
   { task: "roll_up_usage", match: "1,11,21,31,41,51 * * * *" },
   { task: "recover_deliveries", match: "3,8,13,18,23,28,33,38,43,48,53,58 * * * *" },
   { task: "remind_of_expiry", match: "17 * * * *" },

@@ -1,5 +1,4 @@
-import { sql } from "kysely"
-import { withoutTenant } from "@/db"
+import { enqueueJob, withoutTenant } from "@/db"
 import { env } from "@/lib/env"
 import { alarmingTypes, syncedTypes } from "./event-types"
 import { PROCESS_STRIPE_EVENT } from "./process-stripe-event"
@@ -46,8 +45,7 @@ export async function receiveStripeEvent(delivery: Delivery): Promise<Receipt> {
       .executeTakeFirst()
     if (inserted.numInsertedOrUpdatedRows === 0n) return { outcome: "known" }
     if (!wanted) return { outcome: "ignored" }
-    const payload = JSON.stringify({ event_id: event.id })
-    await sql`select enqueue_job(${PROCESS_STRIPE_EVENT}, ${payload}::json)`.execute(trx)
+    await enqueueJob(trx, { task: PROCESS_STRIPE_EVENT, payload: { event_id: event.id } })
     return { outcome: "accepted" }
   })
 }

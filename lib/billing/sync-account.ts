@@ -1,11 +1,11 @@
 import type Stripe from "stripe"
 import type { Trx } from "@/db"
-import { ownersOf } from "@/lib/accounts"
 import { recordAct } from "@/lib/audit"
 import type { Ctx } from "@/lib/context"
-import { env } from "@/lib/env"
-import { enqueueMail } from "@/lib/mail"
-import { deciding, graceEnd, type Standing, serviceState } from "./service-state"
+import { notifyOwners } from "@/lib/mail"
+import { publishEvent } from "@/lib/webhooks"
+import { reportSoon } from "./report-overage"
+import { deciding, graceEnd, isRunning, type Standing, serviceState } from "./service-state"
 import {
   type InvoiceSnapshot,
   invoiceSnapshot,
@@ -36,7 +36,7 @@ export async function syncAccount(
   if (!current) return
   const before = await trx
     .selectFrom("subscription")
-    .select("past_due_since")
+    .select(["plan", "status", "current_period_end", "cancel_at_period_end", "past_due_since"])
     .where("account_id", "=", account_id)
     .executeTakeFirst()
   const owed = current.status === "past_due"
@@ -44,7 +44,8 @@ export async function syncAccount(
   const standing = { ...current, past_due_since }
   await storeSubscription(trx, account_id, standing, now)
   await applyToAccount(trx, account_id, standing, now)
-  if (past_due_since && !before?.past_due_since) await tellOwners(trx, account_id, past_due_since)
+  await tell(trx, account_id, before, standing)
+  if (before && before.current_period_end < current.current_period_end) await reportSoon(trx, account_id, now)
 }
 
 async function fetchState(customer: string) {
@@ -89,20 +90,38 @@ async function storeInvoices(
     .execute()
 }
 
-/** A mail to each owner, once for each time that a payment begins to be owed. */
-async function tellOwners(trx: Trx, account_id: string, since: Date): Promise<void> {
-  const { name, slug } = await trx
-    .selectFrom("account")
-    .select(["name", "slug"])
-    .where("id", "=", account_id)
-    .executeTakeFirstOrThrow()
-  const data = {
-    account_name: name,
-    full_until: graceEnd(since).toISOString(),
-    billing_url: `${env().PUBLIC_URL}/portal/${slug}/billing`,
+type Stored = Pick<
+  Current,
+  "plan" | "status" | "current_period_end" | "cancel_at_period_end" | "past_due_since"
+>
+
+/** Tells the account's own systems of every change, and its owners, once, of a payment that begins to be owed. */
+async function tell(
+  trx: Trx,
+  account_id: string,
+  before: (Omit<Stored, "plan"> & { plan: string }) | undefined,
+  current: Current,
+): Promise<void> {
+  const { status, current_period_end, cancel_at_period_end } = current
+  const changed =
+    before?.plan !== current.plan ||
+    before.status !== status ||
+    before.cancel_at_period_end !== cancel_at_period_end ||
+    before.current_period_end.getTime() !== current_period_end.getTime()
+  if (changed) {
+    await publishEvent(trx, account_id, "subscription.changed", {
+      plan: serviceState(current, 0, current.current_period_start).plan,
+      status,
+      current_period_end: isRunning(status) ? current_period_end.toISOString() : null,
+      cancel_at_period_end,
+    })
   }
-  for (const { email } of await ownersOf(trx, account_id)) {
-    await enqueueMail(trx, { template: "payment_failed", to: email, data })
+  if (current.past_due_since && !before?.past_due_since) {
+    const full_until = graceEnd(current.past_due_since).toISOString()
+    await notifyOwners(trx, account_id, ({ account_name, portal_url }) => ({
+      template: "payment_failed",
+      data: { account_name, full_until, billing_url: `${portal_url}/billing` },
+    }))
   }
 }
 

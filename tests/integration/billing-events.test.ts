@@ -3,6 +3,7 @@ import Stripe from "stripe"
 import { afterAll, afterEach, beforeAll, describe, expect, it } from "vitest"
 import { asWorker, closePools, withTenant } from "@/db"
 import { reviewSubscriptions, showBilling, startCheckout } from "@/lib/billing"
+import { createEndpoint } from "@/lib/webhooks"
 import { control, customerWithCard } from "../fakes/stripe/subject"
 import { waitForMail } from "../support/mailbox"
 import { stack, takeSettings } from "../support/stack"
@@ -192,6 +193,34 @@ describe("whatever happens to the events, the end is the same", () => {
     await visit(url, { card: "pays" })
     await until(async () => (await billingOf(subscriber)).plan === "storefront", 40_000)
     expect(await control(fake(), "GET", "faults")).toEqual([])
+  })
+})
+
+describe("the account's own systems", () => {
+  it("hear of a change of the subscription once, whatever number of events tell us of it", async () => {
+    const subscriber = await createSubscriber()
+    const { account_id } = subscriber.ctx
+    const url = "http://127.0.0.1:9/hook"
+    await createEndpoint({ ctx: subscriber.as("owner"), input: { url, events: ["subscription.changed"] } })
+    await control(fake(), "POST", "faults", { kind: "webhook_duplicate", copies: 1, times: 50 })
+    const customer = await pay(subscriber)
+    await allWorkedOff()
+    await standInClient().subscriptions.update(await onlySubscription(customer), {
+      cancel_at_period_end: true,
+    })
+    await allWorkedOff()
+    const told = await asWorker((trx) =>
+      trx
+        .selectFrom("webhook_delivery")
+        .select("payload")
+        .where("account_id", "=", account_id)
+        .orderBy("id")
+        .execute(),
+    )
+    expect(told.map(({ payload }) => JSON.parse(payload).data)).toMatchObject([
+      { plan: "storefront", status: "active", cancel_at_period_end: false },
+      { plan: "storefront", status: "active", cancel_at_period_end: true },
+    ])
   })
 })
 
