@@ -38,6 +38,8 @@ export const messages: Co2LevelMessages = {
       "CO2 über mehrere Tage in kleinen Schritten erhöhen und die Tiere nach jedem Schritt beobachten. Schnappen sie nach Luft oder liegen sie still, das Gas abstellen und belüften.",
     upper_bound_only: () =>
       "Mit diesem Test könnte die KH auch null sein; nur die obere Grenze sagt etwas aus. Eine größere Probe titrieren.",
+    no_upper_bound: ({ high }) =>
+      `Diese Messwerte geben keine Obergrenze her: ${high} mg/L sind so viel, wie reines Gas dem Wasser geben kann. pH und KH genauer messen.`,
     outside_design_range: () =>
       "Das liegt außerhalb üblichen Aquarienwassers (pH 5,8 bis 8,4; 0,5 bis 20 dKH; 10 bis 35 °C). Messwerten ist dort weniger zu trauen.",
     acid_or_hydroxide: () => "So weit vom Neutralpunkt hängt das Ergebnis an einer sehr guten pH-Messung.",

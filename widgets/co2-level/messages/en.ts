@@ -38,6 +38,8 @@ export const messages: Co2LevelMessages = {
       "Raise CO2 in small steps over several days and watch the animals after each step. If they gasp or lie still, stop the gas and aerate.",
     upper_bound_only: () =>
       "With this test the KH may as well be none, so only the upper bound means something. Titrate a larger sample.",
+    no_upper_bound: ({ high }) =>
+      `These readings set no upper limit to CO2: ${high} mg/L is as much as pure gas can give the water. Measure pH and KH more exactly.`,
     outside_design_range: () =>
       "This is outside the range of usual tank water (pH 5.8 to 8.4, 0.5 to 20 dKH, 10 to 35 °C). Readings are harder to trust there.",
     acid_or_hydroxide: () => "So far from neutral the result hangs on a very good pH reading.",

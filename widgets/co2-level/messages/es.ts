@@ -42,6 +42,8 @@ export const messages: Co2LevelMessages = {
       "Suba el CO2 en pasos pequeños durante varios días y observe a los animales después de cada paso. Si boquean o se quedan quietos, corte el gas y airee.",
     upper_bound_only: () =>
       "Con este test la KH podría ser también nula; solo el límite superior significa algo. Valore una muestra mayor.",
+    no_upper_bound: ({ high }) =>
+      `Estas medidas no ponen límite superior al CO2: ${high} mg/L es lo máximo que el gas puro puede dar al agua. Mida el pH y la KH con más exactitud.`,
     outside_design_range: () =>
       "Está fuera del agua habitual de acuario (pH de 5,8 a 8,4; de 0,5 a 20 dKH; de 10 a 35 °C). Allí las medidas son menos fiables.",
     acid_or_hydroxide: () => "Tan lejos del punto neutro el resultado depende de una medida de pH muy buena.",
