@@ -56,7 +56,12 @@ export async function check(): Promise<void> {
 
 async function runStep({ name, args, remedy }: Step, signal: AbortSignal): Promise<boolean> {
   try {
-    await runOnce({ root, args, env: environment({ NEXT_TELEMETRY_DISABLED: "1", NODE_ENV: "test" }), signal })
+    await runOnce({
+      root,
+      args,
+      env: environment({ NEXT_TELEMETRY_DISABLED: "1", NODE_ENV: "test" }),
+      signal,
+    })
     report(`passed  ${name}`)
     return true
   } catch (error) {
