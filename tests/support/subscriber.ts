@@ -13,9 +13,11 @@ export interface Subscriber extends TestAccount {
   as(role: Role): Ctx
 }
 
-/** An account on the free plan with an owner of its own, whom mails reach. Call `takeSettings` first. */
-export async function createSubscriber(): Promise<Subscriber> {
-  const account = await createTestAccount({ plan: "nano" })
+/** An account, on the free plan if nothing is said, with an owner whom mails reach. Call `takeSettings` first. */
+export async function createSubscriber(
+  options: Parameters<typeof createTestAccount>[0] = { plan: "nano" },
+): Promise<Subscriber> {
+  const account = await createTestAccount(options)
   const user_id = newId("user")
   const email = `${randomUUID()}@fernhollow.test`
   await asWorker(async (trx) => {
