@@ -45,4 +45,8 @@ export const accountNameInput = z.strictObject({
     .regex(/^[^\p{Cc}<>]*$/u, "Leave out angle brackets and line breaks."),
 })
 
+export const checkoutInput = z.strictObject({ plan: z.enum(["storefront", "brand"]) })
+
+export const spendingCapInput = z.strictObject({ overage_cap_minor: z.number().int() })
+
 export const nothing = z.strictObject({})
