@@ -28,8 +28,7 @@ interface Report {
 }
 
 /**
- * Runs vitest over some projects, its own output shown, and counts from its report. A file that failed outside its
- * tests (an import, a hook) counts as one failure.
+ * Runs vitest over some projects, its own output shown, and counts from its report.
  *
  * @throws SetupError when vitest ended without a report, or failed for a reason that no count shows.
  */
@@ -60,7 +59,8 @@ export async function runVitest({
   return tally
 }
 
-function count(report: Report): Tally {
+/** What a report says. A file that failed outside its tests (an import, a hook) counts as one failure. */
+export function count(report: Report): Tally {
   const filesOnly = report.testResults.filter(
     ({ status, assertionResults }) =>
       status === "failed" && !assertionResults.some((assertion) => assertion.status === "failed"),
