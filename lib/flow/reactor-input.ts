@@ -71,9 +71,7 @@ export function prepareReactor(input: ReactorLoopInput): PreparedReactor {
       `The rise of bubbles is known from ${COLDEST_C} to ${HOTTEST_C} °C; you gave ${input.temperature_c}.`,
     )
   }
-  const through = 1 - (reactor.bypass_fraction ?? reactorDefaults.bypass_fraction)
   const hose_mm = (input.return_hose ?? input.hose).inner_diameter_mm
-  const without = input.elements.filter(({ kind }) => !isReactor(kind))
   const into = reactorWater(
     input.temperature_c,
     reactor.water_pressure_bar_abs ?? reactorDefaults.water_pressure_bar_abs,
@@ -81,19 +79,23 @@ export function prepareReactor(input: ReactorLoopInput): PreparedReactor {
   )
   const feed_bubble_mm = reactor.feed_bubble_diameter_mm ?? reactorDefaults.feed_bubble_diameter_mm
   return {
-    loop: prepareLoop({ ...input, elements: withReactor(input, through) }),
-    loopWithout: prepareLoop({ ...input, elements: without }),
+    loop: prepareLoop({ ...input, elements: withReactor(input.elements, reactor) }),
+    loopWithout: prepareLoop({ ...input, elements: withoutReactor(input.elements) }),
     body_mm: reactor.body_diameter_mm,
     length_m: reactor.body_length_mm / 1000,
     nozzle_mm: reactor.nozzle_diameter_mm ?? reactorDefaults.nozzle_ratio * hose_mm,
     feed_bubble_mm,
-    through,
+    through: throughReactor(reactor),
     feed_mg_min,
     into,
     bubbles: bubbleTravel(feed_bubble_mm, into),
     volume_l: input.volume_l,
   }
 }
+
+/** Ends of the range of the bubbles' rise. @source cliftGraceWeber1978 */
+const COLDEST_C = 5
+const HOTTEST_C = 40
 
 /** The water in a reactor, as its bubbles feel it. */
 export function reactorWater(
@@ -110,15 +112,12 @@ export function reactorWater(
   }
 }
 
-/** Ends of the range of the bubbles' rise. @source cliftGraceWeber1978 */
-const COLDEST_C = 5
-const HOTTEST_C = 40
-
 /**
- * The loop's elements with the reactor among them. A reactor that the list names already stands for it; with a bypass
+ * A loop's elements with the reactor among them. A reactor that the list names already stands for it; with a bypass
  * only a share of the flow meets its loss, which falls with the square of that share.
  */
-function withReactor({ elements, reactor }: ReactorLoopInput, through: number): ElementInput[] {
+export function withReactor(elements: readonly ElementInput[], reactor: ReactorInput): ElementInput[] {
+  const through = throughReactor(reactor)
   const named = elements.some(({ kind }) => isReactor(kind))
   const list: readonly ElementInput[] = named ? elements : [...elements, { kind: "reactor", in_return: true }]
   return list.map((element) => {
@@ -127,6 +126,14 @@ function withReactor({ elements, reactor }: ReactorLoopInput, through: number): 
     if (k === undefined && through === 1) return element
     return { ...element, k: (k ?? elementTable[element.kind].k) * through ** 2 }
   })
+}
+
+export function withoutReactor(elements: readonly ElementInput[]): ElementInput[] {
+  return elements.filter(({ kind }) => !isReactor(kind))
+}
+
+function throughReactor({ bypass_fraction }: ReactorInput): number {
+  return 1 - (bypass_fraction ?? reactorDefaults.bypass_fraction)
 }
 
 function isReactor(kind: ElementKind): boolean {

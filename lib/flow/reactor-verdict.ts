@@ -4,6 +4,7 @@ import type { SourceId } from "@/lib/chemistry/sources"
 import { bubbleRise } from "@/lib/gas/bubble-rise"
 import { figures } from "@/lib/units/figures"
 import { JETTING_FACTOR } from "./bubble-travel"
+import { type CloggingLimit, cloggingLimit } from "./clogging-course"
 import { DUE_CLOGGING } from "./media"
 import {
   type FlowUncertainty,
@@ -47,6 +48,9 @@ export interface ReactorAnswer {
   readonly minimum_flow_l_h: number
   readonly comfortable_flow_l_h: number
   readonly maximum_flow_l_h: number
+  /** The clogging at which it gas-locks, as `cloggingCourse` finds it. */
+  readonly limit: CloggingLimit
+  readonly limit_clogging: number | null
   /** What a flat gas cap under the lid dissolves, fresh and after hours. */
   readonly fresh_cap_mg_min: number
   readonly aged_cap_mg_min: number
@@ -126,6 +130,7 @@ function reactorAnswer(reactor: PreparedReactor, now: ReactorState, due: Reactor
     comfortable_flow_l_h: flowAtVelocity(JET_M_S.good, nozzle_mm) / through,
     maximum_flow_l_h:
       flowAtVelocity(reactor.bubbles.greatestVelocity(length_m / JETTING_FACTOR), body_mm) / through,
+    ...cloggingLimit(reactor, reactor.loop),
     fresh_cap_mg_min: now.cap.fresh_mg_min,
     aged_cap_mg_min: now.cap.aged_mg_min,
     verdict: now.verdict,

@@ -4,11 +4,6 @@
  */
 export function figures(value: number, digits: number): string {
   const rounded = Number(value.toPrecision(digits))
-  const decimals = rounded === 0 ? 0 : Math.max(0, digits - 1 - Math.floor(Math.log10(Math.abs(rounded))))
-  return String(Number(rounded.toFixed(Math.min(decimals, 20))))
-}
-
-/** The value to so many significant digits, as a number: what the API and the files carry. */
-export function roundSignificant(value: number, digits = 6): number {
-  return value === 0 ? 0 : Number(value.toPrecision(digits))
+  const tiny = rounded !== 0 && Math.abs(rounded) < 1e-6
+  return tiny ? rounded.toFixed(20).replace(/0+$/, "") : String(rounded)
 }

@@ -1,5 +1,6 @@
 import { flowQuantities } from "./quantities-flow"
 import { gasQuantities } from "./quantities-gas"
+import { planQuantities } from "./quantities-plan"
 import { waterQuantities } from "./quantities-water"
 
 /** One physical quantity of the wire: the name ends in its unit. Bounds are those of a valid input. */
@@ -14,6 +15,11 @@ export interface Quantity {
 }
 
 /** Every quantity that the engine, the API, the widgets and the CSV files speak of, once. */
-export const quantities = { ...waterQuantities, ...gasQuantities, ...flowQuantities } as const
+export const quantities = {
+  ...waterQuantities,
+  ...gasQuantities,
+  ...flowQuantities,
+  ...planQuantities,
+} as const
 
 export type QuantityName = keyof typeof quantities
