@@ -91,10 +91,12 @@ export function productSettings(secrets: Secrets, ports: Ports): Settings {
 interface Place {
   dataDir: string
   withNext: boolean
+  /** The demo world's widget, for the shop page. */
+  widgetId: string
 }
 
 /** The environment of each process, beside what the shell gives it. */
-export function processSettings(secrets: Secrets, ports: Ports, { dataDir, withNext }: Place) {
+export function processSettings(secrets: Secrets, ports: Ports, { dataDir, withNext, widgetId }: Place) {
   const product = productSettings(secrets, ports)
   const appUrl = loopback(ports.app)
   return {
@@ -114,7 +116,7 @@ export function processSettings(secrets: Secrets, ports: Ports, { dataDir, withN
       STATE_FILE: path.join(dataDir, "stripe.json"),
     },
     mail: { PORT: String(ports.mail), SMTP_PORT: String(ports.smtp) },
-    shop: { PORT: String(ports.shop), APP_URL: appUrl },
+    shop: { PORT: String(ports.shop), APP_URL: appUrl, WIDGET_ID: widgetId },
   } satisfies Record<string, Record<string, string>>
 }
 

@@ -126,7 +126,7 @@ async function bringUp(options: StackOptions, undo: (() => unknown)[]): Promise<
   const data = await prepareData(setting)
   await building
 
-  const children = await startChildren(options, setting)
+  const children = await startChildren(options, { ...setting, widgetId: data.demo.widgetId })
   const addresses = {
     appUrl: loopback(ports.app),
     mailUrl: loopback(ports.mail),
@@ -193,7 +193,10 @@ async function prepareDemo(setting: Setting, env: Record<string, string>): Promi
   return read()
 }
 
-async function startChildren(options: StackOptions, setting: Setting): Promise<Map<string, Child>> {
+async function startChildren(
+  options: StackOptions,
+  setting: Setting & { widgetId: string },
+): Promise<Map<string, Child>> {
   const { dataDir, secrets, ports, report, signal, undo } = setting
   const settings = processSettings(secrets, ports, setting)
   const health = `${loopback(ports.app)}/api/v1/health`
