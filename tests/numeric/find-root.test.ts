@@ -24,6 +24,11 @@ describe("findRoot", () => {
     )
   })
 
+  it("meets its tolerance where only bisection helps, on a step", () => {
+    const root = findRoot({ f: (x) => Math.sign(x - 1 / 3), low: 0, high: 1, tolerance: 1e-6 })
+    expect(Math.abs(root - 1 / 3)).toBeLessThanOrEqual(1e-6)
+  })
+
   it("returns an end that is itself the root", () => {
     expect(findRoot({ f: (x) => x, low: 0, high: 1, tolerance: 1e-9 })).toBe(0)
     expect(findRoot({ f: (x) => x - 1, low: 0, high: 1, tolerance: 1e-9 })).toBe(1)
