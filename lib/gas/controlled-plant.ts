@@ -58,9 +58,7 @@ export class ControlledPlant {
   ) {
     const { tank } = controller
     this.k = tank.exchange_per_h / 60
-    // At k·lag = 1 the closed form is 0/0; a millionth beside it the answer differs by as little.
-    const held = controller.line_lag_min
-    this.holds = Math.abs(this.k * held - 1) < 1e-6 ? held * (1 + 1e-6) : held
+    this.holds = lineLag(controller.line_lag_min, this.k)
     this.oneMinute = this.factors(1)
     this.taken = this.oneMinute
     this.co2 = start.co2_mg_l
@@ -155,6 +153,12 @@ export class ControlledPlant {
     const probe = Math.exp(-minutes / this.controller.probe_lag_min)
     return { halfAir, air: halfAir * halfAir, halfLine, line: halfLine * halfLine, probe }
   }
+}
+
+/** The lag for the closed form, which is 0/0 for a lag of 1/k, and for the shortest ones of all. */
+function lineLag(minutes: number, k: number): number {
+  if (minutes < 1e-6) return 0
+  return Math.abs(k * minutes - 1) < 1e-6 ? minutes * (1 + 1e-6) : minutes
 }
 
 /** What is left of a deviation from the air, the held gas and the probe after a step, and after half of it. */

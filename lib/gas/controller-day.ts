@@ -1,6 +1,7 @@
 import { type Answer, method } from "@/lib/chemistry/answer"
 import { co2AtPh, speciesAtPh } from "@/lib/chemistry/carbonate"
 import { MODEL_SIGMA } from "@/lib/chemistry/ionic-strength"
+import type { SourceId } from "@/lib/chemistry/sources"
 import { type Co2Interval, co2Interval, co2Spread, sensitivities } from "@/lib/chemistry/uncertainty"
 import { figures } from "@/lib/units/figures"
 import { controlCycle } from "./control-cycle"
@@ -104,10 +105,12 @@ export function controllerDay(input: ControllerInput): Answer<ControllerDay, Con
       },
       {
         code: "gate",
-        message: `The valve may open from ${open_before_lights_min} min before the lights until ${input.close_before_lights_off_min} min before they go off.`,
+        message: `The valve may open from ${figures(open_before_lights_min, 4)} min before the lights until ${figures(input.close_before_lights_off_min, 3)} min before they go off.`,
       },
     ],
-    method: method("Simulation of the controller over a day", [...tank.sources, "engineeringJudgement"]),
+    method: method("Simulation of the controller over a day", [
+      ...new Set<SourceId>([...tank.sources, "engineeringJudgement"]),
+    ]),
   }
 }
 
@@ -162,7 +165,8 @@ function idealCycle({ tank, controller }: PreparedDay, hysteresis_ph: number): C
   })
   if (cycle === "always_on") return { duty_fraction: 1, cycles_per_h: 0 }
   if (cycle === "always_off") return { duty_fraction: 0, cycles_per_h: 0 }
-  return cycle
+  const { duty_fraction, cycles_per_h } = cycle
+  return { duty_fraction, cycles_per_h }
 }
 
 /** From the full cycles of the day; with fewer than one, open all the time or as in the closed form. */

@@ -83,14 +83,14 @@ function photoperiod({ lights_on_h, lights_off_h, photoperiod_h }: ControllerInp
   if (photoperiod_h !== undefined && Math.abs(photoperiod_h - hours) > 1e-6) {
     throw new OutOfDomain(
       "photoperiod_h",
-      `The lights are on from ${lights_on_h} to ${lights_off_h} h, ${figures(hours, 4)} h. Leave the photoperiod out, or make it agree.`,
+      `The lights are on from ${figures(lights_on_h, 4)} to ${figures(lights_off_h, 4)} h, ${figures(hours, 4)} h. Leave the photoperiod out, or make it agree.`,
     )
   }
   const { min, max } = quantities.photoperiod_h
   if (hours >= min && hours <= max) return hours
   throw new OutOfDomain(
     "lights_off_h",
-    `From ${lights_on_h} to ${lights_off_h} h makes ${figures(hours, 4)} h of light; give ${min} to ${max}.`,
+    `From ${figures(lights_on_h, 4)} to ${figures(lights_off_h, 4)} h makes ${figures(hours, 4)} h of light; give ${min} to ${max}.`,
   )
 }
 

@@ -1,4 +1,5 @@
 import { type Answer, method } from "@/lib/chemistry/answer"
+import { figures } from "@/lib/units/figures"
 import { OutOfDomain } from "@/lib/units/out-of-domain"
 import { holdFeed, type TankBalance } from "./balance"
 import { milligramsPerMillilitre } from "./bubble-count"
@@ -134,7 +135,7 @@ function demandAssumptions(tank: PreparedTank, input: DemandInput) {
     ...tank.assumptions,
     {
       code: "day",
-      message: `The gas opens ${input.wished_lead_min} min before ${input.photoperiod_h} h of light at the feed for that lead, is then throttled to hold the target, and closes ${input.close_before_lights_off_min} min before dark. Leaks and purging are not counted: add 10 to 20 %.`,
+      message: `The gas opens ${figures(input.wished_lead_min, 3)} min before ${figures(input.photoperiod_h, 3)} h of light at the feed for that lead, is then throttled to hold the target, and closes ${figures(input.close_before_lights_off_min, 3)} min before dark. Leaks and purging are not counted: add 10 to 20 %.`,
     },
   ]
 }

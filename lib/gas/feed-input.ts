@@ -1,3 +1,4 @@
+import { figures } from "@/lib/units/figures"
 import { OutOfDomain } from "@/lib/units/out-of-domain"
 import { holdFeed } from "./balance"
 import { milligramsPerMillilitre } from "./bubble-count"
@@ -36,7 +37,7 @@ export function resolveFeed(tank: PreparedTank, input: FeedInput): Feed {
       input.feed_mg_min !== undefined ? "feed_mg_min" : byVolume !== undefined ? "feed_ml_min" : "feed_ratio"
     throw new OutOfDomain(
       field,
-      `This feed would add ${rise.toPrecision(3)} mg/L each minute, too fast for any controller. Give at most ${FASTEST_RISE_MG_L_MIN} mg/L each minute.`,
+      `This feed would add ${figures(rise, 3)} mg/L each minute, too fast for any controller. Give at most ${FASTEST_RISE_MG_L_MIN} mg/L each minute.`,
     )
   }
   return {

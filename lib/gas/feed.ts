@@ -1,6 +1,7 @@
 import { co2AtPressure } from "@/lib/chemistry/carbonate"
 import { waterVapourPressureAtm } from "@/lib/chemistry/water"
 import { findRoot } from "@/lib/numeric/find-root"
+import { figures } from "@/lib/units/figures"
 import { OutOfDomain } from "@/lib/units/out-of-domain"
 import { feedToRise, holdFeed, limitLevel, type TankBalance } from "./balance"
 import { type DayPlan, dayLevel, gasHours, periodicDay } from "./day"
@@ -18,7 +19,7 @@ export function requireSchedule({ photoperiod_h, close_before_lights_off_min }: 
   if (close_before_lights_off_min < photoperiod_h * 60) return
   throw new OutOfDomain(
     "close_before_lights_off_min",
-    `The lights are on for ${photoperiod_h * 60} min, so the gas would close before they come on. Give less.`,
+    `The lights are on for ${figures(photoperiod_h * 60, 4)} min, so the gas would close before they come on. Give less.`,
   )
 }
 

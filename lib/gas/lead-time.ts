@@ -104,7 +104,7 @@ export function leadTime(input: LeadTimeInput): Answer<LeadTime, LeadTimeUncerta
       ...tank.assumptions,
       {
         code: "throttled",
-        message: `The feed runs until the tank holds ${figures(input.target_co2_mg_l, 3)} mg/L and is then throttled to hold it; ${figures(100 * input.reach_fraction, 3)} % of that when the lights come on counts as reached. The gas closes ${input.close_before_lights_off_min} min before dark.`,
+        message: `The feed runs until the tank holds ${figures(input.target_co2_mg_l, 3)} mg/L and is then throttled to hold it; ${figures(100 * input.reach_fraction, 3)} % of that when the lights come on counts as reached. The gas closes ${figures(input.close_before_lights_off_min, 3)} min before dark.`,
       },
     ],
     method: method("Lead time from the mass balance of the tank", tank.sources),

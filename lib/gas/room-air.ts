@@ -32,7 +32,8 @@ export function hoursAbove(room: RoomAir, peak_ppm: number, level_ppm: number): 
   if (peak_ppm <= level_ppm) return 0
   if (room.air_changes_per_h === 0 || room.background_ppm >= level_ppm) return null
   const ratio = (peak_ppm - room.background_ppm) / (level_ppm - room.background_ppm)
-  return Math.log(ratio) / room.air_changes_per_h
+  const hours = Math.log(ratio) / room.air_changes_per_h
+  return Number.isFinite(hours) ? hours : null
 }
 
 /** What a steady leak leads to, ppm. It is 1e6 in a room without any ventilation. */

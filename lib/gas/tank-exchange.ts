@@ -48,7 +48,7 @@ function guessedExchange(input: TankInput, volume_l: number): Judged {
     high: value * K600_FACTOR,
     assumption: {
       code: "exchange",
-      message: `A ${agitation} surface trades gas at ${k600_cm_h} cm/h (k600), right within a factor of ${K600_FACTOR}: the tank loses ${figures(100 * value, 2)} % of its excess CO2 an hour. Two pH readings in one night with the gas off replace this guess.`,
+      message: `A ${agitation} surface trades gas at ${k600_cm_h} cm/h (k600), right within a factor of ${K600_FACTOR}: what CO2 the tank holds beyond its rest halves in ${figures(Math.LN2 / value, 2)} h. Two pH readings in one night with the gas off replace this guess.`,
     },
     sources: ["wanninkhof2014", "jahneExchange1987", "coleCaraco1998", "engineeringJudgement"],
   }
@@ -83,7 +83,7 @@ function measuredExchange(input: TankInput, night: OvernightReadings, context: E
     high: value * spread,
     assumption: {
       code: "exchange_measured",
-      message: `Your two readings show that the tank loses ${figures(100 * value, 3)} % of its excess CO2 an hour. This replaces surface, agitation and their guess.`,
+      message: `Your two readings show that what CO2 the tank holds beyond its rest halves in ${figures(Math.LN2 / value, 2)} h. This replaces surface, agitation and their guess.`,
     },
     sources: [],
   }

@@ -112,7 +112,7 @@ export function prepareTank(input: TankInput): PreparedTank {
     exchange,
     efficiency,
     assumptions: [exchange.assumption, efficiency.assumption, ...tankAssumptions(input, rest_co2_mg_l)],
-    sources: [...exchange.sources, ...efficiency.sources, ...WATER_SOURCES],
+    sources: [...new Set([...exchange.sources, ...efficiency.sources, ...WATER_SOURCES])],
   }
 }
 

@@ -408,7 +408,7 @@ export const gasQuantities = {
   remaining_g: {
     unit: "g",
     ucum: "g",
-    min: 0,
+    min: 1,
     max: 50000,
     description: "CO2 still in the cylinder, by weighing",
   },
