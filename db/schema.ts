@@ -163,6 +163,8 @@ interface Subscription {
   cancel_at_period_end: Generated<boolean>
   /** When the oldest invoice that is still owed was issued. */
   past_due_since: Date | null
+  /** Plan that it goes to when the period ends. */
+  scheduled_plan: string | null
   updated_at: Generated<Date>
 }
 

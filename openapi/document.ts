@@ -165,6 +165,15 @@ function requestOf(operation: AnyOperation) {
   if (operation.method === "GET" || operation.method === "DELETE") {
     return { params, query: pick(operation.request, (name) => !names.has(name)) }
   }
+  if (operation.csv) {
+    const { csv } = operation.example.request as { csv: string }
+    const query = pick(operation.request, (name) => !names.has(name) && name !== "csv")
+    return {
+      params,
+      query,
+      body: { required: true, content: { "text/csv": { schema: z.string(), example: csv } } },
+    }
+  }
   const schema = names.size === 0 ? operation.request : pick(operation.request, (name) => !names.has(name))
   const example = Object.fromEntries(
     Object.entries(operation.example.request as object).filter(([name]) => !names.has(name)),

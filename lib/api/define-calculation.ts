@@ -1,6 +1,6 @@
 import { z } from "zod"
 import type { Answer } from "@/lib/chemistry/answer"
-import { defineOperation, type Operation } from "./define-operation"
+import { type Caller, defineOperation, type Operation } from "./define-operation"
 import type { Tag } from "./tags"
 
 const caution = z
@@ -38,7 +38,7 @@ interface Calculation<
   result: Result
   uncertainty: Uncertainty
   example: z.input<Request>
-  run(input: z.output<Request>): Answer<object, object>
+  run(input: z.output<Request>, caller: Caller): Answer<object, object> | Promise<Answer<object, object>>
 }
 
 /** Declares a calculation: a POST on the engine, answered by result, uncertainty, cautions, assumptions, method. */
@@ -62,16 +62,19 @@ export function defineCalculation<
     problems: ["out_of_domain"],
     response,
     example: { request: example, response: "computed" },
-    run({ input }) {
-      const { result, uncertainty, cautions, assumptions, method } = run(input)
-      return {
-        result: rounded(result),
-        uncertainty: rounded(uncertainty),
-        cautions,
-        assumptions,
-        method,
-        input,
-      } as unknown as z.output<typeof response>
+    run({ input, caller }) {
+      const shown = ({ result, uncertainty, cautions, assumptions, method }: Answer<object, object>) =>
+        ({
+          result: rounded(result),
+          uncertainty: rounded(uncertainty),
+          cautions,
+          assumptions,
+          method,
+          input,
+        }) as unknown as z.output<typeof response>
+      const answer = run(input, caller)
+      // The engine answers at once; only what looks something up first has to be waited for.
+      return answer instanceof Promise ? answer.then(shown) : shown(answer)
     },
   }) as unknown as Operation
 }

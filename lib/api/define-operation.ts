@@ -53,6 +53,8 @@ export interface Operation<Request extends z.ZodType = z.ZodType, Response exten
   readonly response: Response
   /** Status of success. */
   readonly status: 200 | 201 | 204
+  /** A body of CSV instead of JSON: its text is the input's `csv`, beside the query; and its largest size. */
+  readonly csv?: { readonly limit_bytes: number }
   /** Whether a success stores something, so that an `Idempotency-Key` guards against storing it twice. */
   readonly stores: boolean
   /** Refusals of its own, beyond those that every operation with its access shares. */

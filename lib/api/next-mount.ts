@@ -1,8 +1,8 @@
 import { env } from "@/lib/env"
 import type { AnyOperation } from "./define-operation"
-import { API_PREFIX, tooLarge } from "./node-mount"
+import { tooLarge } from "./node-mount"
 import { BODY_LIMIT_BYTES } from "./parse"
-import type { ApiRequest } from "./request"
+import { API_PREFIX, type ApiRequest } from "./request"
 import { createServe } from "./serve"
 
 type Handler = (request: Request) => Promise<Response>

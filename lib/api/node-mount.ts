@@ -1,10 +1,8 @@
 import type { IncomingMessage, RequestListener } from "node:http"
 import { TarnwrightError } from "@/lib/errors"
 import { BODY_LIMIT_BYTES } from "./parse"
-import type { ApiRequest } from "./request"
+import { API_PREFIX, type ApiRequest } from "./request"
 import type { Serve } from "./serve"
-
-export const API_PREFIX = "/api/v1"
 
 export interface NodeMountOptions {
   /** Whether a proxy of ours stands in front, whose `X-Forwarded-For` may be believed. */

@@ -11,30 +11,46 @@ const mostErrors = 50
 const utf8 = new TextDecoder("utf-8", { fatal: true })
 
 /**
- * The JSON body of a call; an empty body is an empty object where the operation takes one.
+ * The body of a call: JSON, or the text of a CSV file where the operation takes one.
  *
  * @throws TarnwrightError `media_type_unsupported`, `body_too_large`, `malformed_json`.
  */
-export async function parseBody(request: ApiRequest): Promise<unknown> {
+export async function parseBody({ csv }: AnyOperation, request: ApiRequest): Promise<unknown> {
   const mediaType = request.header("content-type")?.split(";")[0]?.trim().toLowerCase()
-  if (mediaType !== undefined && mediaType !== "application/json") {
-    throw new TarnwrightError("media_type_unsupported", "Send JSON, with Content-Type: application/json.")
-  }
-  const bytes = await request.readBody(BODY_LIMIT_BYTES)
-  if (bytes.length > 0 && mediaType === undefined) {
+  const wanted = csv ? "text/csv" : "application/json"
+  if (mediaType !== undefined && mediaType !== wanted) throw unsupported(wanted)
+  const bytes = await request.readBody(csv?.limit_bytes ?? BODY_LIMIT_BYTES)
+  if (bytes.length === 0) {
     throw new TarnwrightError(
-      "media_type_unsupported",
-      "Say what the body is, with Content-Type: application/json.",
+      "malformed_json",
+      `The body is empty. Send ${csv ? "a CSV file" : "a JSON object"}.`,
     )
   }
-  if (bytes.length === 0) {
-    throw new TarnwrightError("malformed_json", "The body is empty. Send a JSON object.")
-  }
+  if (mediaType === undefined) throw unsupported(wanted)
+  const text = decoded(bytes)
+  return csv ? { ...Object.fromEntries(request.query), csv: text } : parsed(text)
+}
+
+function unsupported(wanted: string): TarnwrightError {
+  return new TarnwrightError("media_type_unsupported", `Send the body with Content-Type: ${wanted}.`)
+}
+
+function decoded(bytes: Uint8Array): string {
   try {
-    return JSON.parse(utf8.decode(bytes))
+    return utf8.decode(bytes)
+  } catch {
+    throw new TarnwrightError("malformed_json", "The body is not UTF-8.")
+  }
+}
+
+function parsed(text: string): unknown {
+  try {
+    return JSON.parse(text)
   } catch (error) {
-    const reason = error instanceof SyntaxError ? error.message : "it is not UTF-8"
-    throw new TarnwrightError("malformed_json", `The body cannot be read as JSON: ${reason}.`)
+    throw new TarnwrightError(
+      "malformed_json",
+      `The body cannot be read as JSON: ${(error as SyntaxError).message}.`,
+    )
   }
 }
 

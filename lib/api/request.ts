@@ -1,3 +1,6 @@
+/** Where the API begins; both mounts answer below it. */
+export const API_PREFIX = "/api/v1"
+
 /** A call as both mounts hand it over. */
 export interface ApiRequest {
   readonly method: string

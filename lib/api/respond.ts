@@ -7,7 +7,7 @@ import type { AnyOperation } from "./define-operation"
 import { problemOf } from "./problem"
 import type { Progress } from "./progress"
 import { rateHeaders } from "./rate-headers"
-import type { ApiRequest, ApiResponse } from "./request"
+import { API_PREFIX, type ApiRequest, type ApiResponse } from "./request"
 
 /** The answer to a call that succeeded. What everybody may read carries an ETag and can be answered by 304. */
 export function success(
@@ -21,6 +21,7 @@ export function success(
     ...commonHeaders(progress),
     "content-type": "application/json",
     ...(progress.access && { "tarnwright-units": String(progress.charged) }),
+    ...linkHeaders(operation, output, request),
     ...deprecationHeaders(operation),
   }
   if (operation.access.kind !== "public" || body === null) {
@@ -66,13 +67,37 @@ export function refusal(refused: TarnwrightError, publicUrl: string, progress: P
   }
 }
 
+/** Links to the next page of a list and to what is to be known of a deprecation. @source RFC 8288 */
+function linkHeaders(
+  { deprecation }: AnyOperation,
+  output: unknown,
+  request: ApiRequest,
+): Record<string, string> {
+  const links = [
+    ...(deprecation ? [`<${deprecation.page}>; rel="deprecation"; type="text/html"`] : []),
+    ...(isPage(output) ? [`<${nextPage(request, output.next_cursor)}>; rel="next"`] : []),
+  ]
+  return links.length > 0 ? { link: links.join(", ") } : {}
+}
+
+function isPage(output: unknown): output is { next_cursor: string } {
+  return (
+    typeof output === "object" && output !== null && "next_cursor" in output && output.next_cursor !== null
+  )
+}
+
+function nextPage({ path, query }: ApiRequest, cursor: string): string {
+  const next = new URLSearchParams(query)
+  next.set("cursor", cursor)
+  return `${API_PREFIX}${path}?${next}`
+}
+
 /** @source RFC 9745 section 2.1 (a structured-field date) and RFC 8594 section 3 (an HTTP date). */
 function deprecationHeaders({ deprecation }: AnyOperation): Record<string, string> {
   if (!deprecation) return {}
   return {
     deprecation: `@${Math.floor(deprecation.since.getTime() / 1000)}`,
     sunset: deprecation.sunset.toUTCString(),
-    link: `<${deprecation.page}>; rel="deprecation"; type="text/html"`,
   }
 }
 

@@ -161,5 +161,7 @@ function requestIdOf(request: ApiRequest): string {
 }
 
 async function bodyOf(operation: AnyOperation, request: ApiRequest): Promise<unknown> {
-  return operation.method === "POST" || operation.method === "PATCH" ? parseBody(request) : undefined
+  return operation.method === "POST" || operation.method === "PATCH"
+    ? parseBody(operation, request)
+    : undefined
 }

@@ -27,8 +27,18 @@ export const actionNames = {
   "webhook.deleted": "Webhook endpoint deleted",
   "billing.checkout_started": "Checkout opened",
   "billing.portal_opened": "Billing portal opened",
+  "billing.plan_change_asked": "Change of plan asked for",
+  "billing.plan_change_taken_back": "Change of plan taken back",
   "billing.spending_cap_set": "Spending cap set",
   "subscription.changed": "Subscription changed",
+  "catalog.item_created": "Catalogue item added",
+  "catalog.item_changed": "Catalogue item changed",
+  "catalog.item_deleted": "Catalogue item deleted",
+  "catalog.imported": "Catalogue imported",
+  "report.created": "Report made",
+  "report.deleted": "Report deleted",
+  "report.shared": "Report shared",
+  "report.unshared": "Sharing of a report ended",
 } as const
 
 export type Action = keyof typeof actionNames

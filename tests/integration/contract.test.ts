@@ -16,7 +16,7 @@ ajv.addSchema(document, "document")
 
 const keyed = registry.filter(({ access }) => access.kind === "key")
 const computed = keyed.filter(({ example }) => example.response === "computed")
-const withBody = registry.filter(({ method }) => method === "POST" || method === "PATCH")
+const withJson = keyed.filter((operation) => hasBody(operation) && !operation.csv)
 
 let account: TestAccount
 let secret: string
@@ -79,10 +79,10 @@ describe.each(keyed.map((operation) => [operation.id, operation] as const))("%s"
   })
 
   it("refuses an unknown field with 422 and points to it", async () => {
-    const unknown = { ...(bodyOf(operation) ?? {}), no_such_field: 1 }
-    const response = hasBody(operation)
-      ? await call(operation, secret).send(unknown)
-      : await call(operation, secret).query({ ...(operation.example.request as object), no_such_field: 1 })
+    const asBody = hasBody(operation) && !operation.csv
+    const response = asBody
+      ? await call(operation, secret).send({ ...(bodyOf(operation) as object), no_such_field: 1 })
+      : await call(operation, secret).query({ no_such_field: 1 }).send(bodyOf(operation))
     expect(response.status).toBe(422)
     expect(response.body.errors).toContainEqual({
       pointer: "/no_such_field",
@@ -92,28 +92,25 @@ describe.each(keyed.map((operation) => [operation.id, operation] as const))("%s"
   })
 })
 
-describe.each(withBody.filter(({ access }) => access.kind === "key").map((each) => [each.id, each] as const))(
-  "%s",
-  (_, operation) => {
-    it("refuses a body over 256 KiB with 413", async () => {
-      const response = await call(operation, secret)
-        .set("content-type", "application/json")
-        .send(JSON.stringify({ filler: "x".repeat(300 * 1024) }))
-      expect(response.status).toBe(413)
-      expectValid(operation, response)
-    })
+describe.each(withJson.map((operation) => [operation.id, operation] as const))("%s", (_, operation) => {
+  it("refuses a body over 256 KiB with 413", async () => {
+    const response = await call(operation, secret)
+      .set("content-type", "application/json")
+      .send(JSON.stringify({ filler: "x".repeat(300 * 1024) }))
+    expect(response.status).toBe(413)
+    expectValid(operation, response)
+  })
 
-    it("refuses what is not JSON with 415, and malformed JSON with 400", async () => {
-      const text = await call(operation, secret).set("content-type", "text/plain").send("ph=6.8")
-      expect(text.status).toBe(415)
-      expectValid(operation, text)
-      const broken = await call(operation, secret).set("content-type", "application/json").send('{"ph": 6.8')
-      expect(broken.status).toBe(400)
-      expect(broken.body.code).toBe("malformed_json")
-      expectValid(operation, broken)
-    })
-  },
-)
+  it("refuses what is not JSON with 415, and malformed JSON with 400", async () => {
+    const text = await call(operation, secret).set("content-type", "text/plain").send("ph=6.8")
+    expect(text.status).toBe(415)
+    expectValid(operation, text)
+    const broken = await call(operation, secret).set("content-type", "application/json").send('{"ph": 6.8')
+    expect(broken.status).toBe(400)
+    expect(broken.body.code).toBe("malformed_json")
+    expectValid(operation, broken)
+  })
+})
 
 describe("the registry", () => {
   it("has unique ids and paths", () => {
@@ -142,6 +139,8 @@ function call(operation: AnyOperation, key?: string) {
   const path = operation.path.replace(/\{(\w+)\}/g, (_, name: string) => String(example[name]))
   const method = operation.method.toLowerCase() as "get" | "post" | "patch" | "delete"
   const pending = request(stack().appUrl)[method](`/api/v1${path}`)
+  if (operation.csv) pending.set("content-type", "text/csv")
+  if (!hasBody(operation)) pending.query(rest(operation))
   return key ? pending.set("authorization", `Bearer ${key}`) : pending
 }
 
@@ -149,8 +148,13 @@ function hasBody({ method }: AnyOperation): boolean {
   return method === "POST" || method === "PATCH"
 }
 
-function bodyOf(operation: AnyOperation): object | undefined {
+function bodyOf(operation: AnyOperation): object | string | undefined {
   if (!hasBody(operation)) return undefined
+  return operation.csv ? (operation.example.request as { csv: string }).csv : rest(operation)
+}
+
+/** The example's request without what stands in the path. */
+function rest(operation: AnyOperation): object {
   const names = [...operation.path.matchAll(/\{(\w+)\}/g)].map(([, name]) => name)
   return Object.fromEntries(
     Object.entries(operation.example.request as object).filter(([name]) => !names.includes(name)),

@@ -7,6 +7,10 @@ import { carbonateGrid } from "./carbonate/grid/operation"
 import { carbonateKh } from "./carbonate/kh/operation"
 import { carbonatePh } from "./carbonate/ph/operation"
 import { carbonatePhDrop } from "./carbonate/ph-drop/operation"
+import { importCatalog } from "./catalog/imports/operation"
+import { changeCatalogItem, deleteCatalogItem, readCatalogItem } from "./catalog/items/[item_id]/operation"
+import { createCatalogItem, listCatalogItems } from "./catalog/items/operation"
+import { matchCatalogItems } from "./catalog/match/operation"
 import { flowClogging } from "./flow/clogging/operation"
 import { flowOperatingPoint } from "./flow/operating-point/operation"
 import { flowReactor } from "./flow/reactor/operation"
@@ -19,6 +23,7 @@ import { gasRoomSafety } from "./gas/room-safety/operation"
 import { gasWorkingPressure } from "./gas/working-pressure/operation"
 import { health } from "./health/operation"
 import { openapi } from "./openapi.json/operation"
+import { plan } from "./plan/operation"
 import { usage } from "./usage/operation"
 import { readWebhookDelivery } from "./webhooks/[endpoint_id]/deliveries/[delivery_id]/operation"
 import { replayWebhookDelivery } from "./webhooks/[endpoint_id]/deliveries/[delivery_id]/replay/operation"
@@ -49,7 +54,15 @@ export const registry: readonly AnyOperation[] = [
   flowOperatingPoint,
   flowReactor,
   flowClogging,
+  plan,
   batch,
+  listCatalogItems,
+  createCatalogItem,
+  readCatalogItem,
+  changeCatalogItem,
+  deleteCatalogItem,
+  importCatalog,
+  matchCatalogItems,
   usage,
   account,
   listWebhooks,

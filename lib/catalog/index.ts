@@ -1,0 +1,8 @@
+export { changeItem, deleteItem, type ItemChange } from "./change"
+export { createItem } from "./create"
+export { CSV_LIMIT_BYTES, CSV_LIMIT_ROWS, csvColumns, type RowError } from "./csv"
+export { type ItemQuery, listItems, showItem } from "./find"
+export { type Import, type ImportOutcome, importItems } from "./import"
+export type { CurvePoint, Item, ItemAttributes, NewItem } from "./item"
+export { type Attribute, attributesOf, type ItemKind, itemKindNames, itemKinds } from "./kinds"
+export { planItems } from "./plan-items"
