@@ -105,7 +105,12 @@ export function DataTable<Row extends { readonly id: string }>({
 
   return (
     <div>
-      <div className="mb-3 flex flex-wrap items-end justify-between gap-3">
+      <div
+        className={classNames(
+          "mb-3 flex flex-wrap items-end justify-between gap-3",
+          !toolbar && rows.length === 0 && "hidden",
+        )}
+      >
         <div className="flex flex-wrap items-end gap-3">
           <input
             type="search"

@@ -27,7 +27,7 @@ export function Figure({
 /** Figures side by side, divided by hairlines. */
 export function FigureRow({ children }: { children: ReactNode }) {
   return (
-    <dl className="grid grid-cols-[repeat(auto-fit,minmax(11rem,1fr))] gap-px overflow-hidden border-y border-line bg-line [&>*]:bg-paper [&>*]:py-4 [&>*]:pr-4 [&>*:not(:first-child)]:pl-4">
+    <dl className="grid grid-cols-[repeat(auto-fit,minmax(11rem,1fr))] gap-px overflow-hidden border-y border-line bg-line [&>*]:bg-paper [&>*]:py-4 [&>*]:pr-4 sm:[&>*:not(:first-child)]:pl-4">
       {children}
     </dl>
   )

@@ -50,7 +50,12 @@ export default async function Overview({ params }: OfAccount) {
               under="today, free"
             />
             {inForce && (
-              <Figure label="Keys in force" value={inForce.length} unit="keys" under={lastUse(inForce)} />
+              <Figure
+                label="Keys in force"
+                value={inForce.length}
+                unit={inForce.length === 1 ? "key" : "keys"}
+                under={lastUse(inForce)}
+              />
             )}
           </FigureRow>
           <div className="mt-5">
