@@ -25,7 +25,7 @@ export async function ensureBuild(root: string, report: Report, signal: AbortSig
     existsSync(path.join(root, ".next/BUILD_ID")) &&
     existsSync(stamp) &&
     readFileSync(stamp, "utf8") === hash &&
-    (existsSync(path.join(root, "public/w")) || !existsSync(path.join(root, "widgets/build.ts")))
+    existsSync(path.join(root, "public/w"))
 
   if (isFresh(hashSources(root))) return report("site and widgets: the build is up to date")
   const release = await takeLock(root, report, signal)
@@ -33,10 +33,8 @@ export async function ensureBuild(root: string, report: Report, signal: AbortSig
     const hash = hashSources(root)
     if (isFresh(hash)) return report("site and widgets: built meanwhile by another command")
     rmSync(stamp, { force: true })
-    if (existsSync(path.join(root, "widgets/build.ts"))) {
-      report("building the widgets")
-      await run(root, ["--import", "tsx", "widgets/build.ts"], signal)
-    }
+    report("building the widgets")
+    await run(root, ["--import", "tsx", "widgets/build.ts"], signal)
     report("building the site (half a minute or so)")
     await run(root, ["node_modules/next/dist/bin/next", "build"], signal)
     writeFileSync(stamp, hash)
