@@ -12,6 +12,8 @@ import { flowDefaults } from "@/lib/flow/loop-input"
 import { operatingPoint } from "@/lib/flow/operating-point"
 import { reactorDefaults } from "@/lib/flow/reactor-input"
 import { reactorVerdict } from "@/lib/flow/reactor-verdict"
+import { planDefaults } from "@/lib/plan/plan-input"
+import { systemPlan } from "@/lib/plan/system-plan"
 
 interface Row {
   readonly name: string
@@ -112,6 +114,11 @@ const rows: readonly Row[] = [
   {
     name: "answer: cloggingCourse of 11 steps",
     fn: (i) => cloggingCourse({ ...reactorLoop, feed_mg_min: sweep(i, 20, 90), steps: DEFAULT_STEPS }),
+  },
+  {
+    name: "answer: systemPlan",
+    target: 500,
+    fn: (i) => systemPlan({ ...planDefaults, ...loop, kh_dkh: sweep(i, 2, 8) }),
   },
 ]
 

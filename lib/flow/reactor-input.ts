@@ -3,6 +3,7 @@ import { waterVapourPressureAtm } from "@/lib/chemistry/water"
 import type { DissolvingInto } from "@/lib/gas/bubble-dissolution"
 import { bubbleWater } from "@/lib/gas/bubble-rise"
 import { checkBounds } from "@/lib/units/bounds"
+import { figures } from "@/lib/units/figures"
 import { OutOfDomain } from "@/lib/units/out-of-domain"
 import { quantities } from "@/lib/units/quantities"
 import { type BubbleTravel, bubbleTravel } from "./bubble-travel"
@@ -68,7 +69,7 @@ export function prepareReactor(input: ReactorLoopInput): PreparedReactor {
   if (input.temperature_c < COLDEST_C || input.temperature_c > HOTTEST_C) {
     throw new OutOfDomain(
       "temperature_c",
-      `The rise of bubbles is known from ${COLDEST_C} to ${HOTTEST_C} °C; you gave ${input.temperature_c}.`,
+      `The rise of bubbles is known from ${COLDEST_C} to ${HOTTEST_C} °C; you gave ${figures(input.temperature_c, 3)}.`,
     )
   }
   const hose_mm = (input.return_hose ?? input.hose).inner_diameter_mm

@@ -2,7 +2,7 @@ import type { Answer } from "@/lib/chemistry/answer"
 import { type BubbleRate, type BubbleRateUncertainty, bubbleRate } from "@/lib/gas/bubble-rate"
 import { type CylinderComparison, type CylinderUncertainty, cylinderLife } from "@/lib/gas/cylinder-life"
 import { type Demand, type DemandInput, type DemandUncertainty, gasDemand } from "@/lib/gas/demand"
-import { dayPlan, rampFeed } from "@/lib/gas/feed"
+import { dayPlan } from "@/lib/gas/feed"
 import { UNATTENDED_MG_L } from "@/lib/gas/feed-cautions"
 import { type LeadTime, type LeadTimeUncertainty, leadTime } from "@/lib/gas/lead-time"
 import type { GasMethodName } from "@/lib/gas/methods"
@@ -36,18 +36,23 @@ export interface GasSide {
   readonly room_safety: Answer<RoomSafety, RoomUncertainty>
 }
 
-/** The feed that a reactor would have to dissolve in this tank, mg/min: that of the usual lead. */
-export function reactorFeed(input: PlanInput, water: TankWater): number {
-  const tankInput = gasInput(input, water, "inline_reactor")
-  const { balance } = prepareTank(tankInput)
-  const lead_h = tankInput.wished_lead_min / 60
-  return feasible(rampFeed(balance, tankInput, { ...input, lead_h }))
+/** What a tank needs with a method. */
+export function demandOf(
+  input: PlanInput,
+  water: TankWater,
+  method: GasMethodName,
+): Answer<Demand, DemandUncertainty> {
+  return gasDemand(gasInput(input, water, method))
 }
 
-/** Everything about the gas for a method. */
-export function gasSide(input: PlanInput, water: TankWater, name: GasMethodName): GasSide {
+/** Everything about the gas for a method whose demand is known. */
+export function gasSide(
+  input: PlanInput,
+  water: TankWater,
+  name: GasMethodName,
+  demand: Answer<Demand, DemandUncertainty>,
+): GasSide {
   const tankInput = gasInput(input, water, name)
-  const demand = gasDemand(tankInput)
   const dosing = dosingOf(input, tankInput, demand.result)
   const { feed_mg_min, daily_use_g_day } = dosing
   const working_pressure = workingPressure({
@@ -151,7 +156,7 @@ function courseOf(input: PlanInput, tankInput: DemandInput, dosing: Dosing): Day
 }
 
 /** Throws {@link OutOfDomain} on a feed that no single valve and reactor are made for. */
-function feasible(feed_mg_min: number): number {
+export function feasible(feed_mg_min: number): number {
   const { min, max } = quantities.feed_mg_min
   if (feed_mg_min >= min && feed_mg_min <= max) return feed_mg_min
   throw new OutOfDomain(

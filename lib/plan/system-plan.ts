@@ -12,7 +12,7 @@ import { withFields } from "@/lib/units/out-of-domain"
 import { assemblySteps, type Step } from "./assembly"
 import { commissioningSteps } from "./commissioning"
 import type { PlanFacts } from "./facts"
-import { type GasSide, gasSide, reactorFeed } from "./gas-side"
+import { demandOf, feasible, type GasSide, gasSide } from "./gas-side"
 import { type Chore, maintenancePlan } from "./maintenance"
 import { type CatalogMatch, matchCatalog } from "./match"
 import { mergedAssumptions, mergedCautions, mergedMethod, type Said } from "./merge"
@@ -71,8 +71,10 @@ export function systemPlan(input: PlanInput): Answer<SystemPlan, PlanUncertainty
   const setPoint = withFields({ co2_mg_l: "target_co2_mg_l" }, () =>
     phForCo2({ ...input, co2_mg_l: input.target_co2_mg_l }),
   )
-  const loop = waterSide(input, water.volume_l, reactorFeed(input, water))
-  const gas = gasSide(input, water, loop.name)
+  const withReactor = demandOf(input, water, "inline_reactor")
+  const loop = waterSide(input, water.volume_l, feasible(withReactor.result.ramp_feed_mg_min))
+  const demand = loop.name === "inline_reactor" ? withReactor : demandOf(input, water, loop.name)
+  const gas = gasSide(input, water, loop.name, demand)
   const facts = factsOf(input, water, setPoint.result, loop, gas)
   const sections = {
     ph: setPoint,
