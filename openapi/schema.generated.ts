@@ -2672,7 +2672,7 @@ export interface operations {
                      */
                     indicator_colour?: "yellow" | "yellow_green" | "green" | "blue_green" | "blue";
                     /**
-                     * @description Standard error of the pH reading: 0.02 bench meter, 0.1 pen or probe, 0.2 liquid test, in pH
+                     * @description Standard error of the pH read from the colour, in pH
                      * @default 0.15
                      */
                     indicator_ph_error?: number;

@@ -1,5 +1,6 @@
 import { z } from "zod"
 import type { Answer } from "@/lib/chemistry/answer"
+import { roundSignificant } from "@/lib/units/figures"
 import { type Caller, defineOperation, type Operation } from "./define-operation"
 import type { Tag } from "./tags"
 
@@ -81,7 +82,7 @@ export function defineCalculation<
 
 /** The value with each number rounded to 6 significant digits, as the contract promises. */
 export function rounded(value: unknown): unknown {
-  if (typeof value === "number") return value === 0 ? 0 : Number(value.toPrecision(6))
+  if (typeof value === "number") return roundSignificant(value)
   if (Array.isArray(value)) return value.map(rounded)
   if (typeof value === "object" && value !== null) {
     const copy: Record<string, unknown> = {}

@@ -83,10 +83,11 @@ function itemFrom(record: Record<string, string>): { item?: NewItem; errors: Cel
     currency: record.currency || null,
     attributes,
   }
-  const seen = new Set(errors.map(({ column }) => column))
+  // A number that could not be read is not also told as one that is missing.
+  const unread = errors.length > 0
   for (const { pointer, detail } of itemErrors(item)) {
-    const column = pointer.split("/").at(-1)?.replace("price_minor", "price") ?? ""
-    if (!seen.has(column)) errors.push({ column, detail })
+    if (unread && pointer.startsWith("/attributes")) continue
+    errors.push({ column: pointer.split("/").at(-1)?.replace("price_minor", "price") ?? "", detail })
   }
   return { item, errors }
 }

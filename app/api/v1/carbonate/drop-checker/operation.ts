@@ -21,7 +21,7 @@ export const carbonateDropChecker = defineCalculation({
       .enum(colours)
       .optional()
       .meta({ description: "Colour of the bromothymol blue solution; the list may grow" }),
-    indicator_ph_error: quantity("ph_error").default(dropCheckerDefaults.indicator_ph_error),
+    indicator_ph_error: quantity("indicator_ph_error").default(dropCheckerDefaults.indicator_ph_error),
     temperature_c: quantity("temperature_c").default(dropCheckerDefaults.temperature_c),
     temperature_error_c: quantity("temperature_error_c").default(dropCheckerDefaults.temperature_error_c),
   }),
