@@ -60,7 +60,7 @@ export default function Home() {
           </>
         }
       >
-        <div className="grid gap-6 lg:grid-cols-2">
+        <div className="grid gap-6 lg:grid-cols-2 [&>*]:min-w-0">
           <CodeBlock what="Request" code={requestExample()} />
           <CodeBlock what="Answer, shortened" code={answerExample()} />
         </div>

@@ -18,7 +18,7 @@ export function SchematicDrawing({ schematic }: { schematic: Schematic }) {
       <svg
         role="img"
         aria-label={label}
-        viewBox={`0 0 390 ${height}`}
+        viewBox={`0 0 404 ${height}`}
         className="block w-full max-w-md @min-[60rem]:hidden"
       >
         <NarrowSchematic schematic={schematic} />

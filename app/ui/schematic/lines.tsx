@@ -3,6 +3,11 @@ import { valueText } from "./value-text"
 
 export const LINE_PX = 18
 
+/** A loss that no gauge shows stands in the table only. */
+export function isWorthDrawing({ quantity, value }: SchematicValue): boolean {
+  return quantity !== "line_bar" || value >= 0.01
+}
+
 /** A label and its values under one another, at the place that they belong to. */
 export function Lines({
   x,
@@ -17,11 +22,12 @@ export function Lines({
   label?: string
   values: readonly SchematicValue[]
 }) {
+  const drawn = values.filter(isWorthDrawing)
   const first = label === undefined ? 0 : 1
   return (
     <text x={x} y={y} textAnchor={anchor} fontSize={13} fill="var(--ink)">
       {label !== undefined && <tspan fontWeight={600}>{label}</tspan>}
-      {values.map((value, index) => {
+      {drawn.map((value, index) => {
         const { before, figure, after } = valueText(value)
         return (
           <tspan key={`${value.quantity} ${value.of ?? ""}`} x={x} dy={index + first === 0 ? 0 : LINE_PX}>

@@ -1,25 +1,28 @@
-import type { Schematic, SchematicEdge, SchematicNode } from "@/lib/plan/schematic"
-import { LINE_PX, Lines } from "./lines"
+import type { NodeKind, Schematic, SchematicEdge, SchematicNode } from "@/lib/plan/schematic"
+import { isWorthDrawing, LINE_PX, Lines } from "./lines"
 import { Pipe } from "./pipe"
 import { symbols } from "./symbols"
 
 const axis = 84
-const textX = 142
+const textX = 136
 const loopX = 16
 
-/** Height of a symbol above and below its middle, in the narrow drawing. */
-const reach: Record<SchematicNode["kind"], number> = {
-  cylinder: 58,
-  reducer: 22,
-  solenoid: 28,
-  check_valve: 20,
-  reactor: 98,
-  inline_diffuser: 36,
-  diffuser: 48,
-  filter: 66,
-  return: 14,
-  tank: 70,
+/** How far a symbol reaches from its middle, and where lines join it above and below, in the narrow drawing. */
+const shapes: Record<NodeKind, { readonly half: number; readonly up: number; readonly down: number }> = {
+  cylinder: { half: 58, up: 58, down: 44 },
+  reducer: { half: 20, up: 20, down: 20 },
+  solenoid: { half: 20, up: 20, down: 20 },
+  check_valve: { half: 14, up: 14, down: 12 },
+  reactor: { half: 96, up: 96, down: 96 },
+  inline_diffuser: { half: 34, up: 34, down: 34 },
+  diffuser: { half: 92, up: 0, down: 9 },
+  filter: { half: 66, up: 66, down: 64 },
+  return: { half: 12, up: 6, down: 8 },
+  tank: { half: 60, up: 60, down: 60 },
 }
+
+/** Drawn for a line that runs across; here lines run down. */
+const turned: readonly NodeKind[] = ["solenoid", "check_valve"]
 
 interface Row {
   readonly node: SchematicNode
@@ -35,20 +38,22 @@ export function narrowLayout({ nodes, edges }: Schematic): { rows: readonly Row[
   let into: SchematicEdge | undefined
   while (current && !rows.some(({ node }) => node === current)) {
     const node: SchematicNode = current
-    const half = Math.max(reach[node.kind], ((node.values.length + 1) * LINE_PX) / 2)
-    const gap = into === undefined ? 0 : Math.max(24, into.values.length * LINE_PX + 26)
+    const half = halfOf(node)
+    const gap = into === undefined ? 0 : Math.max(24, drawnOf(into) * LINE_PX + 26)
     const y = bottom + gap + half
     rows.push({ node, y, into })
     bottom = y + half
     into = edges.find(({ from, to }) => from === node.id && !rows.some((row) => row.node.id === to))
     current = nodes.find(({ id }) => id === into?.to)
   }
-  return { rows, height: bottom + 26 }
+  const closing = edges.find(({ from }) => from === rows.at(-1)?.node.id)
+  return { rows, height: bottom + 26 + (closing ? drawnOf(closing) : 0) * LINE_PX }
 }
 
 export function NarrowSchematic({ schematic }: { schematic: Schematic }) {
-  const { rows, height } = narrowLayout(schematic)
+  const { rows } = narrowLayout(schematic)
   const last = rows.at(-1)
+  const foot = last ? last.y + halfOf(last.node) + 18 : 0
   const closing = schematic.edges.find(({ from }) => from === last?.node.id)
   const closed = rows.find(({ node }) => node.id === closing?.to)
   return (
@@ -56,8 +61,8 @@ export function NarrowSchematic({ schematic }: { schematic: Schematic }) {
       {rows.map(({ node, y, into }, index) => {
         const above = rows[index - 1]
         if (!above || !into) return null
-        const from = above.y + reach[above.node.kind]
-        const to = y - reach[node.kind]
+        const from = above.y + shapes[above.node.kind].down
+        const to = y - shapes[node.kind].up
         return (
           <g key={node.id}>
             <Pipe
@@ -67,7 +72,7 @@ export function NarrowSchematic({ schematic }: { schematic: Schematic }) {
             />
             <Lines
               x={textX}
-              y={gapMiddle(above, y, node) - ((into.values.length - 1) * LINE_PX) / 2 + 4}
+              y={gapMiddle(above, y, node) - ((drawnOf(into) - 1) * LINE_PX) / 2 + 4}
               values={into.values}
             />
           </g>
@@ -76,16 +81,21 @@ export function NarrowSchematic({ schematic }: { schematic: Schematic }) {
       {last && closing && closed && (
         <>
           <Pipe
-            path={`M${axis} ${last.y + reach[last.node.kind]}V${height - 8}H${loopX}V${closed.y - reach[closed.node.kind] - 10}H${axis}`}
+            path={`M${axis} ${last.y + shapes[last.node.kind].down}V${foot}H${loopX}V${closed.y - shapes[closed.node.kind].up - 10}H${axis}`}
             medium={closing.medium}
             arrow={{ x: loopX, y: (last.y + closed.y) / 2, turn: -90 }}
           />
-          <Lines x={axis + 14} y={height - 4} values={closing.values} />
+          <Lines x={axis + 14} y={foot + 4} values={closing.values} />
         </>
       )}
       {rows.map(({ node, y }) => (
         <g key={node.id}>
-          <g transform={`translate(${axis} ${y})`} fill="var(--paper)" stroke="var(--ink)" strokeWidth={1.5}>
+          <g
+            transform={`translate(${axis} ${y})${turned.includes(node.kind) ? " rotate(90)" : ""}`}
+            fill="var(--paper)"
+            stroke="var(--ink)"
+            strokeWidth={1.5}
+          >
             {node.kind === "tank" ? <SmallTank /> : symbols[node.kind]}
           </g>
           <Lines
@@ -101,8 +111,15 @@ export function NarrowSchematic({ schematic }: { schematic: Schematic }) {
 }
 
 function gapMiddle(above: Row, y: number, node: SchematicNode): number {
-  const half = ({ kind, values }: SchematicNode) => Math.max(reach[kind], ((values.length + 1) * LINE_PX) / 2)
-  return (above.y + half(above.node) + y - half(node)) / 2
+  return (above.y + halfOf(above.node) + y - halfOf(node)) / 2
+}
+
+function halfOf({ kind, values }: SchematicNode): number {
+  return Math.max(shapes[kind].half, ((values.length + 1) * LINE_PX) / 2)
+}
+
+function drawnOf({ values }: SchematicEdge): number {
+  return values.filter(isWorthDrawing).length
 }
 
 function SmallTank() {

@@ -12,6 +12,9 @@ export interface ValueText {
 /** Words that make a bare number plain at its place. A unit that reads badly on a drawing is replaced. */
 const words: Partial<Record<QuantityName, { before?: string; after?: string }>> = {
   ph: { before: "pH" },
+  co2_mg_l: { after: "mg/L CO2" },
+  head_m: { after: "m head," },
+  pressure_bar_abs: { after: "bar absolute" },
   reynolds: { before: "Re" },
   days: { after: "days a fill" },
   bubbles_per_s: { after: "bubbles a second" },

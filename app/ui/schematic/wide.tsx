@@ -16,12 +16,12 @@ const places: Record<NodeKind, Place> = {
   reducer: { x: 74, y: 70, text: [106, 98] },
   solenoid: { x: 290, y: 68, text: [226, 112] },
   check_valve: { x: 470, y: 70, text: [442, 112] },
-  filter: { x: 370, y: 392, text: [312, 346, "end"] },
+  filter: { x: 346, y: 392, text: [288, 346, "end"] },
   reactor: { x: 600, y: 296, text: [556, 246, "end"] },
   inline_diffuser: { x: 600, y: 296, text: [576, 276, "end"] },
-  diffuser: { x: 1000, y: 432, text: [900, 420] },
+  diffuser: { x: 1050, y: 438, text: [1022, 412, "end"] },
   return: { x: 840, y: 236, text: [676, 84] },
-  tank: { x: 910, y: 335, text: [872, 300] },
+  tank: { x: 910, y: 335, text: [866, 286] },
 }
 
 interface Route {
@@ -39,11 +39,11 @@ const routes: Record<string, Route> = {
   "solenoid check_valve": { path: "M310 70H456", arrow: [384, 70, 0], text: [322, 44] },
   "check_valve reactor": { path: "M482 70H600V200", arrow: [600, 150, 90], text: [612, 64] },
   "check_valve inline_diffuser": { path: "M482 70H600V262", arrow: [600, 150, 90], text: [612, 64] },
-  "check_valve diffuser": { path: "M482 70H1000V430", arrow: [760, 70, 0], text: [496, 60] },
-  "tank filter": { path: "M772 440V175H712V500H370V456", arrow: [540, 500, 180], text: [392, 528] },
-  "filter reactor": { path: "M370 326V218H578", arrow: [470, 218, 0], text: [384, 168] },
-  "filter inline_diffuser": { path: "M370 326V218H600V262", arrow: [470, 218, 0], text: [384, 168] },
-  "filter return": { path: "M370 326V218H660V140H840V232", arrow: [520, 218, 0], text: [384, 168] },
+  "check_valve diffuser": { path: "M482 70H1050V438", arrow: [760, 70, 0], text: [496, 60] },
+  "tank filter": { path: "M772 440V175H712V500H346V456", arrow: [540, 500, 180], text: [368, 528] },
+  "filter reactor": { path: "M346 326V218H578", arrow: [470, 218, 0], text: [384, 168] },
+  "filter inline_diffuser": { path: "M346 326V218H600V262", arrow: [470, 218, 0], text: [384, 168] },
+  "filter return": { path: "M346 326V218H660V140H840V232", arrow: [520, 218, 0], text: [384, 168] },
   "reactor return": { path: back, arrow: [660, 280, -90] },
   "inline_diffuser return": { path: "M600 330V430H660V140H840V232", arrow: [660, 280, -90] },
 }
