@@ -1,28 +1,17 @@
 import { generateKeyPairSync } from "node:crypto"
 import { decodeProtectedHeader, exportJWK, generateKeyPair, importJWK, jwtVerify, SignJWT } from "jose"
 import { beforeAll, describe, expect, it } from "vitest"
+import { signSessionToken, verifySessionToken } from "@/lib/widgets/session-token"
+import { practiceSettings } from "../support/settings"
 
 const now = new Date("2026-12-01T10:00:00Z")
 const claims = { widget_id: "wdgt_1", account_id: "acct_1", origin: "https://shop.example" }
 const jwk = { ...generateKeyPairSync("ed25519").privateKey.export({ format: "jwk" }), kid: "k1" }
 
 beforeAll(() => {
-  Object.assign(process.env, {
-    PUBLIC_URL: "https://app.example",
-    DATABASE_URL: "postgres://127.0.0.1/none",
-    DATABASE_WORKER_URL: "postgres://127.0.0.1/none",
-    DATABASE_ADMIN_URL: "postgres://127.0.0.1/none",
-    KEY_PEPPERS: `1:${"p".repeat(32)}`,
-    NEXTAUTH_SECRET: "n".repeat(32),
-    ENCRYPTION_KEY: Buffer.alloc(32).toString("base64"),
-    WIDGET_SIGNING_KEY: JSON.stringify(jwk),
-    SMTP_URL: "smtp://127.0.0.1:1",
-    STRIPE_SECRET_KEY: "sk",
-    STRIPE_WEBHOOK_SECRET: "whsec",
-  })
+  const own = { PUBLIC_URL: "https://app.example", WIDGET_SIGNING_KEY: JSON.stringify(jwk) }
+  Object.assign(process.env, practiceSettings(), own)
 })
-
-const { signSessionToken, verifySessionToken } = await import("@/lib/widgets/session-token")
 
 const later = (seconds: number) => new Date(now.getTime() + seconds * 1000)
 const refused = { code: "origin_not_allowed" }

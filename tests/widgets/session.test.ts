@@ -1,7 +1,7 @@
 import { createServer, type IncomingMessage, type Server, type ServerResponse } from "node:http"
 import type { AddressInfo } from "node:net"
 import { afterEach, describe, expect, it } from "vitest"
-import { createSession, type SessionState } from "@/widgets/shared/session"
+import { createSession, type Session, type SessionState } from "@/widgets/shared/session"
 
 let server: Server | undefined
 const asked: { method: string | undefined; cookie: string | undefined; at: number }[] = []
@@ -33,7 +33,7 @@ const status =
 const hangUp = (request: IncomingMessage) => void request.socket.destroy()
 
 /** The states that an opened session goes through, until it rests. */
-function states(session: ReturnType<typeof createSession>): Promise<SessionState[]> {
+function states(session: Session, open = session.begin): Promise<SessionState[]> {
   return new Promise((done) => {
     const seen: SessionState[] = [session.state]
     const stop = session.subscribe(() => {
@@ -43,7 +43,7 @@ function states(session: ReturnType<typeof createSession>): Promise<SessionState
         done(seen)
       }
     })
-    session.open()
+    open()
   })
 }
 
@@ -52,10 +52,11 @@ describe("a widget's session", () => {
     const session = createSession(await answering(status(200)))
     expect(asked).toHaveLength(0)
     const seen = states(session)
-    session.open()
-    session.open()
+    session.begin()
+    session.retry()
     expect(await seen).toEqual(["unopened", "opening", "open"])
-    session.open()
+    session.begin()
+    session.retry()
     await new Promise((done) => setTimeout(done, 50))
     expect(asked).toHaveLength(1)
     expect(asked[0]).toMatchObject({ method: "POST", cookie: undefined })
@@ -77,17 +78,20 @@ describe("a widget's session", () => {
     expect(asked).toHaveLength(1)
   })
 
-  it("rests after three tries, and opens when it is tried again", async () => {
+  it("rests after three tries, does not try by itself, and opens when the shopper tries again", async () => {
     const session = createSession(await answering(hangUp, hangUp, hangUp, status(200)))
     expect(await states(session)).toContain("resting")
     expect(asked).toHaveLength(3)
-    expect(await states(session)).toEqual(["resting", "opening", "open"])
+    session.begin()
+    expect(asked).toHaveLength(3)
+    expect(await states(session, session.retry)).toEqual(["resting", "opening", "open"])
   })
 
   it.each([402, 403, 404])("is closed by a %d and does not try again", async (code) => {
     const session = createSession(await answering(status(code)))
     expect(await states(session)).toEqual(["unopened", "opening", "closed"])
-    session.open()
+    session.begin()
+    session.retry()
     await new Promise((done) => setTimeout(done, 50))
     expect(asked).toHaveLength(1)
   })

@@ -41,7 +41,7 @@ export function Co2Level({ shown, session, locale, messages }: CalculatorProps<C
   }, [sessionState])
 
   function change(event: Event): void {
-    session.open()
+    session.begin()
     tell(event)
   }
 

@@ -37,7 +37,7 @@ export function Frame({ title, locale, messages, shown, session, children }: Fra
         <div className="notice" part="notice" role="alert">
           <p>{messages[state]}</p>
           {state === "resting" && (
-            <button className="button" part="button" type="button" onClick={() => session.open()}>
+            <button className="button" part="button" type="button" onClick={() => session.retry()}>
               {messages.tryAgain}
             </button>
           )}

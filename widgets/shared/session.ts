@@ -8,8 +8,10 @@ export type SessionState = "unopened" | "opening" | "open" | "resting" | "closed
 
 export interface Session {
   readonly state: SessionState
-  /** Opens the session if it is not open; a resting one is tried again. */
-  open(): void
+  /** Opens the session when the shopper first changes something; does nothing from then on. */
+  begin(): void
+  /** Tries a resting session again. */
+  retry(): void
   /** Calls back on each change of state; returns how to stop. */
   subscribe(onChange: () => void): () => void
 }
@@ -37,8 +39,8 @@ export function createSession(widgetUrl: string): Session {
     for (const listener of listeners) listener()
   }
 
-  async function open(): Promise<void> {
-    if (state !== "unopened" && state !== "resting") return
+  async function openFrom(expected: SessionState): Promise<void> {
+    if (state !== expected) return
     become("opening")
     become(await outcomeOf(`${widgetUrl}/sessions`))
   }
@@ -47,7 +49,8 @@ export function createSession(widgetUrl: string): Session {
     get state() {
       return state
     },
-    open: () => void open(),
+    begin: () => void openFrom("unopened"),
+    retry: () => void openFrom("resting"),
     subscribe(onChange) {
       listeners.add(onChange)
       return () => listeners.delete(onChange)
