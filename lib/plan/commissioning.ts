@@ -70,21 +70,34 @@ const RAISE = [
   { day: 8, share: 1 },
 ]
 
-function raiseLevel({ co2, dosing, ph }: PlanFacts): Step[] {
-  const target = co2.target_co2_mg_l
-  const plan = RAISE.map(({ day, share }) => `day ${day} ${figures(share * target, 2)} mg/L`).join(", ")
-  const by =
-    dosing.control === "controller"
-      ? `Lower the controller's set-point step by step, on the last day to ${ph.ph.toFixed(2)}.`
-      : `Open the needle valve step by step, on the last day to ${figures(dosing.feed_ml_min, 2)} mL/min.`
+function raiseLevel(facts: PlanFacts): Step[] {
+  const { co2, ph, dosing } = facts
   return [
     {
       code: "raise_slowly",
-      text: `Raise the level over days: ${plan}. ${by} Stay by the tank for the first hours after each step. Fish gasping at the surface or shrimp trying to get out: gas off, aerate, one step back.`,
+      text: `Raise the level over days: ${raisePlan(facts)}. Stay by the tank for the first hours after each step. Fish gasping at the surface or shrimp trying to get out: gas off, aerate, one step back.`,
     },
     {
       code: "confirm_level",
-      text: `A drop checker with 4 dKH should turn green, not yellow, some hours after the lights come on. If it and the pH disagree, believe the one that says more CO2: at pH ${ph.ph.toFixed(2)} the tank may hold ${figures(co2.co2_low_mg_l, 2)} to ${figures(co2.co2_high_mg_l, 2)} mg/L.`,
+      text:
+        dosing.control === "controller"
+          ? `A drop checker with 4 dKH should turn green, not yellow, some hours after the lights come on. If it and the pH disagree, believe the one that says more CO2: at pH ${ph.ph.toFixed(2)} the tank may hold ${figures(co2.co2_low_mg_l, 2)} to ${figures(co2.co2_high_mg_l, 2)} mg/L.`
+          : `Read a drop checker with 4 dKH in the evening, when CO2 stands highest: it should be green (about ${figures(facts.day.highest_co2_mg_l, 2)} mg/L), never yellow.`,
     },
   ]
+}
+
+/** Day by day: the level, and what to set for it. At one KH, CO2 falls tenfold for each pH. */
+function raisePlan({ co2, ph, dosing, day }: PlanFacts): string {
+  if (dosing.control === "controller") {
+    const steps = RAISE.map(({ day: on, share }) => {
+      const setpoint = ph.ph - Math.log10(share)
+      return `day ${on} ${figures(share * co2.target_co2_mg_l, 2)} mg/L (set-point ${setpoint.toFixed(2)})`
+    })
+    return steps.join(", ")
+  }
+  const steps = RAISE.map(
+    ({ day: on, share }) => `day ${on} ${figures(share * dosing.feed_ml_min, 2)} mL/min`,
+  )
+  return `${steps.join(", ")}, which leads to ${figures(day.highest_co2_mg_l, 2)} mg/L in the evening`
 }

@@ -10,7 +10,7 @@ import { type RoomSafety, type RoomUncertainty, roomSafety } from "@/lib/gas/roo
 import { prepareTank } from "@/lib/gas/tank-input"
 import { type WorkingPressure, workingPressure } from "@/lib/gas/working-pressure"
 import { figures } from "@/lib/units/figures"
-import { OutOfDomain } from "@/lib/units/out-of-domain"
+import { OutOfDomain, withFields } from "@/lib/units/out-of-domain"
 import { quantities } from "@/lib/units/quantities"
 import { type DayCourse, dayCourse } from "./day-course"
 import type { Dosing } from "./facts"
@@ -55,15 +55,17 @@ export function gasSide(
   const tankInput = gasInput(input, water, name)
   const dosing = dosingOf(input, tankInput, demand.result)
   const { feed_mg_min, daily_use_g_day } = dosing
-  const working_pressure = workingPressure({
-    method: name,
-    depth_m: input.depth_m,
-    check_valve_bar: input.check_valve_bar,
-    line_length_m: input.line_length_m,
-    line_diameter_mm: input.line_diameter_mm,
-    pore_diameter_um: input.equipment?.pore_diameter_um,
-    feed_mg_min,
-  })
+  const working_pressure = withFields({ pore_diameter_um: "equipment.pore_diameter_um" }, () =>
+    workingPressure({
+      method: name,
+      depth_m: input.depth_m,
+      check_valve_bar: input.check_valve_bar,
+      line_length_m: input.line_length_m,
+      line_diameter_mm: input.line_diameter_mm,
+      pore_diameter_um: input.equipment?.pore_diameter_um,
+      feed_mg_min,
+    }),
+  )
   const { element_bar, water_bar, check_valve_bar } = working_pressure.result
   const masses = (input.cylinders ?? []).map(({ cylinder_mass_g }) => cylinder_mass_g)
   const single_g = masses.length > 0 ? undefined : (input.cylinder_mass_g ?? ASSUMED_CYLINDER_G)

@@ -59,7 +59,7 @@ function gasChores({ cylinder, dosing, input }: PlanFacts): Chore[] {
   const gauge =
     liquid_gone_g === null
       ? `At this temperature the cylinder holds no liquid: the gauge reads ${reads} when full and falls with every day.`
-      : `The gauge tells nothing before the last liquid is gone: it stays near ${reads} until ${figures(liquid_gone_g, 2)} g are left, and a falling gauge means refill now.`
+      : `The gauge tells nothing before the last liquid is gone: it stays near ${reads} until ${figures(liquid_gone_g, 2)} g are left, and once it falls the end is near.`
   return [
     {
       code: "weigh_cylinder",

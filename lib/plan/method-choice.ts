@@ -123,7 +123,7 @@ const CASES: Readonly<Record<GasMethodName, (facts: MethodFacts, gas: string, pr
     ],
     against: [
       ...whyNoReactor(reactor),
-      `When the filter is due for cleaning the flow is ${figures(reactor.when_due.flow_l_h, 3)} L/h and the reactor ${reactor.when_due.verdict}; it grows noisy below ${figures(reactor.minimum_flow_l_h, 3)} L/h.`,
+      `When the filter is due for cleaning the flow is ${figures(reactor.when_due.flow_l_h, 3)} L/h, which makes the reactor ${reactor.when_due.verdict}; it grows noisy below ${figures(reactor.minimum_flow_l_h, 3)} L/h.`,
     ],
   }),
   inline_diffuser: ({ flow_l_h }, gas, pressure) => ({

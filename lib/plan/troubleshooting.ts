@@ -96,30 +96,32 @@ function bubblesInTank({ method, reactor, reactor_size, dosing }: PlanFacts): Tr
   }
 }
 
-function phNotFalling({
-  dosing,
-  lead_time,
-  cylinder,
-  bubble_rate,
-  working_pressure,
-  demand,
-}: PlanFacts): Trouble {
-  const lead =
-    lead_time.lead_time_min === null
-      ? "this feed never gets there in the dark"
-      : `it takes ${figures(lead_time.lead_time_min, 2)} min to ${figures(100 * lead_time.reached_fraction, 2)} % of the target`
+function phNotFalling(facts: PlanFacts): Trouble {
+  const { cylinder, bubble_rate, working_pressure, demand, dosing } = facts
+  const lost = demand.loss_to_air_g_day / demand.daily_use_g_day
+  const check =
+    dosing.control === "controller" ? "Calibrate the probe, and look" : "Test the pH again, and look"
   return {
     code: "ph_not_falling",
     severity: "warning",
     symptom: "The gas is on, but the pH does not fall.",
     actions: [
       `Is gas coming? About ${figures(bubble_rate.bubbles_per_s, 2)} bubbles a second at ${figures(working_pressure.working_pressure_bar, 2)} bar; the cylinder's gauge near ${figures(cylinder.pressure_bar_abs, 2)} bar.`,
-      `Give it time: ${lead}.`,
-      "Calibrate the probe, and look at the drop checker.",
-      `Calm the surface: it loses ${figures(demand.loss_to_air_g_day, 2)} of ${figures(dosing.daily_use_g_day, 2)} g a day already.`,
+      `Give it time: ${expected(facts)}.`,
+      `${check} at the drop checker.`,
+      `Calm the surface: ${figures(100 * lost, 2)} % of the gas leaves through it.`,
       "Test KH: after a water change the same CO2 stands at a higher pH.",
     ],
   }
+}
+
+function expected({ dosing, day, lead_time }: PlanFacts): string {
+  if (dosing.control === "timer") {
+    return `on the timer CO2 stands at ${figures(day.lights_on_co2_mg_l, 2)} mg/L when the lights come on and climbs to ${figures(day.highest_co2_mg_l, 2)} by the evening`
+  }
+  return lead_time.lead_time_min === null
+    ? "this feed does not get there in the dark hours"
+    : `it takes ${figures(lead_time.lead_time_min, 2)} min to ${figures(100 * lead_time.reached_fraction, 2)} % of the target`
 }
 
 function phFallingAtNight({ dosing, day }: PlanFacts): Trouble {

@@ -5,6 +5,7 @@ import { type FlowUncertainty, type OperatingPoint, operatingPoint } from "@/lib
 import { type ReactorInput, withoutReactor, withReactor } from "@/lib/flow/reactor-input"
 import { type ReactorAnswer, type ReactorUncertainty, reactorVerdict } from "@/lib/flow/reactor-verdict"
 import type { GasMethodName } from "@/lib/gas/methods"
+import { withFields } from "@/lib/units/out-of-domain"
 import { flowNeed, type MethodFacts, recommendedMethod } from "./method-choice"
 import { type MinimumFilter, minimumFilter } from "./minimum-filter"
 import type { PlanInput } from "./plan-input"
@@ -27,18 +28,22 @@ export interface WaterSide {
 /** Solves the loop, judges a reactor in it at a feed, and picks the method. */
 export function waterSide(input: PlanInput, volume_l: number, feed_mg_min: number): WaterSide {
   const { equipment } = input
+  // Errors name an element by its place in the list that was given, so that list is checked before it is changed.
+  prepareLoop({ ...input, volume_l })
   const bare: LoopInput = { ...input, volume_l, elements: withoutGasDevice(input.elements) }
   const loop = prepareLoop(bare)
   const flow_l_h = flowAt(loop, input.clogging)
   const reactor_size = equipment?.reactor ?? sizeReactor({ flow_l_h, feed_mg_min })
   const named = input.elements.filter(({ kind }) => kind !== "inline_diffuser")
-  const reactor = reactorVerdict({
-    ...bare,
-    elements: named,
-    reactor: reactor_size,
-    feed_mg_min,
-    inlet_co2_mg_l: input.target_co2_mg_l,
-  })
+  const reactor = withFields(fieldsOf(equipment?.reactor), () =>
+    reactorVerdict({
+      ...bare,
+      elements: named,
+      reactor: reactor_size,
+      feed_mg_min,
+      inlet_co2_mg_l: input.target_co2_mg_l,
+    }),
+  )
   const choice = { volume_l, flow_l_h, reactor: reactor.result }
   const name = equipment?.method ?? recommendedMethod(choice)
   const reactorLoop = prepareLoop({ ...bare, elements: withReactor(named, reactor_size) })
@@ -58,6 +63,12 @@ export function waterSide(input: PlanInput, volume_l: number, feed_mg_min: numbe
         : minimumFilter(prepareLoop(chosen), flowNeed(name, choice)),
     minimum_reactor_filter,
   }
+}
+
+/** Where the person gave what the reactor's verdict calls by its own name. */
+function fieldsOf(reactor: ReactorInput | undefined): Record<string, string> {
+  const names = Object.keys(reactor ?? {}).map((name) => [`reactor.${name}`, `equipment.reactor.${name}`])
+  return Object.fromEntries(names)
 }
 
 function withGasDevice(

@@ -1,4 +1,5 @@
 import { describe, expect, test } from "vitest"
+import { phForCo2 } from "@/lib/chemistry/ph-for-co2"
 import { hoseJoints } from "@/lib/plan/parts"
 import { type SystemPlan, systemPlan } from "@/lib/plan/system-plan"
 import { figures } from "@/lib/units/figures"
@@ -120,8 +121,28 @@ describe("assembly and commissioning", () => {
   test("raise the level over a week, from a third to the target, with the livestock watched", () => {
     const raise = text(plan.commissioning, "raise_slowly")
     expect(raise).toContain("day 1 10 mg/L")
-    expect(raise).toContain("day 8 30 mg/L")
+    expect(raise).toContain(`day 8 30 mg/L (set-point ${plan.ph.ph.toFixed(2)})`)
     expect(raise).toMatch(/Stay by the tank/)
+  })
+
+  test("step the set-point as the chemistry does: each step's pH holds that step's CO2", () => {
+    const raise = text(plan.commissioning, "raise_slowly")
+    for (const [co2_mg_l, shown] of [...raise.matchAll(/([\d.]+) mg\/L \(set-point ([\d.]+)\)/g)].map(
+      ([, level, ph]) => [Number(level), Number(ph)] as const,
+    )) {
+      const { ph } = phForCo2({ ...usual, co2_mg_l }).result
+      expect(Math.abs(ph - shown)).toBeLessThan(0.02)
+    }
+    expect(raise.match(/set-point/g)).toHaveLength(4)
+  })
+
+  test("on a timer promise no more than the timer reaches", () => {
+    const timer = systemPlan({ ...usual, equipment: { control: "timer" } }).result
+    const evening = `${figures(timer.day.highest_co2_mg_l, 2)} mg/L`
+    expect(text(timer.commissioning, "raise_slowly")).toContain(evening)
+    const trouble = timer.troubleshooting.find(({ code }) => code === "ph_not_falling")!
+    expect(trouble.actions.join(" ")).toContain(`climbs to ${figures(timer.day.highest_co2_mg_l, 2)}`)
+    expect(trouble.actions.join(" ")).not.toContain("probe")
   })
 
   test("tell where the flow must not start below, for the gas", () => {

@@ -179,7 +179,7 @@ describe("systemPlan", () => {
     [
       "a reactor of nonsense size",
       { equipment: { reactor: { body_diameter_mm: 5, body_length_mm: 300 } } },
-      "reactor.body_diameter_mm",
+      "equipment.reactor.body_diameter_mm",
     ],
   ])("refuses %s, naming the field to change", (_, change, field) => {
     expect(() => systemPlan({ ...usual, ...change })).toThrow(
