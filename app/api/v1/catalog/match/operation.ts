@@ -4,6 +4,7 @@ import { catalogMatches } from "@/app/api/v1/plan/plan-result"
 import { defineOperation } from "@/lib/api/define-operation"
 import { planItems } from "@/lib/catalog"
 import { systemPlan } from "@/lib/plan/system-plan"
+import { roundSignificant } from "@/lib/units/figures"
 
 export const matchCatalogItems = defineOperation({
   id: "matchCatalogItems",
@@ -36,6 +37,8 @@ export const matchCatalogItems = defineOperation({
   },
   async run({ input, caller: { ctx } }) {
     const { result } = systemPlan({ ...input, catalog: await planItems({ ctx }) })
-    return { matches: result.catalog_matches.map((match) => ({ ...match })) }
+    return {
+      matches: result.catalog_matches.map((match) => ({ ...match, margin: roundSignificant(match.margin) })),
+    }
   },
 })
