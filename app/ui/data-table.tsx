@@ -140,12 +140,15 @@ export function DataTable<Row extends { readonly id: string }>({
                     key={header.id}
                     scope="col"
                     aria-sort={sorted === "asc" ? "ascending" : sorted === "desc" ? "descending" : undefined}
-                    className={classNames("py-2 pr-4 font-medium", columns[index]?.numeric && "text-right")}
+                    className={classNames("py-2 pr-6 font-medium", columns[index]?.numeric && "text-right")}
                   >
                     <button
                       type="button"
                       onClick={header.column.getToggleSortingHandler()}
-                      className="inline-flex items-center gap-1 text-soft hover:text-ink"
+                      className={classNames(
+                        "inline-flex items-center gap-1 text-soft hover:text-ink",
+                        columns[index]?.numeric && "flex-row-reverse",
+                      )}
                     >
                       {columns[index]?.header}
                       <SortMark className={classNames("size-3", !sorted && "invisible")} />
@@ -167,7 +170,7 @@ export function DataTable<Row extends { readonly id: string }>({
                   <td
                     key={column.id}
                     className={classNames(
-                      "py-2.5 pr-4",
+                      "py-2.5 pr-6",
                       column.numeric && "text-right font-mono text-[0.8125rem]",
                     )}
                   >
