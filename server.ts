@@ -9,6 +9,7 @@ const host = process.env.HOST ?? "127.0.0.1"
 const port = Number(process.env.PORT ?? 3000)
 const publicUrl = process.env.PUBLIC_URL ?? `http://${host}:${port}`
 const apiOnly = process.env.TARN_API_ONLY === "1"
+const behindProxy = process.env.BEHIND_PROXY === "1"
 const drain_ms = 25_000
 
 const serve = createServe({
@@ -16,14 +17,18 @@ const serve = createServe({
   publicUrl,
   onFault: (error, requestId) => console.error(`request ${requestId} failed:`, error),
 })
-const api = nodeMount(serve, { behindProxy: process.env.BEHIND_PROXY === "1" })
+const api = nodeMount(serve, { behindProxy })
 const app = apiOnly ? undefined : next({ dev: process.env.NODE_ENV === "development", hostname: host, port })
 const pages = app?.getRequestHandler()
 await app?.prepare()
 
 const server = createServer((incoming, outgoing) => {
   if (isApiPath(incoming.url ?? "")) api(incoming, outgoing)
-  else if (pages) pages(incoming, outgoing)
+  else if (pages) {
+    // The pages read the caller's address from this header, which only a proxy of ours may set.
+    if (!behindProxy) incoming.headers["x-forwarded-for"] = incoming.socket.remoteAddress
+    pages(incoming, outgoing)
+  }
   else outgoing.writeHead(404).end()
 })
 server.headersTimeout = 10_000
