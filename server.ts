@@ -28,8 +28,7 @@ const server = createServer((incoming, outgoing) => {
     // The pages read the caller's address from this header, which only a proxy of ours may set.
     if (!behindProxy) incoming.headers["x-forwarded-for"] = incoming.socket.remoteAddress
     pages(incoming, outgoing)
-  }
-  else outgoing.writeHead(404).end()
+  } else outgoing.writeHead(404).end()
 })
 server.headersTimeout = 10_000
 server.requestTimeout = 30_000
