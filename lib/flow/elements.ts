@@ -38,7 +38,7 @@ export interface ElementRow {
 }
 
 /** Holes of a spray bar that was not measured. */
-export const DEFAULT_SPRAY_BAR = { hole_count: 20, hole_diameter_mm: 3 }
+const DEFAULT_SPRAY_BAR = { hole_count: 20, hole_diameter_mm: 3 }
 
 /** Discharge coefficient of a drilled hole. @source idelchik2007, sharp-edged orifice */
 const ORIFICE_DISCHARGE = 0.62

@@ -2,7 +2,7 @@ import { hermite } from "@/lib/numeric/interpolate"
 
 /** Reynolds numbers between which the flow is neither laminar nor turbulent for good. */
 export const LAMINAR_BELOW = 2000
-export const TURBULENT_FROM = 4000
+const TURBULENT_FROM = 4000
 
 /** What the flow in a hose is like. In `transitional` flow the real friction wanders by about 20 %. */
 export type Regime = "laminar" | "transitional" | "turbulent"

@@ -97,7 +97,7 @@ export function operatingPoint(input: LoopInput): Answer<OperatingPoint, FlowUnc
 }
 
 /** The head that each part of the loop takes at a flow in m³/s; the sum is the loop's head. */
-export function headBudget(prepared: PreparedLoop, clogging: number, flow_m3_s: number): HeadShare[] {
+function headBudget(prepared: PreparedLoop, clogging: number, flow_m3_s: number): HeadShare[] {
   const factor = clogFactor(clogging)
   const { media, hoses, losses, input } = prepared
   const budget: HeadShare[] = [

@@ -25,3 +25,9 @@ export function workedLoop(
     volume_l,
   }
 }
+
+/** Every number of a value, however deep. */
+export function numbersIn(value: unknown): number[] {
+  if (typeof value === "number") return [value]
+  return value && typeof value === "object" ? Object.values(value).flatMap(numbersIn) : []
+}

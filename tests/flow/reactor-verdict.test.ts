@@ -5,7 +5,7 @@ import type { Criterion } from "@/lib/flow/reactor-criteria"
 import { verdicts } from "@/lib/flow/reactor-criteria"
 import { type ReactorLoopInput, reactorDefaults } from "@/lib/flow/reactor-input"
 import { reactorVerdict } from "@/lib/flow/reactor-verdict"
-import { canisterElements, workedLoop } from "./loops"
+import { canisterElements, numbersIn, workedLoop } from "./loops"
 
 function workedReactor(
   tank: readonly [number, number, number, number],
@@ -214,8 +214,3 @@ const anyReactor: fc.Arbitrary<ReactorLoopInput> = fc
     inlet_co2_mg_l: number(0, 200),
   })
   .map((input) => ({ ...reactorDefaults, ...input, elements: canisterElements }))
-
-function numbersIn(value: unknown): number[] {
-  if (typeof value === "number") return [value]
-  return value && typeof value === "object" ? Object.values(value).flatMap(numbersIn) : []
-}

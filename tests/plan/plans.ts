@@ -27,12 +27,6 @@ export function stringsIn(value: unknown): string[] {
   return value && typeof value === "object" ? Object.values(value).flatMap(stringsIn) : []
 }
 
-/** Every number of a value, however deep. */
-export function numbersIn(value: unknown): number[] {
-  if (typeof value === "number") return [value]
-  return value && typeof value === "object" ? Object.values(value).flatMap(numbersIn) : []
-}
-
 /** A part that closes the valve by itself: a plan has one of them. */
 export function isControl({ part }: { readonly part: string }): boolean {
   return part === "timer" || part === "ph_controller"

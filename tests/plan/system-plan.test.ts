@@ -8,7 +8,8 @@ import { methodNames } from "@/lib/plan/method-choice"
 import { type PlanInput, planDefaults, plantDemands } from "@/lib/plan/plan-input"
 import { systemPlan } from "@/lib/plan/system-plan"
 import { OutOfDomain } from "@/lib/units/out-of-domain"
-import { isControl, large, numbersIn, small, stringsIn, usual } from "./plans"
+import { numbersIn } from "../flow/loops"
+import { isControl, large, small, stringsIn, usual } from "./plans"
 
 const withMethod = (input: PlanInput, method: GasMethodName): PlanInput => ({
   ...input,
