@@ -11,6 +11,7 @@ export default defineConfig({
           name: "unit",
           include: ["tests/**/*.test.ts"],
           exclude: ["tests/integration/**", "tests/browser/**"],
+          setupFiles: ["tests/support/fast-check.ts"],
           testTimeout: 30_000,
         },
       },
