@@ -1,3 +1,11 @@
+export {
+  changePlan,
+  keepPlan,
+  type PlanChange,
+  type PlanChangeOutcome,
+  type PlanChangePreview,
+  previewPlanChange,
+} from "./change-plan"
 export { COMPARE_OVERAGE, compareOverage, type OverageDifference } from "./compare-overage"
 export type { PaidPlanId } from "./ensure-prices"
 export { type InvoiceRow, listInvoices } from "./list-invoices"

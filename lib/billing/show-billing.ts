@@ -16,6 +16,8 @@ export interface Billing {
     readonly current_period_start: Date
     readonly current_period_end: Date
     readonly cancel_at_period_end: boolean
+    /** Plan that it goes to when the period ends; null when it stays. */
+    readonly scheduled_plan: PlanId | null
     /** A payment is owed: since when, and until when everything works as before. */
     readonly owed: { readonly since: Date; readonly full_until: Date } | null
   } | null
@@ -39,6 +41,7 @@ export async function showBilling({ ctx }: Pick<Call<never>, "ctx">): Promise<Bi
         "current_period_start",
         "current_period_end",
         "cancel_at_period_end",
+        "scheduled_plan",
         "past_due_since",
       ])
       .where("account_id", "=", ctx.account_id)
@@ -54,8 +57,13 @@ export async function showBilling({ ctx }: Pick<Call<never>, "ctx">): Promise<Bi
   }
 }
 
-function toSubscription({ past_due_since: since, ...stored }: StoredSubscription): Billing["subscription"] {
-  return { ...stored, owed: since && { since, full_until: graceEnd(since) } }
+function toSubscription(stored: StoredSubscription): Billing["subscription"] {
+  const { past_due_since: since, scheduled_plan, ...fields } = stored
+  return {
+    ...fields,
+    scheduled_plan: scheduled_plan as PlanId | null,
+    owed: since && { since, full_until: graceEnd(since) },
+  }
 }
 
 interface StoredSubscription {
@@ -63,5 +71,6 @@ interface StoredSubscription {
   current_period_start: Date
   current_period_end: Date
   cancel_at_period_end: boolean
+  scheduled_plan: string | null
   past_due_since: Date | null
 }

@@ -14,6 +14,8 @@ export interface SubscriptionSnapshot {
   readonly current_period_start: Date
   readonly current_period_end: Date
   readonly cancel_at_period_end: boolean
+  /** Plan that it goes to when the period ends; null when it stays. */
+  readonly scheduled_plan: PlanId | null
 }
 
 /** What we keep of an invoice. */
@@ -43,6 +45,13 @@ const subscription = z.object({
   created: instant,
   billing_cycle_anchor: instant,
   cancel_at_period_end: z.boolean(),
+  schedule: z
+    .object({
+      phases: z.array(
+        z.object({ start_date: instant, metadata: z.record(z.string(), z.string()).nullish() }),
+      ),
+    })
+    .nullable(),
   items: z.object({
     data: z
       .array(
@@ -72,19 +81,21 @@ const invoice = z.object({
 })
 
 /**
- * Reads a subscription of ours.
+ * Reads a subscription of ours, which must have been fetched with its `schedule` expanded.
  *
  * @throws Error that names the field, when Stripe's shape is not the one we know or no price of ours is in it
  */
 export function subscriptionSnapshot(object: Stripe.Subscription): SubscriptionSnapshot {
-  const { items, ...fields } = read(subscription, object, "subscription")
+  const { items, schedule, ...fields } = read(subscription, object, "subscription")
   // The metered item's period is the one that the allowance counts in (PLATFORM 3.19); a plan without one has its base.
   const item = items.data.find((one) => one.price.recurring?.usage_type === "metered") ?? items.data[0]!
   const plan = items.data.map((one) => one.price.metadata.plan).find((id) => id !== undefined)
   if (!isPlan(plan))
     throw new Error(`Subscription ${fields.id} has no price of a plan of ours (plan: ${plan})`)
   const { current_period_start, current_period_end } = item
-  return { ...fields, plan, current_period_start, current_period_end }
+  const next = schedule?.phases.find((phase) => phase.start_date >= current_period_end)?.metadata?.plan
+  const scheduled_plan = isPlan(next) && next !== plan ? next : null
+  return { ...fields, plan, current_period_start, current_period_end, scheduled_plan }
 }
 
 /** Whether any price in it is of a plan of ours; others of the same Stripe account are none of our business. */

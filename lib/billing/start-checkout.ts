@@ -8,8 +8,8 @@ import { customerOf } from "./customer"
 import { ensurePrices, type PaidPlanId } from "./ensure-prices"
 import { reachStripe } from "./reach-stripe"
 import { deciding, isRunning } from "./service-state"
-import { isOurs, subscriptionSnapshot } from "./snapshot"
 import { stripe } from "./stripe-client"
+import { subscriptionsOf } from "./subscriptions-of"
 
 /**
  * Opens a checkout for a paid plan and says where. Nothing is granted by it, nor by coming back from it: the account
@@ -57,8 +57,7 @@ async function openSession({ ctx, input }: Call<{ readonly plan: PaidPlanId }>) 
 
 /** Asks Stripe itself, since our own state may be a moment behind. */
 async function refuseSecond(customer: string): Promise<void> {
-  const { data } = await stripe().subscriptions.list({ customer, status: "all", limit: 100 })
-  const current = deciding(data.filter(isOurs).map(subscriptionSnapshot))
+  const current = deciding(await subscriptionsOf(customer))
   if (current && isRunning(current.status)) {
     throw new TarnwrightError(
       "conflict",

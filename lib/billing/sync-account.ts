@@ -6,14 +6,9 @@ import { notifyOwners } from "@/lib/mail"
 import { publishEvent } from "@/lib/webhooks"
 import { reportSoon } from "./report-overage"
 import { deciding, graceEnd, isRunning, type Standing, serviceState } from "./service-state"
-import {
-  type InvoiceSnapshot,
-  invoiceSnapshot,
-  isOurs,
-  type SubscriptionSnapshot,
-  subscriptionSnapshot,
-} from "./snapshot"
+import { type InvoiceSnapshot, invoiceSnapshot, type SubscriptionSnapshot } from "./snapshot"
 import { stripe } from "./stripe-client"
+import { subscriptionsOf } from "./subscriptions-of"
 
 /** Invoices read anew each time; an older one no longer changes. */
 const RECENT_INVOICES = 24
@@ -50,13 +45,10 @@ export async function syncAccount(
 
 async function fetchState(customer: string) {
   const [subscriptions, invoices] = await Promise.all([
-    stripe().subscriptions.list({ customer, status: "all", limit: 100 }),
+    subscriptionsOf(customer),
     stripe().invoices.list({ customer, limit: RECENT_INVOICES }),
   ])
-  return {
-    subscriptions: subscriptions.data.filter(isOurs).map(subscriptionSnapshot),
-    invoices: invoices.data.filter(isIssued).map(invoiceSnapshot),
-  }
+  return { subscriptions, invoices: invoices.data.filter(isIssued).map(invoiceSnapshot) }
 }
 
 function isIssued(invoice: Stripe.Invoice): boolean {
@@ -135,6 +127,7 @@ async function storeSubscription(trx: Trx, account_id: string, current: Current,
     current_period_start: current.current_period_start,
     current_period_end: current.current_period_end,
     cancel_at_period_end: current.cancel_at_period_end,
+    scheduled_plan: current.scheduled_plan,
     past_due_since: current.past_due_since,
     updated_at: now,
   }

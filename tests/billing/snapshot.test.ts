@@ -37,6 +37,7 @@ describe("what we read of a subscription", () => {
       current_period_start: new Date(item.current_period_start * 1000),
       current_period_end: new Date(item.current_period_end * 1000),
       cancel_at_period_end: false,
+      scheduled_plan: null,
     })
   })
 
@@ -46,6 +47,7 @@ describe("what we read of a subscription", () => {
     "customer",
     "billing_cycle_anchor",
     "cancel_at_period_end",
+    "schedule",
     "items.data.0.current_period_start",
     "items.data.0.current_period_end",
   ])("fails loudly without %s", (path) => {

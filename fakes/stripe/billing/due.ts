@@ -4,7 +4,7 @@ import { settle } from "./collection"
 import { draftInvoice, voidInvoice } from "./invoices"
 import { dropPendingUpdate } from "./pending-update"
 import { periodEnd } from "./periods"
-import { closeDraft, currentPeriod, cycleLines, end, renew } from "./renew"
+import { closeDraft, currentPeriod, end, paidAheadLines, renew, usedLines } from "./renew"
 import { isLive, setStatus } from "./status"
 import type { Subscription } from "./subscription-shape"
 
@@ -63,7 +63,7 @@ export function upcomingInvoice(fake: Fake, subscription: Subscription): Objects
   const used = currentPeriod(subscription)
   const recurring = subscription.items.data[0]!.price.recurring!
   const next = { start: used.end, end: periodEnd(subscription.billing_cycle_anchor, recurring, used.end) }
-  const lines = cycleLines(fake, subscription, used, next)
+  const lines = [...usedLines(fake, subscription, used), ...paidAheadLines(fake, subscription, next)]
   const customer = idOf(subscription.customer)!
   return draftInvoice(fake, { customer, subscription, reason: "upcoming", lines, period: used })
 }

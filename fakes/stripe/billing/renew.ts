@@ -1,8 +1,11 @@
 import { type Fake, idOf } from "../core/fake"
 import { settle } from "./collection"
-import { draftInvoice, finalize, type Invoice, setLines, subscriptionOf } from "./invoices"
+import { draftInvoice, finalize, type Invoice, setLines } from "./invoices"
 import { isMetered, type Line, licensedLine, meteredLine } from "./lines"
+import { usage } from "./metering"
 import { periodEnd } from "./periods"
+import { amountOf } from "./pricing"
+import { itemsOfPeriod } from "./schedule"
 import { setStatus } from "./status"
 import type { Subscription } from "./subscription-shape"
 
@@ -21,12 +24,10 @@ export function renew(fake: Fake, subscription: Subscription): void {
   }
   const recurring = subscription.items.data[0]!.price.recurring!
   const next = { start: ended.end, end: periodEnd(subscription.billing_cycle_anchor, recurring, ended.end) }
-  for (const item of subscription.items.data) {
-    item.current_period_start = next.start
-    item.current_period_end = next.end
-  }
-  const lines = cycleLines(fake, subscription, ended, next)
   const customer = idOf(subscription.customer)!
+  const used = usedLines(fake, subscription, ended)
+  subscription.items.data = itemsOfPeriod(fake, subscription, next)
+  const lines = [...used, ...paidAheadLines(fake, subscription, next)]
   const reason = "subscription_cycle"
   const invoice = fake.put(
     "invoice",
@@ -62,25 +63,28 @@ export function end(fake: Fake, subscription: Subscription): void {
 
 /** Turns a renewal's draft into a bill: usage is counted once more, then the card is charged. */
 export function closeDraft(fake: Fake, invoice: Invoice): void {
-  const subscription = subscriptionOf(fake, invoice)
-  if (subscription) {
-    const used = { start: invoice.period_start, end: invoice.period_end }
-    setLines(invoice, recounted(fake, subscription, invoice, used))
-  }
+  setLines(invoice, recounted(fake, invoice))
   finalize(fake, invoice)
   settle(fake, invoice)
 }
 
-export function cycleLines(
+export function usedLines(
   fake: Fake,
   subscription: Subscription,
   used: { start: number; end: number },
-  next: { start: number; end: number },
 ): Line[] {
   const customer = idOf(subscription.customer)!
-  return subscription.items.data.map((item) =>
-    isMetered(item) ? meteredLine(fake, item, customer, used) : licensedLine(fake, item, next),
-  )
+  return subscription.items.data.filter(isMetered).map((item) => meteredLine(fake, item, customer, used))
+}
+
+export function paidAheadLines(
+  fake: Fake,
+  subscription: Subscription,
+  next: { start: number; end: number },
+): Line[] {
+  return subscription.items.data
+    .filter((item) => !isMetered(item))
+    .map((item) => licensedLine(fake, item, next))
 }
 
 export function currentPeriod(subscription: Subscription): { start: number; end: number } {
@@ -91,16 +95,15 @@ export function currentPeriod(subscription: Subscription): { start: number; end:
   }
 }
 
-function recounted(
-  fake: Fake,
-  subscription: Subscription,
-  invoice: Invoice,
-  used: { start: number; end: number },
-): Line[] {
+/** The lines of a draft, those of metered prices counted anew: readings may have come in the meantime. */
+function recounted(fake: Fake, invoice: Invoice): Line[] {
   return invoice.lines.data.map((line) => {
-    const itemId = line.parent?.subscription_item_details?.subscription_item
-    const item = subscription.items.data.find((one) => one.id === itemId)
-    if (!item || !isMetered(item)) return line
-    return { ...meteredLine(fake, item, idOf(subscription.customer)!, used), id: line.id }
+    const price = fake.state.objects.price[idOf(line.pricing?.price_details?.price ?? null) ?? ""]
+    const meter = price?.recurring?.meter && fake.state.objects["billing.meter"][price.recurring.meter]
+    if (!price || !meter) return line
+    const quantity = usage(fake, meter, idOf(invoice.customer)!, line.period.start, line.period.end)
+    const amount = amountOf(price, quantity)
+    const description = line.description?.replace(/^\d+/, String(quantity)) ?? null
+    return { ...line, amount, subtotal: amount, quantity, quantity_decimal: String(quantity), description }
   })
 }

@@ -25,6 +25,7 @@ export interface Objects {
   payment_method: Wire<Stripe.PaymentMethod>
   "checkout.session": Wire<Stripe.Checkout.Session>
   subscription: Wire<Stripe.Subscription>
+  subscription_schedule: Wire<Stripe.SubscriptionSchedule>
   invoice: Wire<Stripe.Invoice>
   "billing_portal.session": Wire<Stripe.BillingPortal.Session>
   "billing.meter": Wire<Stripe.Billing.Meter>
@@ -98,6 +99,7 @@ export function emptyState(base: string): State {
       payment_method: {},
       "checkout.session": {},
       subscription: {},
+      subscription_schedule: {},
       invoice: {},
       "billing_portal.session": {},
       "billing.meter": {},

@@ -9,6 +9,7 @@ import { paymentMethods } from "./payment-methods"
 import { portalSessions } from "./portal-sessions"
 import { prices } from "./prices"
 import { products } from "./products"
+import { schedules } from "./schedules"
 import { subscriptions } from "./subscriptions"
 import { testClocks } from "./test-clocks"
 
@@ -24,6 +25,7 @@ export const routes: readonly Route[] = [
   ...portalSessions,
   ...prices,
   ...products,
+  ...schedules,
   ...subscriptions,
   ...testClocks,
   ...webhookEndpoints,

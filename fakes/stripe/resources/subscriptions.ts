@@ -1,6 +1,7 @@
 import { z } from "zod"
 import { changeItems } from "../billing/change"
 import { currentPeriod, end } from "../billing/renew"
+import { releaseSchedule } from "../billing/schedule"
 import { isLive, setStatus } from "../billing/status"
 import { subscribe } from "../billing/subscribe"
 import type { Subscription } from "../billing/subscription-shape"
@@ -150,6 +151,8 @@ export const subscriptions = [
 /** Asks that the subscription end with its period, or takes that back. */
 export function setCancelAtPeriodEnd(fake: Fake, subscription: Subscription, wanted: boolean): void {
   if (subscription.cancel_at_period_end === wanted) return
+  const schedule = fake.state.objects.subscription_schedule[idOf(subscription.schedule) ?? ""]
+  if (schedule) releaseSchedule(fake, schedule)
   const before = {
     cancel_at_period_end: subscription.cancel_at_period_end,
     cancel_at: subscription.cancel_at,

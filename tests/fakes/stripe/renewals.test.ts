@@ -71,6 +71,60 @@ describe("a renewal", () => {
   })
 })
 
+describe("a schedule", () => {
+  async function scheduled() {
+    const subscriber = await subscriberOnClock()
+    const { stripe } = subject
+    const smaller = await monthlyPrice(stripe, 900)
+    const made = await stripe.subscriptionSchedules.create({ from_subscription: subscriber.id })
+    const phase = made.phases[0]!
+    await stripe.subscriptionSchedules.update(made.id, {
+      end_behavior: "release",
+      phases: [
+        {
+          items: [{ price: phase.items[0]!.price as string }],
+          start_date: phase.start_date,
+          end_date: phase.end_date,
+        },
+        { items: [{ price: smaller.id }], duration: { interval: "month" }, metadata: { plan: "small" } },
+      ],
+    })
+    return { ...subscriber, smaller: smaller.id, schedule: made.id }
+  }
+
+  test("changes the price with the next period, then lets go", async () => {
+    const { advance, id, invoices, read, schedule, smaller } = await scheduled()
+    const expanded = await subject.stripe.subscriptions.retrieve(id, { expand: ["schedule"] })
+    expect(expanded.schedule).toMatchObject({
+      id: schedule,
+      status: "active",
+      phases: [{}, { metadata: { plan: "small" } }],
+    })
+    expect(expanded.items.data[0]!.price.unit_amount).toBe(2900)
+    await advance(Date.UTC(2026, 1, 28, 12) / 1000)
+    expect((await read()).items.data).toMatchObject([{ price: { id: smaller } }])
+    expect((await invoices())[0]).toMatchObject({ status: "paid", total: 900 })
+    await advance(Date.UTC(2026, 2, 31, 12) / 1000)
+    expect(await read()).toMatchObject({ schedule: null, items: { data: [{ price: { id: smaller } }] } })
+    const { status } = await subject.stripe.subscriptionSchedules.retrieve(schedule)
+    expect(status).toBe("released")
+  })
+
+  test("that is released changes nothing", async () => {
+    const { advance, invoices, read, schedule } = await scheduled()
+    await subject.stripe.subscriptionSchedules.release(schedule)
+    expect((await read()).schedule).toBeNull()
+    await advance(Date.UTC(2026, 1, 28, 12) / 1000)
+    expect((await invoices())[0]).toMatchObject({ total: 2900 })
+  })
+
+  test("is one to a subscription", async () => {
+    const { id } = await scheduled()
+    const second = subject.stripe.subscriptionSchedules.create({ from_subscription: id })
+    await expect(second).rejects.toMatchObject({ param: "from_subscription" })
+  })
+})
+
 describe.runIf(isStandIn)("a renewal that the card refuses", () => {
   const renewal = Date.UTC(2026, 1, 28, 10) / 1000
   const declined = async (times: number) => {
