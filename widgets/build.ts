@@ -15,6 +15,7 @@ import { mkdirSync, readFileSync, writeFileSync } from "node:fs"
 import path from "node:path"
 import { gzipSync } from "node:zlib"
 import { type BuildOptions, build } from "esbuild"
+import { bareQuantities } from "./bare-quantities"
 import { cssAsText } from "./css-as-text"
 import { languages } from "./shared/locale"
 import type { Address } from "./shared/mount"
@@ -90,7 +91,7 @@ async function bundle(entry: string, options: BuildOptions = {}): Promise<string
       "react-dom/client": "preact/compat/client",
       "react/jsx-runtime": "preact/jsx-runtime",
     },
-    plugins: [cssAsText],
+    plugins: [cssAsText, bareQuantities],
     ...options,
   })
   return outputFiles![0]!.text
