@@ -7,7 +7,7 @@ import { messages as es } from "@/widgets/co2-level/messages/es"
 import { messages as ja } from "@/widgets/co2-level/messages/ja"
 import {
   type Event,
-  isCurrent,
+  impossibleField,
   khTests,
   nextState,
   phMeters,
@@ -16,6 +16,7 @@ import {
 } from "@/widgets/co2-level/state"
 import { cautionWords, setPointWords, wordsOf } from "@/widgets/co2-level/words"
 import { chooseLocale, numberWriter } from "@/widgets/shared/locale"
+import { isCurrent } from "@/widgets/shared/sheet"
 
 const english = chooseLocale(["en"])
 const write = numberWriter(english)
@@ -36,20 +37,24 @@ const kh = (text: string): Event => ({ type: "typed", field: "kh_dkh", text })
 describe("the calculator CO2 level", () => {
   // CHEMISTRY 4: pH 6.8, 4 dKH, 25 °C with the ionic strength from KH alone is 21.0487 mg/L.
   it("says what the worked example of the method says", () => {
-    const { result } = told([ph("6.8"), kh("4")]).reading
+    const { result } = told([ph("6.8"), kh("4")]).answer
     expect(result.co2_mg_l).toBeCloseTo(21.0487, 3)
   })
 
   // CHEMISTRY 6: sodium bicarbonate water of 4 dKH and 25 °C holds 30 mg/L at pH 6.654. The water here is taken to
   // hold 1 mmol/L of other salts, which lowers CO2 by up to 4 % (MODEL_SIGMA), so the set-point by up to 0.018.
   it("sets the controller where 30 mg/L is", () => {
-    const { setPoint } = told([kh("4")]).reading
+    const { setPoint } = told([kh("4")]).answer
     expect(setPoint?.ph).toBeGreaterThan(6.654 - 0.018)
     expect(setPoint?.ph).toBeLessThan(6.654)
   })
 
   it("answers exactly as the API does", () => {
-    const { reading } = told([ph("7.13"), kh("2.5"), { type: "slid", field: "temperature_c", shown: 23.5 }])
+    const { answer: reading } = told([
+      ph("7.13"),
+      kh("2.5"),
+      { type: "slid", field: "temperature_c", shown: 23.5 },
+    ])
     const { result } = co2FromPh({ ...carbonateDefaults, ph: 7.13, kh_dkh: 2.5, temperature_c: 23.5 })
     expect(reading.result).toEqual(result)
   })
@@ -60,16 +65,16 @@ describe("the calculator CO2 level", () => {
     const both = told([{ type: "unit_chosen", field: "temperature_c", unit: "f" }], ppm)
     expect(both.fields.kh_dkh.text).toBe("71")
     expect(both.fields.temperature_c.text).toBe("77")
-    expect(both.reading.result).toEqual(metric.reading.result)
+    expect(both.answer.result).toEqual(metric.answer.result)
   })
 
   it("is surer with a better meter and a finer test", () => {
-    const width = ({ reading: { result } }: State) => result.co2_high_mg_l / result.co2_low_mg_l
-    const better = told([{ type: "ph_meter_chosen", phMeter: "bench" }])
-    const finer = told([{ type: "kh_test_chosen", khTest: "fine" }], better)
+    const width = ({ answer: { result } }: State) => result.co2_high_mg_l / result.co2_low_mg_l
+    const better = told([{ type: "chosen", choices: { phMeter: "bench" } }])
+    const finer = told([{ type: "chosen", choices: { khTest: "fine" } }], better)
     expect(width(better)).toBeLessThan(width(start()))
     expect(width(finer)).toBeLessThan(width(better))
-    expect(finer.reading.result.co2_mg_l).toBe(start().reading.result.co2_mg_l)
+    expect(finer.answer.result.co2_mg_l).toBe(start().answer.result.co2_mg_l)
   })
 })
 
@@ -79,7 +84,7 @@ describe("what cannot be worked out", () => {
     (text) => {
       const good = told([ph("7"), kh("6")])
       const state = told([ph(text)], good)
-      expect(state.reading).toBe(good.reading)
+      expect(state.answer).toBe(good.answer)
       expect(isCurrent(good)).toBe(true)
       expect(isCurrent(state)).toBe(false)
       expect(isCurrent(told([ph("7")], state))).toBe(true)
@@ -88,27 +93,27 @@ describe("what cannot be worked out", () => {
 
   it("names the field where pH and KH cannot be so together", () => {
     const acid = told([kh("30"), ph("4")])
-    expect(acid.impossible).toBe("ph")
+    expect(impossibleField(acid)).toBe("ph")
     const bare = told([{ type: "typed", field: "temperature_c", text: "45" }, ph("9.5"), kh("0.1")])
-    expect(bare.impossible).toBe("kh_dkh")
+    expect(impossibleField(bare)).toBe("kh_dkh")
     for (const state of [acid, bare]) {
       expect(isCurrent(state)).toBe(false)
-      expect(state.reading.result.co2_mg_l).toBeGreaterThan(0)
+      expect(state.answer.result.co2_mg_l).toBeGreaterThan(0)
     }
   })
 
   it("works nothing out while it is paused, and all of it afterwards", () => {
     const paused = told([{ type: "paused", isPaused: true }, ph("6.4")])
-    expect(paused.reading).toEqual(start().reading)
+    expect(paused.answer).toEqual(start().answer)
     expect(isCurrent(paused)).toBe(false)
     const again = told([{ type: "paused", isPaused: false }], paused)
-    expect(again.reading.water.ph).toBe(6.4)
+    expect(again.asked.values.ph).toBe(6.4)
     expect(isCurrent(again)).toBe(true)
   })
 
   it("gives a usual tank where a widget's start cannot be", () => {
-    expect(start({ start: { ph: 4, kh_dkh: 30 } }).reading.water).toEqual(start().reading.water)
-    expect(start({ start: { ph: 7.2 } }).reading.water.ph).toBe(7.2)
+    expect(start({ start: { ph: 4, kh_dkh: 30 } }).asked.values).toEqual(start().asked.values)
+    expect(start({ start: { ph: 7.2 } }).asked.values.ph).toBe(7.2)
   })
 })
 
@@ -119,7 +124,7 @@ describe("the words of the answer", () => {
     expect(words).toMatchObject({ co2: "21", ph: "6.8", kh: "4 dKH", temperature: "25 °C" })
     expect(en.sentence(words)).toBe(
       `At pH 6.8, 4 dKH and 25 °C the water holds about 21 mg/L CO2, and with 95\u00a0% certainty between ` +
-        `${words.low} and ${words.high} mg/L. Judged by the upper end, that is ${en.levels[state.reading.result.level]}.`,
+        `${words.low} and ${words.high} mg/L. Judged by the upper end, that is ${en.levels[state.answer.result.level]}.`,
     )
   })
 
@@ -141,7 +146,7 @@ describe("the words of the answer", () => {
     const state = startState({ settings: {} }, numberWriter(german))
     const spoken = { locale: german, messages: de }
     expect(wordsOf(state, spoken).ph).toBe("6,8")
-    expect(setPointWords(state.reading, spoken)?.advice).toMatch(/pH 6,6\d stellen/)
+    expect(setPointWords(state.answer, spoken)?.advice).toMatch(/pH 6,6\d stellen/)
   })
 
   it("say in every language every caution that the engine can give here", () => {
@@ -149,8 +154,8 @@ describe("the words of the answer", () => {
     for (const meter of Object.keys(phMeters) as (keyof typeof phMeters)[]) {
       for (const test of Object.keys(khTests) as (keyof typeof khTests)[]) {
         const measured = told([
-          { type: "ph_meter_chosen", phMeter: meter },
-          { type: "kh_test_chosen", khTest: test },
+          { type: "chosen", choices: { phMeter: meter } },
+          { type: "chosen", choices: { khTest: test } },
         ])
         for (let acidity = 4; acidity <= 9.5; acidity += 0.25) {
           for (const hardness of [0.1, 0.4, 1, 2, 4, 8, 16, 30]) {
@@ -163,8 +168,8 @@ describe("the words of the answer", () => {
                 ],
                 measured,
               )
-              for (const { code, severity } of state.reading.cautions) {
-                seen.set(`${code} ${severity} ${Math.ceil(state.reading.result.co2_high_mg_l / 10)}`, state)
+              for (const { code, severity } of state.answer.cautions) {
+                seen.set(`${code} ${severity} ${Math.ceil(state.answer.result.co2_high_mg_l / 10)}`, state)
               }
             }
           }
@@ -176,8 +181,8 @@ describe("the words of the answer", () => {
       const spoken = { locale: chooseLocale([language]), messages }
       for (const state of seen.values()) {
         const words = wordsOf(state, spoken)
-        for (const caution of state.reading.cautions) {
-          const text = cautionWords(caution, state.reading, words, spoken)
+        for (const caution of state.answer.cautions) {
+          const text = cautionWords(caution, state.answer, words, spoken)
           expect(text, `${caution.code} in ${language}`).toBeTruthy()
         }
       }
@@ -187,8 +192,8 @@ describe("the words of the answer", () => {
   it("do not soften what the engine says of the livestock", () => {
     const said = (text: string) => {
       const state = told([ph(text)])
-      const caution = state.reading.cautions.find(({ code }) => code === "livestock")!
-      return cautionWords(caution, state.reading, wordsOf(state, speech), speech)
+      const caution = state.answer.cautions.find(({ code }) => code === "livestock")!
+      return cautionWords(caution, state.answer, wordsOf(state, speech), speech)
     }
     expect(said("7.2")).toContain("usually bear")
     expect(said("6.8")).toContain("above the 30 mg/L")
@@ -197,7 +202,7 @@ describe("the words of the answer", () => {
   })
 
   it("put the gravest caution first", () => {
-    const severities = told([ph("6.2")]).reading.cautions.map(({ severity }) => severity)
+    const severities = told([ph("6.2")]).answer.cautions.map(({ severity }) => severity)
     expect(severities[0]).toBe("danger")
     expect(severities).toEqual([...severities].sort((a, b) => order.indexOf(a) - order.indexOf(b)))
   })

@@ -6,13 +6,14 @@ import { numberWriter } from "@/widgets/shared/locale"
 import { MethodView } from "@/widgets/shared/method"
 import type { CalculatorProps } from "@/widgets/shared/mount"
 import { useSettled } from "@/widgets/shared/settled"
+import { isCurrent } from "@/widgets/shared/sheet"
 import { waterFields } from "@/widgets/shared/water-fields"
 import type { Co2LevelMessages } from "./messages/co2-level-messages"
 import { Ruler } from "./ruler"
 import {
   type Event,
   fieldNames,
-  isCurrent,
+  impossibleField,
   type KhTest,
   khTests,
   nextState,
@@ -57,7 +58,7 @@ export function Co2Level({ shown, session, locale, messages }: CalculatorProps<C
               label={messages.fields[name]}
               locale={locale}
               messages={messages.shared}
-              refusal={state.impossible === name ? messages.impossible[name] : null}
+              refusal={impossibleField(state) === name ? messages.impossible[name] : null}
               onType={(text) => change({ type: "typed", field: name, text })}
               onSlide={(value) => change({ type: "slid", field: name, shown: value })}
               onUnit={(unit) => change({ type: "unit_chosen", field: name, unit })}
@@ -69,7 +70,7 @@ export function Co2Level({ shown, session, locale, messages }: CalculatorProps<C
         <WaterMap state={state} locale={locale} messages={messages} />
       </div>
       <MethodView
-        method={state.reading.method}
+        method={state.answer.method}
         messages={messages.shared}
         explanation={`${messages.method} ${messages.cautions[asideCode]?.(wordsOf(state, { locale, messages }))}`}
       />
@@ -91,9 +92,9 @@ function Measured({ state, messages, onChange }: MeasuredProps) {
       <label className="choice">
         <span className="label">{messages.phMeter}</span>
         <select
-          value={state.phMeter}
+          value={state.choices.phMeter}
           onChange={({ currentTarget }) =>
-            onChange({ type: "ph_meter_chosen", phMeter: currentTarget.value as PhMeter })
+            onChange({ type: "chosen", choices: { phMeter: currentTarget.value as PhMeter } })
           }
         >
           {Object.keys(phMeters).map((name) => (
@@ -106,9 +107,9 @@ function Measured({ state, messages, onChange }: MeasuredProps) {
       <label className="choice">
         <span className="label">{messages.khTest}</span>
         <select
-          value={state.khTest}
+          value={state.choices.khTest}
           onChange={({ currentTarget }) =>
-            onChange({ type: "kh_test_chosen", khTest: currentTarget.value as KhTest })
+            onChange({ type: "chosen", choices: { khTest: currentTarget.value as KhTest } })
           }
         >
           {Object.keys(khTests).map((name) => (
@@ -125,7 +126,7 @@ function Measured({ state, messages, onChange }: MeasuredProps) {
 /** The answer: figure, ruler, sentence, set-point, and what to keep in mind beside it. */
 function Outcome({ state, ...speech }: Speech & { readonly state: State }) {
   const { locale, messages } = speech
-  const { reading } = state
+  const { answer: reading } = state
   const { result } = reading
   const words = wordsOf(state, speech)
   const sentence = useSettled(messages.sentence(words))

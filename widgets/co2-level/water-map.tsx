@@ -23,8 +23,8 @@ const khTicks: Record<string, readonly number[]> = {
 /** Where the water lies among all waters of its temperature: pH across, KH upwards, lines of equal CO2. */
 export function WaterMap({ state, locale, messages }: Speech & { readonly state: State }) {
   const clip = useId()
-  const { reading, fields } = state
-  const { water } = reading
+  const { answer, asked, fields } = state
+  const { values: water, choices } = asked
   const { unit } = fields.kh_dkh
   const write = numberWriter(locale)
   const { temperature_c } = water
@@ -35,10 +35,10 @@ export function WaterMap({ state, locale, messages }: Speech & { readonly state:
     }),
     [temperature_c],
   )
-  const errors = { ph_error: phMeters[reading.phMeter], kh_error_dkh: khTests[reading.khTest] }
+  const errors = { ph_error: phMeters[choices.phMeter], kh_error_dkh: khTests[choices.khTest] }
   const point = onPaper(placeOnMap(water))
   // The controller moves along one KH: from where the water is to where it should be held.
-  const target = reading.setPoint && onPaper(placeOnMap({ ...water, ph: reading.setPoint.ph }))
+  const target = answer.setPoint && onPaper(placeOnMap({ ...water, ph: answer.setPoint.ph }))
   const khPerShown = shownValue(1, unit)
 
   return (

@@ -15,15 +15,12 @@ export interface Speech {
 }
 
 /** The numbers of the answer as the locale writes them, each in the unit of its field. */
-export function wordsOf(
-  { reading, fields }: Pick<State, "reading" | "fields">,
-  { locale, messages }: Speech,
-): ReadingWords {
-  const { result, water } = reading
+export function wordsOf({ answer, asked, fields }: State, { locale, messages }: Speech): ReadingWords {
+  const { result } = answer
   const write = numberWriter(locale)
   const inUnit = (name: FieldName) => {
     const { unit } = fields[name]
-    return `${write(shownValue(water[name], unit), unit.decimals)} ${symbolOf(unit)}`.trim()
+    return `${write(shownValue(asked.values[name], unit), unit.decimals)} ${symbolOf(unit)}`.trim()
   }
   return {
     ph: inUnit("ph"),
