@@ -18,6 +18,7 @@ const usualFilter = { max_flow_l_h: 1000, max_head_m: 1.6, inner_diameter_mm: 16
 
 /** The tanks of the design's worked loops. */
 export const small = tankPlan(60, { max_flow_l_h: 400, max_head_m: 0.7, inner_diameter_mm: 12 })
+export const middle = tankPlan(120, { max_flow_l_h: 700, max_head_m: 1.2, inner_diameter_mm: 12 })
 export const usual = tankPlan(180, usualFilter)
 export const large = tankPlan(450, { max_flow_l_h: 1850, max_head_m: 2.1, inner_diameter_mm: 19 })
 

@@ -2,6 +2,8 @@ import fc from "fast-check"
 import { describe, expect, test } from "vitest"
 import { phForCo2 } from "@/lib/chemistry/ph-for-co2"
 import { operatingPoint } from "@/lib/flow/operating-point"
+import { bubbleRate } from "@/lib/gas/bubble-rate"
+import { gasDefaults } from "@/lib/gas/defaults"
 import { gasDemand } from "@/lib/gas/demand"
 import type { GasMethodName } from "@/lib/gas/methods"
 import { methodNames } from "@/lib/plan/method-choice"
@@ -9,7 +11,7 @@ import { type PlanInput, planDefaults, plantDemands } from "@/lib/plan/plan-inpu
 import { systemPlan } from "@/lib/plan/system-plan"
 import { OutOfDomain } from "@/lib/units/out-of-domain"
 import { numbersIn } from "../flow/loops"
-import { isControl, large, small, stringsIn, usual } from "./plans"
+import { isControl, large, middle, small, stringsIn, usual } from "./plans"
 
 const withMethod = (input: PlanInput, method: GasMethodName): PlanInput => ({
   ...input,
@@ -60,6 +62,25 @@ describe("whole jobs", () => {
       expect(diffuser.dosing.daily_use_g_day).toBeGreaterThan(reactor.dosing.daily_use_g_day)
       expect(diffuser.method.recommended).toBe("inline_reactor")
     }
+  })
+
+  /** The design: 0.08 mg a bubble at 0.1 bar, 0.22 at 2 bar, so that bubble rates never compare. */
+  test("a bubble counted at the diffuser carries two to three times the gas of one at the reactor", () => {
+    const reactor = systemPlan(withMethod(usual, "inline_reactor")).result.bubble_rate
+    const diffuser = systemPlan(withMethod(usual, "diffuser")).result.bubble_rate
+    expect(diffuser.mg_per_bubble / reactor.mg_per_bubble).toBeGreaterThan(1.8)
+    expect(diffuser.mg_per_bubble / reactor.mg_per_bubble).toBeLessThan(3.2)
+    // Behind the needle valve stand element, water and check valve: 0.15 + 0.04 + 0.15 bar here.
+    const counter = bubbleRate({ ...gasDefaults, feed_mg_min: 60, counter_pressure_bar: 0.339 }).result
+    expect(reactor.mg_per_bubble).toBeCloseTo(counter.mg_per_bubble, 4)
+  })
+
+  // Common practice, no source.
+  test("120 L whose reactor would fail once the filter clogs: an inline diffuser", () => {
+    const { method, reactor } = systemPlan(middle).result
+    expect([reactor.verdict, reactor.when_due.verdict]).toEqual(["marginal", "unsuitable"])
+    expect(method.name).toBe("inline_diffuser")
+    expect(method.options.find(({ name }) => name === "inline_reactor")?.fit).toBe("possible")
   })
 
   test("a reactor that somebody insists on where it cannot work is planned, with a danger that says so", () => {
