@@ -1,6 +1,7 @@
 import type { Answer, Caution } from "@/lib/chemistry/answer"
 import { method } from "@/lib/chemistry/answer"
 import { figures } from "@/lib/units/figures"
+import { OutOfDomain } from "@/lib/units/out-of-domain"
 import { loopHead } from "./loop"
 import { isAdvertised, loopAt, type PreparedLoop, withCurveShape } from "./loop-input"
 import { cloggingOf } from "./media"
@@ -17,6 +18,7 @@ export interface CloggingInput extends ReactorLoopInput {
 
 /** States of the media that a course shows if the caller does not say. */
 export const DEFAULT_STEPS = 11
+export const MOST_STEPS = 101
 
 export interface CloggingStep {
   readonly clogging: number
@@ -49,9 +51,13 @@ export interface CloggingUncertainty {
 /**
  * What clogging does to a reactor: flow and verdict from clean to blocked media, and the clogging at which it
  * gas-locks. The limit is where the inlet jet falls to 0.8 m/s (bin1993) while the feed is more than an aged gas cap
- * dissolves; it follows from the head that is left for the media at that flow, without a search.
+ * dissolves; it follows from the head that is left for the media at that flow, without a search. Throws
+ * {@link OutOfDomain} as `reactorVerdict` does, and on a number of steps that makes no course.
  */
 export function cloggingCourse(input: CloggingInput): Answer<CloggingCourse, CloggingUncertainty> {
+  if (!(input.steps >= 2 && input.steps <= MOST_STEPS && Number.isInteger(input.steps))) {
+    throw new OutOfDomain("steps", `Give a whole number of steps from 2 to ${MOST_STEPS}.`)
+  }
   const reactor = prepareReactor(input)
   const series = Array.from({ length: input.steps }, (_, i) => {
     const clogging = i / (input.steps - 1)

@@ -81,6 +81,10 @@ describe("cloggingCourse", () => {
     expect([limit, limit_clogging]).toEqual(["never", null])
   })
 
+  test.each([1, 2.5, 102])("refuses %d steps", (steps) => {
+    expect(() => cloggingCourse({ ...usual, steps })).toThrow(expect.objectContaining({ field: "steps" }))
+  })
+
   test("says so when the media's loss is hidden in the pump's numbers", () => {
     const { cautions } = cloggingCourse({ ...usual, clean_media_fraction: 1 })
     expect(cautions.map(({ code }) => code)).toContain("clogging_not_modelled")
