@@ -3,7 +3,7 @@ import { mkdirSync, mkdtempSync, readdirSync, readFileSync, rmSync } from "node:
 import { createServer, type Server } from "node:net"
 import path from "node:path"
 import { promisify } from "node:util"
-import { afterAll, beforeAll, describe, expect, it } from "vitest"
+import { afterAll, afterEach, beforeAll, describe, expect, it } from "vitest"
 import { freePort } from "@/scripts/stack/ports"
 import { removeCluster } from "@/scripts/stack/postgres"
 
@@ -11,10 +11,18 @@ const root = path.resolve(import.meta.dirname, "../..")
 const shell = promisify(execFile)
 
 let dataDir: string
+const launched: Running[] = []
 
 beforeAll(() => {
   mkdirSync(path.join(root, ".data"), { recursive: true })
   dataDir = mkdtempSync(path.join(root, ".data/test-start-"))
+})
+
+afterEach(async () => {
+  for (const { process: each, ended } of launched.splice(0)) {
+    each.kill("SIGTERM")
+    await ended
+  }
 })
 
 afterAll(() => {
@@ -88,7 +96,9 @@ function launch(port: number | string): Running {
   process_.stdout.on("data", keep)
   process_.stderr.on("data", keep)
   const ended = new Promise<number | null>((resolve) => process_.once("close", resolve))
-  return { process: process_, output: () => text, ended }
+  const running = { process: process_, output: () => text, ended }
+  launched.push(running)
+  return running
 }
 
 /** Resolves when the first call is printed; rejects with the output when the command ends before. */
