@@ -57,6 +57,9 @@ function guessedExchange(input: TankInput, volume_l: number): Judged {
 /** Standard error of the difference of two readings of one meter in one night; its offset cancels. Judgement. */
 const REPEATABILITY_PH = 0.03
 
+/** A measurement that leaves more than this factor either way is worth no more than the guess. */
+const WIDEST_SPREAD = K600_FACTOR
+
 function measuredExchange(input: TankInput, night: OvernightReadings, context: ExchangeContext): Judged {
   withFields(
     { start_ph: "overnight.start_ph", end_ph: "overnight.end_ph", elapsed_h: "overnight.elapsed_h" },
@@ -77,6 +80,12 @@ function measuredExchange(input: TankInput, night: OvernightReadings, context: E
   }
   const reading = Math.LN10 * REPEATABILITY_PH * (end_co2_mg_l / (end_co2_mg_l - rest_co2_mg_l))
   const spread = Math.exp((1.96 * reading) / (value * night.elapsed_h))
+  if (spread > WIDEST_SPREAD) {
+    throw new OutOfDomain(
+      "overnight.end_ph",
+      `From ${figures(start_co2_mg_l, 3)} to ${figures(end_co2_mg_l, 3)} mg/L the readings tell the exchange no better than a guess: the change is too small, or the end too near the ${figures(rest_co2_mg_l, 2)} mg/L at rest. Leave hours between them, and end while the pH still rises.`,
+    )
+  }
   return {
     value,
     low: value / spread,

@@ -151,6 +151,7 @@ describe("two pH readings of a night", () => {
   test.each([
     [{ start_ph: 7, end_ph: 6.8, elapsed_h: 8 }, "overnight.end_ph"],
     [{ start_ph: 6.65, end_ph: 8.8, elapsed_h: 8 }, "overnight.end_ph"],
+    [{ start_ph: 6.79, end_ph: 6.8, elapsed_h: 4 }, "overnight.end_ph"],
     [{ start_ph: 6.65, end_ph: 7, elapsed_h: 0 }, "overnight.elapsed_h"],
     [{ start_ph: 3, end_ph: 7, elapsed_h: 8 }, "overnight.start_ph"],
   ])("are refused where they make no sense: %o", (night, field) => {
