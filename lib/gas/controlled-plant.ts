@@ -23,6 +23,9 @@ export interface PlantState {
   readonly probe_ph: number
 }
 
+/** Shorter steps are none: a hundred-thousandth of a second is nothing to a tank, and differences drown in rounding. */
+export const SHORTEST_STEP_MIN = 1e-7
+
 /**
  * Tank, gas line and probe, stepped exactly: CO2 and the held gas are linear and advance in closed form by any step;
  * the probe follows the pH, taken as a parabola through the start, middle and end of the step. Times in minutes.
@@ -77,9 +80,8 @@ export class ControlledPlant {
     this.limit = tank.air_co2_mg_l + (this.supply + net / 60) / this.k
   }
 
-  /** What the probe will read after a step. The step is not taken until `accept`. */
+  /** What the probe will read after a step of at least `SHORTEST_STEP_MIN`. It is not taken until `accept`. */
   attempt(minutes: number): number {
-    if (minutes <= 0) return this.probe
     const { k, holds, controller } = this
     const factors = minutes === 1 ? this.oneMinute : this.factors(minutes)
     const fromLine = ((this.source - this.supply) * holds) / (k * holds - 1)
@@ -95,7 +97,7 @@ export class ControlledPlant {
     return this.nextProbe
   }
 
-  /** Takes the step last attempted, which must have been longer than nothing. */
+  /** Takes the step last attempted. */
   accept(): void {
     const { line } = this.taken
     this.trackTurn()
@@ -120,8 +122,9 @@ export class ControlledPlant {
   /** Exact answer of the lag to the parabola through the pH at the start, middle and end of the step. */
   private probeThrough(middlePh: number, endPh: number, minutes: number, kept: number): number {
     const lag = this.controller.probe_lag_min
-    const curvature = (2 * (endPh - 2 * middlePh + this.ph)) / (minutes * minutes)
-    const slope = (4 * middlePh - 3 * this.ph - endPh) / minutes
+    const straight = minutes < STRAIGHT_BELOW_MIN
+    const curvature = straight ? 0 : (2 * (endPh - 2 * middlePh + this.ph)) / (minutes * minutes)
+    const slope = straight ? (endPh - this.ph) / minutes : (4 * middlePh - 3 * this.ph - endPh) / minutes
     const bend = 2 * lag * lag * curvature
     const settledStart = this.ph - lag * slope + bend
     const settledEnd = endPh - lag * (slope + 2 * curvature * minutes) + bend
@@ -154,6 +157,9 @@ export class ControlledPlant {
     return { halfAir, air: halfAir * halfAir, halfLine, line: halfLine * halfLine, probe }
   }
 }
+
+/** Steps so short that the parabola would be rounding only; a straight line is as good. */
+const STRAIGHT_BELOW_MIN = 1e-3
 
 /** The lag for the closed form, which is 0/0 for a lag of 1/k, and for the shortest ones of all. */
 function lineLag(minutes: number, k: number): number {

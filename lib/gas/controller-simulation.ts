@@ -1,5 +1,5 @@
 import { findRoot } from "@/lib/numeric/find-root"
-import { ControlledPlant, type Controller, type PlantState } from "./controlled-plant"
+import { ControlledPlant, type Controller, type PlantState, SHORTEST_STEP_MIN } from "./controlled-plant"
 
 /** When gas and light are on. Time runs in minutes from the moment the gas is allowed. */
 export interface GasSchedule {
@@ -107,14 +107,14 @@ class Run {
 
   advance(from: number, to: number): void {
     let time = from
-    while (time < to) {
+    while (to - time >= SHORTEST_STEP_MIN) {
       const step = to - time
       if (!this.crossed(this.plant.attempt(step))) {
         this.take(step)
         return
       }
       const reach = this.reach(step)
-      if (reach > 0) {
+      if (reach >= SHORTEST_STEP_MIN) {
         this.plant.attempt(reach)
         this.take(reach)
         time += reach
@@ -159,13 +159,14 @@ class Run {
     return this.gas && (this.open ? reading <= off_ph : reading >= on_ph)
   }
 
-  /** Minutes within the step until the probe meets the threshold that moves the valve. */
+  /** Minutes within the step until the probe meets the threshold that moves the valve; 0 if it is past it already. */
   private reach(step: number): number {
     const { off_ph, on_ph } = this.controller
     if (this.crossed(this.plant.probe)) return 0
     const threshold = this.open ? off_ph : on_ph
-    const past = (minutes: number) => this.plant.attempt(minutes) - threshold
-    return findRoot({ f: past, low: 0, high: step, tolerance: 1e-9 })
+    const past = (minutes: number) =>
+      (minutes === 0 ? this.plant.probe : this.plant.attempt(minutes)) - threshold
+    return findRoot({ f: past, low: 0, high: step, tolerance: SHORTEST_STEP_MIN / 10 })
   }
 
   private turn(open: boolean): void {

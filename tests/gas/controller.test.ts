@@ -164,6 +164,16 @@ describe("simulateController", () => {
     expect(late.max_co2_mg_l).toBeGreaterThan(run.max_co2_mg_l)
   })
 
+  test("comes to an end, with the same day, when gate and light are a breath apart", () => {
+    const hair = { ...schedule, gas_until_min: schedule.gas_until_min + 1e-156, lights_from_min: 6.5e-156 }
+    const plain = { ...schedule, lights_from_min: 0 }
+    const slow = { ...controller, probe_lag_min: 15 }
+    const run = simulateController(slow, hair, start(slow, 4.5))
+    const other = simulateController(slow, plain, start(slow, 4.5))
+    expect(run.switches).toBe(other.switches)
+    expect(run.end.co2_mg_l).toBeCloseTo(other.end.co2_mg_l, 6)
+  })
+
   test("keeps what went in: gas fed is gas released, lost, taken up or stored", () => {
     const run = simulateController(controller, schedule, start(controller, 4.5))
     const samples = new Float64Array(1441)
