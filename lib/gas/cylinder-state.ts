@@ -72,12 +72,11 @@ export function cylinderContents(p: {
 export function liquidFullTemperature(fill_kg_l: number): number | null {
   const density = fill_kg_l * 1000
   if (density <= CRITICAL_DENSITY_KG_M3) return null
-  return findRoot({
-    f: (temperature_c) => saturation(temperature_c)!.liquid_kg_m3 - density,
-    low: TRIPLE_POINT_C,
-    high: CRITICAL_TEMPERATURE_C - 1e-9,
-    tolerance: 1e-6,
-  })
+  const surplus = (temperature_c: number) => saturation(temperature_c)!.liquid_kg_m3 - density
+  // Density falls without bound in slope towards the critical point; a fill that near to it turns liquid there.
+  const high = CRITICAL_TEMPERATURE_C - 1e-6
+  if (surplus(high) >= 0) return high
+  return findRoot({ f: surplus, low: TRIPLE_POINT_C, high, tolerance: 1e-6 })
 }
 
 /** Largest fill that a test pressure allows, kg/L; none below 190 bar. @source adrP200, UN 1013 */

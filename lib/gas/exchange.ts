@@ -50,6 +50,7 @@ export function exchangeFromNight(p: {
   readonly rest_co2_mg_l: number
   readonly elapsed_h: number
 }): number | null {
-  const ratio = (p.start_co2_mg_l - p.rest_co2_mg_l) / (p.end_co2_mg_l - p.rest_co2_mg_l)
-  return ratio > 1 && Number.isFinite(ratio) ? Math.log(ratio) / p.elapsed_h : null
+  const { start_co2_mg_l: start, end_co2_mg_l: end, rest_co2_mg_l: rest } = p
+  if (!(start > end && end > rest)) return null
+  return Math.log((start - rest) / (end - rest)) / p.elapsed_h
 }

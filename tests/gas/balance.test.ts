@@ -223,5 +223,7 @@ describe("exchange", () => {
     for (const end_co2_mg_l of [25, 20, 2, 1]) {
       expect(exchangeFromNight({ ...night, end_co2_mg_l })).toBeNull()
     }
+    // Both below the level at rest, rising towards it: a ratio above 1, but no loss to the air.
+    expect(exchangeFromNight({ ...night, start_co2_mg_l: 0.1, end_co2_mg_l: 1 })).toBeNull()
   })
 })

@@ -116,6 +116,10 @@ describe("a full cylinder", () => {
     expect(liquidFullTemperature(0.4)).toBeNull()
   })
 
+  test("of hardly more than the critical density is so at the critical temperature", () => {
+    expect(liquidFullTemperature(0.46765)).toBeCloseTo(CRITICAL_TEMPERATURE_C, 3)
+  })
+
   test.each([
     [15, 21],
     [20, 26],
