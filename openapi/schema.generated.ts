@@ -9467,7 +9467,7 @@ export interface operations {
                      *                 "The tank holds 182 L; a reactor suits tanks from 80 L, better from 150."
                      *               ],
                      *               "against": [
-                     *                 "When the filter is due for cleaning the flow is 398 L/h and the reactor marginal; it grows noisy below 371 L/h."
+                     *                 "When the filter is due for cleaning the flow is 398 L/h, which makes the reactor marginal; it grows noisy below 371 L/h."
                      *               ]
                      *             },
                      *             {
@@ -11162,7 +11162,7 @@ export interface operations {
                      *           },
                      *           {
                      *             "code": "raise_slowly",
-                     *             "text": "Raise the level over days: day 1 10 mg/L, day 3 15 mg/L, day 5 23 mg/L, day 8 30 mg/L. Lower the controller's set-point step by step, on the last day to 6.65. Stay by the tank for the first hours after each step. Fish gasping at the surface or shrimp trying to get out: gas off, aerate, one step back."
+                     *             "text": "Raise the level over days: day 1 10 mg/L (set-point 7.12), day 3 15 mg/L (set-point 6.95), day 5 23 mg/L (set-point 6.77), day 8 30 mg/L (set-point 6.65). Stay by the tank for the first hours after each step. Fish gasping at the surface or shrimp trying to get out: gas off, aerate, one step back."
                      *           },
                      *           {
                      *             "code": "confirm_level",
@@ -11183,7 +11183,7 @@ export interface operations {
                      *           {
                      *             "code": "weigh_cylinder",
                      *             "when": "Every month; a charge lasts about 170 days, 330 g a month.",
-                     *             "text": "Weigh the cylinder and subtract its empty weight: order a refill when 260 g of CO2 are left: 14 days of use. The gauge tells nothing before the last liquid is gone: it stays near 60 bar at 22 °C until 560 g are left, and a falling gauge means refill now."
+                     *             "text": "Weigh the cylinder and subtract its empty weight: order a refill when 260 g of CO2 are left: 14 days of use. The gauge tells nothing before the last liquid is gone: it stays near 60 bar at 22 °C until 560 g are left, and once it falls the end is near."
                      *           },
                      *           {
                      *             "code": "check_gas_line",
@@ -11253,7 +11253,7 @@ export interface operations {
                      *               "Is gas coming? About 11 bubbles a second at 0.84 bar; the cylinder's gauge near 60 bar.",
                      *               "Give it time: it takes 75 min to 95 % of the target.",
                      *               "Calibrate the probe, and look at the drop checker.",
-                     *               "Calm the surface: it loses 9.6 of 11 g a day already.",
+                     *               "Calm the surface: 87 % of the gas leaves through it.",
                      *               "Test KH: after a water change the same CO2 stands at a higher pH."
                      *             ]
                      *           },
