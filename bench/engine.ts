@@ -12,8 +12,14 @@ import { flowDefaults } from "@/lib/flow/loop-input"
 import { operatingPoint } from "@/lib/flow/operating-point"
 import { reactorDefaults } from "@/lib/flow/reactor-input"
 import { reactorVerdict } from "@/lib/flow/reactor-verdict"
+import { controllerDay } from "@/lib/gas/controller-day"
+import { gasDefaults } from "@/lib/gas/defaults"
+import { gasDemand } from "@/lib/gas/demand"
+import { leadTime } from "@/lib/gas/lead-time"
 import { planDefaults } from "@/lib/plan/plan-input"
 import { systemPlan } from "@/lib/plan/system-plan"
+
+const tank = { ...gasDefaults, volume_l: 180, surface_area_m2: 0.4 }
 
 interface Row {
   readonly name: string
@@ -114,6 +120,12 @@ const rows: readonly Row[] = [
   {
     name: "answer: cloggingCourse of 11 steps",
     fn: (i) => cloggingCourse({ ...reactorLoop, feed_mg_min: sweep(i, 20, 90), steps: DEFAULT_STEPS }),
+  },
+  { name: "answer: gasDemand", fn: (i) => gasDemand({ ...tank, kh_dkh: sweep(i, 2, 8) }) },
+  { name: "answer: leadTime", fn: (i) => leadTime({ ...tank, kh_dkh: sweep(i, 2, 8) }) },
+  {
+    name: "answer: controllerDay, both ends of its interval",
+    fn: (i) => controllerDay({ ...tank, kh_dkh: sweep(i, 2, 8) }),
   },
   {
     name: "answer: systemPlan",
