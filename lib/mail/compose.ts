@@ -41,7 +41,7 @@ ${action ? button(action) : ""}
 function button({ label, url }: { label: string; url: string }): string {
   const style = "display:inline-block;padding:10px 16px;background:#0c5c56;color:#ffffff;border-radius:6px"
   return `<p style="margin:24px 0 16px"><a href="${escapeHtml(url)}" style="${style}">${escapeHtml(label)}</a></p>
-<p style="margin:0;font-size:14px;color:#4c5b59">Or copy this address: ${escapeHtml(url)}</p>`
+<p style="margin:0;font-size:14px;color:#4c5b59;overflow-wrap:anywhere">Or copy this address: ${escapeHtml(url)}</p>`
 }
 
 function escapeHtml(text: string): string {
