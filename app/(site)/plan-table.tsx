@@ -24,7 +24,7 @@ const rows: readonly { readonly label: string; value(plan: Plan): string }[] = [
 export function PlanTable() {
   return (
     // biome-ignore lint/a11y/noNoninteractiveTabindex: a region that scrolls must be reachable by keyboard
-    <section aria-label="Plans" tabIndex={0} className="overflow-x-auto">
+    <section aria-label="Plans" tabIndex={0} className="relative overflow-x-auto">
       <table className="w-full min-w-2xl border-y border-line text-left">
         <thead>
           <tr className="align-bottom">

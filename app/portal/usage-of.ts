@@ -5,6 +5,8 @@ import { type Quota, quotaOf, type UsageRow, usageBy } from "@/lib/usage"
 
 export interface Usage {
   readonly quota: Quota
+  /** When the quota was read: what a forecast reckons from. */
+  readonly at: Date
   /** First and last day, inclusive, in UTC. */
   readonly from: string
   readonly to: string
@@ -25,7 +27,7 @@ export async function usageOf({
     quotaOf({ ctx, input: { mode } }),
     usageBy({ ctx, input: { from, to, by, mode } }),
   ])
-  return { quota, from, to, rows }
+  return { quota, at: ctx.now, from, to, rows }
 }
 
 function dayBefore(now: Date, days: number): string {

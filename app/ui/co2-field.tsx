@@ -118,8 +118,10 @@ export function Co2Field({
   )
 }
 
+/** Rounded, since the logarithms of a server and of a browser may differ in their last digit. */
 function onPaper({ x, y }: Place): Place {
-  return { x: box.left + x * box.width, y: box.top + y * box.height }
+  const round = (value: number) => Math.round(value * 10) / 10
+  return { x: round(box.left + x * box.width), y: round(box.top + y * box.height) }
 }
 
 function open(places: readonly Place[]): string {

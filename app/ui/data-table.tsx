@@ -127,7 +127,7 @@ export function DataTable<Row extends { readonly id: string }>({
         </Button>
       </div>
       {/* biome-ignore lint/a11y/noNoninteractiveTabindex: a region that scrolls must be reachable by keyboard */}
-      <section aria-label={caption} tabIndex={0} className="overflow-x-auto border-y border-line">
+      <section aria-label={caption} tabIndex={0} className="relative overflow-x-auto border-y border-line">
         <table className="w-full text-left text-sm">
           <caption className="sr-only">{caption}</caption>
           <thead>

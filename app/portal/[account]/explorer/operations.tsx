@@ -34,7 +34,6 @@ export default function Operations({ secret }: { secret: string }) {
         displayRequestDuration
         tryItOutEnabled
         plugins={[plainCode]}
-        deepLinking
         onComplete={(system: System) => system.preauthorizeApiKey("key", secret)}
       />
     </div>

@@ -55,7 +55,7 @@ export function Usage({ account, initial }: { account: string; initial: Answer }
       {error && <Failed detail={detailOf(error)} onRetry={refetch} />}
       {data && (
         <>
-          <QuotaSection mode={mode} quota={data.quota} />
+          <QuotaSection mode={mode} quota={data.quota} at={data.at} />
           <Section title="By day" note="A day ends at midnight UTC. The newest calls show within seconds.">
             {data.rows.length === 0 ? (
               <Empty title={`No ${mode} call in these ${days} days`}>
@@ -97,8 +97,8 @@ export function Usage({ account, initial }: { account: string; initial: Answer }
   )
 }
 
-function QuotaSection({ mode, quota }: { mode: Mode; quota: Answer["quota"] }) {
-  const spent_days = Math.max(0.25, (Date.now() - Date.parse(quota.period_start)) / day_ms)
+function QuotaSection({ mode, quota, at }: { mode: Mode; quota: Answer["quota"]; at: string }) {
+  const spent_days = Math.max(0.25, (Date.parse(at) - Date.parse(quota.period_start)) / day_ms)
   const forecast = Math.round((quota.used / spent_days) * lengthOf(quota))
   return (
     <Section
