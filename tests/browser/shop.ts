@@ -4,7 +4,7 @@ import { stack } from "../support/stack"
 let browser: Browser | undefined
 
 /** The one browser of a test file. */
-async function launched(): Promise<Browser> {
+export async function launched(): Promise<Browser> {
   browser ??= await chromium.launch({
     executablePath: process.env.CHROMIUM_PATH ?? "/usr/bin/chromium",
     // A page that a test rewrites on its way counts as of no network, and may not call loopback otherwise.
