@@ -3,6 +3,7 @@
  * a run that stopped half-way, is made. Keys cannot be read back, so they are kept in the file named by `DEMO_FILE`.
  */
 import { readFileSync, writeFileSync } from "node:fs"
+import { sql } from "kysely"
 import { asWorker, closePools, type Role, type Trx } from "@/db"
 import { hashPassword } from "@/lib/accounts"
 import { planOf } from "@/lib/billing/plans"
@@ -152,8 +153,8 @@ async function moveShop(demo: Demo): Promise<void> {
     for (const table of ["api_key", "widget"] as const) {
       await trx
         .updateTable(table)
-        .set({ origins: [shopOrigin] })
-        .where("origins", "=", [demo.shopOrigin])
+        .set({ origins: sql<string[]>`array_replace(origins, ${demo.shopOrigin}, ${shopOrigin})` })
+        .where(sql<boolean>`${demo.shopOrigin} = any(origins)`)
         .execute()
     }
   })

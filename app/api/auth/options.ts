@@ -94,7 +94,9 @@ function provider(
         return opened ? { id: opened.person.id, session_token: opened.token } : null
       } catch (error) {
         // next-auth hands the message of an error on to the page.
-        throw new Error(error instanceof TarnwrightError ? error.detail : "Something failed on our side.")
+        if (error instanceof TarnwrightError) throw new Error(error.detail)
+        console.error("next-auth:", error)
+        throw new Error("Something failed on our side.")
       }
     },
   })
