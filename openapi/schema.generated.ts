@@ -7539,6 +7539,92 @@ export interface operations {
                      *             "flow_l_h": 1000,
                      *             "head_m": 2.53476
                      *           }
+                     *         ],
+                     *         "due_loop_curve": [
+                     *           {
+                     *             "flow_l_h": 0,
+                     *             "head_m": 0
+                     *           },
+                     *           {
+                     *             "flow_l_h": 50,
+                     *             "head_m": 0.0889499
+                     *           },
+                     *           {
+                     *             "flow_l_h": 100,
+                     *             "head_m": 0.193623
+                     *           },
+                     *           {
+                     *             "flow_l_h": 150,
+                     *             "head_m": 0.321496
+                     *           },
+                     *           {
+                     *             "flow_l_h": 200,
+                     *             "head_m": 0.464721
+                     *           },
+                     *           {
+                     *             "flow_l_h": 250,
+                     *             "head_m": 0.624742
+                     *           },
+                     *           {
+                     *             "flow_l_h": 300,
+                     *             "head_m": 0.801978
+                     *           },
+                     *           {
+                     *             "flow_l_h": 350,
+                     *             "head_m": 0.996349
+                     *           },
+                     *           {
+                     *             "flow_l_h": 400,
+                     *             "head_m": 1.20779
+                     *           },
+                     *           {
+                     *             "flow_l_h": 450,
+                     *             "head_m": 1.43626
+                     *           },
+                     *           {
+                     *             "flow_l_h": 500,
+                     *             "head_m": 1.6817
+                     *           },
+                     *           {
+                     *             "flow_l_h": 550,
+                     *             "head_m": 1.94408
+                     *           },
+                     *           {
+                     *             "flow_l_h": 600,
+                     *             "head_m": 2.22336
+                     *           },
+                     *           {
+                     *             "flow_l_h": 650,
+                     *             "head_m": 2.51952
+                     *           },
+                     *           {
+                     *             "flow_l_h": 700,
+                     *             "head_m": 2.83254
+                     *           },
+                     *           {
+                     *             "flow_l_h": 750,
+                     *             "head_m": 3.16237
+                     *           },
+                     *           {
+                     *             "flow_l_h": 800,
+                     *             "head_m": 3.50902
+                     *           },
+                     *           {
+                     *             "flow_l_h": 850,
+                     *             "head_m": 3.87245
+                     *           },
+                     *           {
+                     *             "flow_l_h": 900,
+                     *             "head_m": 4.25265
+                     *           },
+                     *           {
+                     *             "flow_l_h": 950,
+                     *             "head_m": 4.64959
+                     *           },
+                     *           {
+                     *             "flow_l_h": 1000,
+                     *             "head_m": 5.06328
+                     *           }
                      *         ]
                      *       },
                      *       "uncertainty": {
@@ -7698,6 +7784,13 @@ export interface operations {
                                 head_m: number;
                             }[];
                             loop_curve: {
+                                /** @description Flow of water, in L/h */
+                                flow_l_h: number;
+                                /** @description Head of water, in m */
+                                head_m: number;
+                            }[];
+                            /** @description The loop when the filter is due for cleaning */
+                            due_loop_curve: {
                                 /** @description Flow of water, in L/h */
                                 flow_l_h: number;
                                 /** @description Head of water, in m */
@@ -10839,6 +10932,92 @@ export interface operations {
                      *               "flow_l_h": 1000,
                      *               "head_m": 2.53476
                      *             }
+                     *           ],
+                     *           "due_loop_curve": [
+                     *             {
+                     *               "flow_l_h": 0,
+                     *               "head_m": 0
+                     *             },
+                     *             {
+                     *               "flow_l_h": 50,
+                     *               "head_m": 0.0889499
+                     *             },
+                     *             {
+                     *               "flow_l_h": 100,
+                     *               "head_m": 0.193623
+                     *             },
+                     *             {
+                     *               "flow_l_h": 150,
+                     *               "head_m": 0.321496
+                     *             },
+                     *             {
+                     *               "flow_l_h": 200,
+                     *               "head_m": 0.464721
+                     *             },
+                     *             {
+                     *               "flow_l_h": 250,
+                     *               "head_m": 0.624742
+                     *             },
+                     *             {
+                     *               "flow_l_h": 300,
+                     *               "head_m": 0.801978
+                     *             },
+                     *             {
+                     *               "flow_l_h": 350,
+                     *               "head_m": 0.996349
+                     *             },
+                     *             {
+                     *               "flow_l_h": 400,
+                     *               "head_m": 1.20779
+                     *             },
+                     *             {
+                     *               "flow_l_h": 450,
+                     *               "head_m": 1.43626
+                     *             },
+                     *             {
+                     *               "flow_l_h": 500,
+                     *               "head_m": 1.6817
+                     *             },
+                     *             {
+                     *               "flow_l_h": 550,
+                     *               "head_m": 1.94408
+                     *             },
+                     *             {
+                     *               "flow_l_h": 600,
+                     *               "head_m": 2.22336
+                     *             },
+                     *             {
+                     *               "flow_l_h": 650,
+                     *               "head_m": 2.51952
+                     *             },
+                     *             {
+                     *               "flow_l_h": 700,
+                     *               "head_m": 2.83254
+                     *             },
+                     *             {
+                     *               "flow_l_h": 750,
+                     *               "head_m": 3.16237
+                     *             },
+                     *             {
+                     *               "flow_l_h": 800,
+                     *               "head_m": 3.50902
+                     *             },
+                     *             {
+                     *               "flow_l_h": 850,
+                     *               "head_m": 3.87245
+                     *             },
+                     *             {
+                     *               "flow_l_h": 900,
+                     *               "head_m": 4.25265
+                     *             },
+                     *             {
+                     *               "flow_l_h": 950,
+                     *               "head_m": 4.64959
+                     *             },
+                     *             {
+                     *               "flow_l_h": 1000,
+                     *               "head_m": 5.06328
+                     *             }
                      *           ]
                      *         },
                      *         "reactor": {
@@ -12438,6 +12617,13 @@ export interface operations {
                                     head_m: number;
                                 }[];
                                 loop_curve: {
+                                    /** @description Flow of water, in L/h */
+                                    flow_l_h: number;
+                                    /** @description Head of water, in m */
+                                    head_m: number;
+                                }[];
+                                /** @description The loop when the filter is due for cleaning */
+                                due_loop_curve: {
                                     /** @description Flow of water, in L/h */
                                     flow_l_h: number;
                                     /** @description Head of water, in m */
@@ -16190,6 +16376,13 @@ export interface operations {
                                 /** Format: uri */
                                 url: string;
                             } | null;
+                            /** @default null */
+                            enquiries: {
+                                /** Format: uri */
+                                privacy_url: string;
+                            } | null;
+                            /** @default true */
+                            statistics: boolean;
                         };
                         /** @description Whether the widget carries our credit line */
                         credit_line: boolean;
@@ -16371,6 +16564,13 @@ export interface operations {
                                 /** Format: uri */
                                 url: string;
                             } | null;
+                            /** @default null */
+                            enquiries: {
+                                /** Format: uri */
+                                privacy_url: string;
+                            } | null;
+                            /** @default true */
+                            statistics: boolean;
                         };
                         /** @description Whether the widget carries our credit line */
                         credit_line: boolean;

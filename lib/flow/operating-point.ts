@@ -49,6 +49,8 @@ export interface OperatingPoint {
   /** Head of the pump and head that the loop asks for, at the same flows. */
   readonly pump_curve: readonly CurvePoint[]
   readonly loop_curve: readonly CurvePoint[]
+  /** What the loop asks for when the filter is due for cleaning. */
+  readonly due_loop_curve: readonly CurvePoint[]
 }
 
 export interface FlowUncertainty {
@@ -255,14 +257,18 @@ export function hoseFlows({ hoses, viscosity_m2_s }: PreparedLoop, flow_m3_s: nu
   })
 }
 
-function curves({ pump }: PreparedLoop, loop: Loop) {
+function curves(prepared: PreparedLoop, loop: Loop) {
+  const { pump } = prepared
+  const due = loopAt(prepared, DUE_CLOGGING)
   const pump_curve: CurvePoint[] = []
   const loop_curve: CurvePoint[] = []
+  const due_loop_curve: CurvePoint[] = []
   for (let i = 0; i < CURVE_POINTS; i++) {
     const flow = (pump.maxFlow_m3_s * i) / (CURVE_POINTS - 1)
     const flow_l_h = flow / M3_S_PER_L_H
     pump_curve.push({ flow_l_h, head_m: Math.max(0, pump.headAt(flow)) })
     loop_curve.push({ flow_l_h, head_m: loopHead(loop, flow) })
+    due_loop_curve.push({ flow_l_h, head_m: loopHead(due, flow) })
   }
-  return { pump_curve, loop_curve }
+  return { pump_curve, loop_curve, due_loop_curve }
 }

@@ -7,6 +7,8 @@ export interface Reading {
   /** Carbonate and total hardness are chosen apart from the system: kits differ more than countries. */
   readonly kh?: UnitId | undefined
   readonly gh?: UnitId | undefined
+  /** A thermometer may differ from the system as well. */
+  readonly temperature?: UnitId | undefined
 }
 
 /** A number and its unit, apart, so that the unit can stand beside it in its own type. */
@@ -19,6 +21,7 @@ export interface Written {
 export function unitFor(base: string, reading: Reading): UnitId | undefined {
   if (base === "dKH") return reading.kh ?? "dkh"
   if (base === "dGH") return reading.gh ?? "dgh"
+  if (base === "°C" && reading.temperature) return reading.temperature
   return systems[reading.system][base as BaseUnit]
 }
 

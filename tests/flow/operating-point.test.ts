@@ -142,6 +142,8 @@ describe("operatingPoint", () => {
     for (const [i, point] of result.pump_curve.entries()) {
       const excess = point.head_m - result.loop_curve[i]!.head_m
       expect(Math.sign(excess)).toBe(Math.sign(result.flow_l_h - point.flow_l_h))
+      const dueExcess = point.head_m - result.due_loop_curve[i]!.head_m
+      expect(Math.sign(dueExcess)).toBe(Math.sign(result.due_flow_l_h - point.flow_l_h))
     }
   })
 

@@ -35,6 +35,7 @@ export const flowOperatingPoint = defineCalculation({
     ),
     pump_curve: curve,
     loop_curve: curve,
+    due_loop_curve: curve.meta({ description: "The loop when the filter is due for cleaning" }),
   },
   uncertainty: flowUncertainty,
   example: exampleLoop,
