@@ -5,6 +5,7 @@ export interface Schema {
   account: Account
   app_user: AppUser
   membership: Membership
+  invitation: Invitation
   session: Session
   one_time_token: OneTimeToken
   sign_in_failure: SignInFailure
@@ -27,6 +28,8 @@ export interface Schema {
   idempotency: Idempotency
   catalog_item: CatalogItem
   report: Report
+  enquiry: Enquiry
+  tank_event: TankEvent
 }
 
 export type AccountStatus = "active" | "suspended" | "closing"
@@ -72,6 +75,18 @@ interface Membership {
   created_at: CreatedAt
 }
 
+interface Invitation {
+  account_id: string
+  id: string
+  email: string
+  role: Role
+  /** Of the newest letter. */
+  token_digest: Buffer
+  invited_by: string
+  created_at: CreatedAt
+  expires_at: Date
+}
+
 interface Session {
   token_digest: Buffer
   id: string
@@ -86,7 +101,7 @@ interface Session {
 
 interface OneTimeToken {
   digest: Buffer
-  purpose: "verify_email" | "reset_password" | "sign_in" | "invite"
+  purpose: "verify_email" | "reset_password" | "sign_in"
   email: string
   payload: ColumnType<Record<string, unknown>, string | undefined, string>
   created_at: CreatedAt
@@ -130,6 +145,9 @@ interface UsageEvent {
   key_id: string
   mode: KeyMode
   operation: string
+  /** How many calls the row stands for: a run of one operation in a batch is one row. */
+  calls: Generated<number>
+  /** Units of all of them. */
   units: number
   engine_version: string
   request_id: string
@@ -332,4 +350,39 @@ interface Report {
   created_by: string
   created_at: CreatedAt
   share_slug: string | null
+}
+
+interface Enquiry {
+  account_id: string
+  id: string
+  widget_id: string
+  page_origin: string
+  language: string
+  name: string | null
+  /** Personal, as the name, the message and the tank: null once it was erased. */
+  email: string | null
+  message: string | null
+  tank: ColumnType<Record<string, unknown> | null, string | null, string | null>
+  consent_version: string
+  consent_wording: string
+  consented_at: Date
+  created_at: CreatedAt
+  erased_at: Date | null
+  erased_by: string | null
+}
+
+interface TankEvent {
+  account_id: string
+  /** One page view's session; nothing else knows it, so it leads to nobody. */
+  session_id: string
+  widget_id: string
+  /** As `2026-12-01`, in UTC. */
+  day: ColumnType<Date, string, string>
+  volume_l: number | null
+  ph: number | null
+  kh_dkh: number | null
+  temperature_c: number | null
+  method: string | null
+  level: string | null
+  verdict: string | null
 }

@@ -5,6 +5,7 @@ const prefixes = {
   account: "acct",
   user: "user",
   session: "sess",
+  invitation: "inv",
   key: "key",
   widget: "wdgt",
   call: "call",

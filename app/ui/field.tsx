@@ -124,11 +124,14 @@ export function Choices<Value extends string>({
   legend,
   options,
   error,
+  chosen,
   ...rest
 }: ComponentProps<"input"> & {
   legend: string
   options: readonly { value: Value; label: string; explain?: string }[]
   error?: string
+  /** The one that is chosen, where no form of react-hook-form keeps it. */
+  chosen?: Value
 }) {
   const id = useId()
   return (
@@ -137,7 +140,13 @@ export function Choices<Value extends string>({
       <div className="mt-1.5 divide-y divide-line border-y border-line">
         {options.map(({ value, label, explain }) => (
           <label key={value} className="flex gap-3 py-2.5 hover:bg-sunk">
-            <input {...rest} type={rest.type ?? "radio"} value={value} className="mt-1 size-4 shrink-0" />
+            <input
+              {...rest}
+              {...(chosen !== undefined && { checked: chosen === value })}
+              type={rest.type ?? "radio"}
+              value={value}
+              className="mt-1 size-4 shrink-0"
+            />
             <span>
               <span className="block">{label}</span>
               {explain && <span className="block text-sm text-soft">{explain}</span>}

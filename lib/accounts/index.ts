@@ -3,13 +3,20 @@ export { type AccountDescription, describeAccount } from "./describe"
 export { accountIdOfKey, accountIdOfSlug } from "./find-for-operator"
 export { type AccountForAdmin, listAccountsForAdmin } from "./list-for-admin"
 export { findMembership, listMemberships, type Membership } from "./memberships"
+export { ownersOf } from "./owners"
 export { hashPassword } from "./password"
 export { PASSWORD_MAX, PASSWORD_MIN, passwordProblem } from "./password-policy"
-export type { Person, Visit, Visitor } from "./person"
+export { normaliseEmail, type Person, type Visit, type Visitor } from "./person"
 export { renameAccount } from "./rename"
 export { addressToReset, requestPasswordReset, resetPassword } from "./reset-password"
-export { endSession, type OpenedSession, type ReadSession, readSession, SESSION_DAYS } from "./session"
+export {
+  endSession,
+  type OpenedSession,
+  openSession,
+  type ReadSession,
+  readSession,
+  SESSION_DAYS,
+} from "./session"
 export { signIn } from "./sign-in"
 export { type NewPerson, signUp } from "./sign-up"
-export { listTeam, type Member, ownersOf } from "./team"
 export { addressToVerify, verifyEmail } from "./verify-email"

@@ -7,8 +7,7 @@ export type Purpose = Schema["one_time_token"]["purpose"]
 const validFor_min: Record<Purpose, number> = {
   verify_email: 24 * 60,
   reset_password: 30,
-  sign_in: 15,
-  invite: 72 * 60,
+  sign_in: 30,
 }
 
 export interface NewToken {

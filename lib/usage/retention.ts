@@ -3,6 +3,9 @@ import { asWorker } from "@/db"
 import { REMEMBERED_H } from "./idempotency"
 import { LOG_DAYS } from "./list-calls"
 
+/** Days for which a shopper's enquiry is kept, as the shopper is told before they agree. @source PLATFORM 4.16 */
+export const ENQUIRY_DAYS = 180
+
 /**
  * What is deleted and when: one row a table. The ledger goes by partitions, the hourly sums and the audit trail stay.
  *
@@ -14,11 +17,14 @@ const retention = {
   webhook_delivery: "created_at < now() - interval '30 days'",
   session: "expires_at < now()",
   one_time_token: "expires_at < now() - interval '7 days'",
+  invitation: "expires_at < now() - interval '30 days'",
   sign_in_failure: "at < now() - interval '30 days'",
   stripe_event: "processed_at < now() - interval '90 days'",
   usage_counter: "mode = 'sandbox' and period_end < now() - interval '35 days'",
   usage_threshold: "period_end < now() - interval '400 days'",
   key_reminder: "expires_at < now() - interval '30 days'",
+  enquiry: `created_at < now() - interval '${ENQUIRY_DAYS} days'`,
+  tank_event: "day < current_date - 800",
 } as const
 
 export type Retained = keyof typeof retention

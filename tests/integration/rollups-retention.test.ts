@@ -58,7 +58,7 @@ describe("the partitions of the ledger", () => {
     const { ctx } = await createTestAccount()
     const request_id = newId("request")
     const call = { account_id: ctx.account_id, key_id: "k", mode: "live", operation: "carbonateCo2" } as const
-    await commitUsage({ ...call, units: 1, request_id })
+    await commitUsage({ ...call, calls: 1, units: 1, request_id })
     const [row] = await query(
       "select tableoid::regclass::text as place from usage_event where request_id = $1",
       [request_id],
@@ -154,7 +154,7 @@ describe("what is past its time", () => {
       one_time_token: {
         days: 7,
         insert: `(digest, purpose, email, expires_at)
-          values (sha256(gen_random_uuid()::text::bytea), 'invite', $2, now() - $1::interval)`,
+          values (sha256(gen_random_uuid()::text::bytea), 'sign_in', $2, now() - $1::interval)`,
         count: "email = $1",
         values: [mark],
       },

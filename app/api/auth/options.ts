@@ -1,5 +1,6 @@
 import type { NextAuthOptions, User } from "next-auth"
 import Credentials from "next-auth/providers/credentials"
+import type { z } from "zod"
 import { cookieName, isSecure, sessionCookieName } from "@/app/session-cookie"
 import { visitorOf } from "@/app/visitor"
 import {
@@ -12,6 +13,8 @@ import {
 } from "@/lib/accounts"
 import { env } from "@/lib/env"
 import { TarnwrightError } from "@/lib/errors"
+import { signUpByInvitation } from "@/lib/team"
+import { invitedInput } from "./schemas"
 
 type Fields = Record<string, string> | undefined
 type Headers = Record<string, string | undefined> | undefined
@@ -46,6 +49,15 @@ export function authOptions(): NextAuthOptions {
         verifyEmail({
           visitor: visitorOf((name) => headers?.[name]),
           input: { token: fields?.token ?? "" },
+        }),
+      ),
+      provider("invitation", { token: {}, name: {}, password: {} }, (fields, headers) =>
+        signUpByInvitation({
+          visitor: visitorOf((name) => headers?.[name]),
+          input: {
+            token: fields?.token ?? "",
+            ...valid(invitedInput, { name: fields?.name, password: fields?.password }),
+          },
         }),
       ),
     ],
@@ -100,6 +112,12 @@ function provider(
       }
     },
   })
+}
+
+function valid<Schema extends z.ZodType>(schema: Schema, given: unknown): z.output<Schema> {
+  const parsed = schema.safeParse(given)
+  if (parsed.success) return parsed.data
+  throw new TarnwrightError("validation_failed", parsed.error.issues[0]?.message ?? "This is not valid.")
 }
 
 function cookie(name: string) {

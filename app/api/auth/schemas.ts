@@ -21,6 +21,13 @@ export const signInInput = z.strictObject({ email, password: z.string().min(1, "
 
 export const resetRequestInput = z.strictObject({ email })
 
+export const ofLink = z.strictObject({ token: z.string().max(200) })
+
+export const invitedInput = z.strictObject({
+  name: line("your name"),
+  password: z.string().min(1, "Choose a password."),
+})
+
 export const resetInput = z.strictObject({
   token: z.string().max(200),
   password: z.string().min(1, "Choose a password."),

@@ -46,6 +46,16 @@ export function accountEndpoint<Schema extends z.ZodType>(
   })
 }
 
+/** A route of whoever is signed in, about themselves and no account. */
+export function personEndpoint<Schema extends z.ZodType>(
+  endpoint: Endpoint<Schema, { readonly visitor: Visitor; readonly person: Person }>,
+): Handler {
+  return handler(async (request, params, visitor) => {
+    const person = await personOf(visitor)
+    return endpoint.run({ visitor, person, input: await inputOf(endpoint.input, request, params) })
+  })
+}
+
 /** A route of the admin area; for anyone but an admin it does not exist. */
 export function adminEndpoint<Schema extends z.ZodType>(
   endpoint: Endpoint<Schema, { readonly ctx: Omit<Ctx, "account_id"> }>,

@@ -45,6 +45,22 @@ export const accountNameInput = z.strictObject({
     .regex(/^[^\p{Cc}<>]*$/u, "Leave out angle brackets and line breaks."),
 })
 
+/** What a person may be in an account, from most to least. */
+export const roles = ["owner", "developer", "merchandiser", "viewer"] as const
+
+const role = z.enum(roles)
+
+export const invitationInput = z.strictObject({
+  email: z.string().trim().max(254).pipe(z.email("Write the address as name@shop.example.")),
+  role,
+})
+
+export const ofInvitation = z.strictObject({ invitation_id: z.string() })
+
+export const ofMember = z.strictObject({ user_id: z.string() })
+
+export const roleInput = ofMember.extend({ role })
+
 export const checkoutInput = z.strictObject({ plan: z.enum(["storefront", "brand"]) })
 
 export const spendingCapInput = z.strictObject({ overage_cap_minor: z.number().int() })

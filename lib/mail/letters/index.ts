@@ -2,6 +2,7 @@ import { alreadySignedUp } from "./already-signed-up"
 import { invitation } from "./invitation"
 import { keyExpiring } from "./key-expiring"
 import { keyRevoked } from "./key-revoked"
+import { membershipChanged } from "./membership-changed"
 import { passwordChanged } from "./password-changed"
 import { paymentFailed } from "./payment-failed"
 import { resetPassword } from "./reset-password"
@@ -16,6 +17,7 @@ export const letters = {
   reset_password: resetPassword,
   password_changed: passwordChanged,
   invitation,
+  membership_changed: membershipChanged,
   key_revoked: keyRevoked,
   key_expiring: keyExpiring,
   usage_threshold: usageThreshold,

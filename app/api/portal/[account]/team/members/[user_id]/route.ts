@@ -1,0 +1,7 @@
+import { changeRole, removeMember } from "@/lib/team"
+import { accountEndpoint } from "../../../../endpoint"
+import { ofMember, roleInput } from "../../../../schemas"
+
+export const PATCH = accountEndpoint({ right: "team.manage", input: roleInput, run: changeRole })
+
+export const DELETE = accountEndpoint({ right: "team.manage", input: ofMember, run: removeMember })
