@@ -1,19 +1,26 @@
 import type { Schematic } from "@/lib/plan/schematic"
+import type { Reading } from "@/lib/units/format"
 import { NarrowSchematic, narrowLayout } from "./narrow"
-import { valueLine } from "./value-text"
+import { plainReading, valueLine } from "./value-text"
 import { WideSchematic, wideBox } from "./wide"
 
 /**
  * The gas train and the water loop of a plan, each number where it physically belongs. Across where there is room,
  * one under another where there is not; the same values follow as a table.
  */
-export function SchematicDrawing({ schematic }: { schematic: Schematic }) {
+export function SchematicDrawing({
+  schematic,
+  reading = plainReading,
+}: {
+  schematic: Schematic
+  reading?: Reading
+}) {
   const { height } = narrowLayout(schematic)
   const label = "Schematic of the gas train and the water loop. The table after it holds the same values."
   return (
     <figure className="@container">
       <svg role="img" aria-label={label} viewBox={wideBox} className="hidden w-full @min-[60rem]:block">
-        <WideSchematic schematic={schematic} />
+        <WideSchematic schematic={schematic} reading={reading} />
       </svg>
       <svg
         role="img"
@@ -21,17 +28,23 @@ export function SchematicDrawing({ schematic }: { schematic: Schematic }) {
         viewBox={`0 0 404 ${height}`}
         className="block w-full max-w-md @min-[60rem]:hidden"
       >
-        <NarrowSchematic schematic={schematic} />
+        <NarrowSchematic schematic={schematic} reading={reading} />
       </svg>
       <details className="mt-4">
         <summary className="link text-sm">The same values as a table</summary>
-        <SchematicTable schematic={schematic} />
+        <SchematicTable schematic={schematic} reading={reading} />
       </details>
     </figure>
   )
 }
 
-function SchematicTable({ schematic: { nodes, edges } }: { schematic: Schematic }) {
+function SchematicTable({
+  schematic: { nodes, edges },
+  reading,
+}: {
+  schematic: Schematic
+  reading: Reading
+}) {
   const labels = new Map(nodes.map(({ id, label }) => [id, label]))
   const rows = [
     ...nodes.map(({ id, label, values }) => ({ id, place: label, values })),
@@ -65,7 +78,7 @@ function SchematicTable({ schematic: { nodes, edges } }: { schematic: Schematic 
             <td className="py-1.5">
               {values.map((value) => (
                 <span key={`${value.quantity} ${value.of ?? ""}`} className="block">
-                  {valueLine(value)}
+                  {valueLine(value, reading)}
                 </span>
               ))}
             </td>

@@ -1,4 +1,5 @@
 import type { SchematicValue } from "@/lib/plan/schematic"
+import type { Reading } from "@/lib/units/format"
 import { valueText } from "./value-text"
 
 export const LINE_PX = 18
@@ -15,12 +16,14 @@ export function Lines({
   anchor = "start",
   label,
   values,
+  reading,
 }: {
   x: number
   y: number
   anchor?: "start" | "end"
   label?: string
   values: readonly SchematicValue[]
+  reading: Reading
 }) {
   const drawn = values.filter(isWorthDrawing)
   const first = label === undefined ? 0 : 1
@@ -28,7 +31,7 @@ export function Lines({
     <text x={x} y={y} textAnchor={anchor} fontSize={13} fill="var(--ink)">
       {label !== undefined && <tspan fontWeight={600}>{label}</tspan>}
       {drawn.map((value, index) => {
-        const { before, figure, after } = valueText(value)
+        const { before, figure, after } = valueText(value, reading)
         return (
           <tspan key={`${value.quantity} ${value.of ?? ""}`} x={x} dy={index + first === 0 ? 0 : LINE_PX}>
             {before && <tspan fill="var(--soft)">{before} </tspan>}

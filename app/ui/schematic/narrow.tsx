@@ -1,4 +1,5 @@
 import type { NodeKind, Schematic, SchematicEdge, SchematicNode } from "@/lib/plan/schematic"
+import type { Reading } from "@/lib/units/format"
 import { isWorthDrawing, LINE_PX, Lines } from "./lines"
 import { Pipe } from "./pipe"
 import { symbols } from "./symbols"
@@ -50,7 +51,7 @@ export function narrowLayout({ nodes, edges }: Schematic): { rows: readonly Row[
   return { rows, height: bottom + 26 + (closing ? drawnOf(closing) : 0) * LINE_PX }
 }
 
-export function NarrowSchematic({ schematic }: { schematic: Schematic }) {
+export function NarrowSchematic({ schematic, reading }: { schematic: Schematic; reading: Reading }) {
   const { rows } = narrowLayout(schematic)
   const last = rows.at(-1)
   const foot = last ? last.y + halfOf(last.node) + 18 : 0
@@ -71,6 +72,7 @@ export function NarrowSchematic({ schematic }: { schematic: Schematic }) {
               arrow={{ x: axis, y: (from + to) / 2, turn: 90 }}
             />
             <Lines
+              reading={reading}
               x={textX}
               y={gapMiddle(above, y, node) - ((drawnOf(into) - 1) * LINE_PX) / 2 + 4}
               values={into.values}
@@ -85,7 +87,7 @@ export function NarrowSchematic({ schematic }: { schematic: Schematic }) {
             medium={closing.medium}
             arrow={{ x: loopX, y: (last.y + closed.y) / 2, turn: -90 }}
           />
-          <Lines x={axis + 14} y={foot + 4} values={closing.values} />
+          <Lines reading={reading} x={axis + 14} y={foot + 4} values={closing.values} />
         </>
       )}
       {rows.map(({ node, y }) => (
@@ -99,6 +101,7 @@ export function NarrowSchematic({ schematic }: { schematic: Schematic }) {
             {node.kind === "tank" ? <SmallTank /> : symbols[node.kind]}
           </g>
           <Lines
+            reading={reading}
             x={textX}
             y={y - (node.values.length * LINE_PX) / 2 + 4}
             label={node.label}

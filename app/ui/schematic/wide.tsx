@@ -1,4 +1,5 @@
 import type { NodeKind, Schematic } from "@/lib/plan/schematic"
+import type { Reading } from "@/lib/units/format"
 import { Lines } from "./lines"
 import { Pipe } from "./pipe"
 import { symbols } from "./symbols"
@@ -50,7 +51,13 @@ const routes: Record<string, Route> = {
 
 export const wideBox = "0 0 1120 610"
 
-export function WideSchematic({ schematic: { nodes, edges } }: { schematic: Schematic }) {
+export function WideSchematic({
+  schematic: { nodes, edges },
+  reading,
+}: {
+  schematic: Schematic
+  reading: Reading
+}) {
   return (
     <>
       <Tank />
@@ -61,7 +68,7 @@ export function WideSchematic({ schematic: { nodes, edges } }: { schematic: Sche
         return (
           <g key={`${from} ${to}`}>
             <Pipe path={route.path} medium={medium} arrow={{ x, y, turn }} />
-            {route.text && <Lines x={route.text[0]} y={route.text[1]} values={values} />}
+            {route.text && <Lines reading={reading} x={route.text[0]} y={route.text[1]} values={values} />}
           </g>
         )
       })}
@@ -74,7 +81,7 @@ export function WideSchematic({ schematic: { nodes, edges } }: { schematic: Sche
                 {symbols[kind]}
               </g>
             )}
-            <Lines x={text[0]} y={text[1]} anchor={text[2]} label={label} values={values} />
+            <Lines reading={reading} x={text[0]} y={text[1]} anchor={text[2]} label={label} values={values} />
           </g>
         )
       })}
