@@ -103,8 +103,9 @@ async function measure(
   for (let round = 0; round <= rounds; round++) {
     for (const name of names) {
       const measured = await load(targets[name], { seconds, dir })
+      if (round === 0) continue
       if (measured.failed > 0) throw new Error(`${measured.failed} calls of ${name} failed`)
-      if (round > 0) loads[name].push(measured)
+      loads[name].push(measured)
     }
   }
   return loads

@@ -24,7 +24,7 @@ const server = createServer(async (incoming, outgoing) => {
     outgoing.writeHead(400).end()
     return
   }
-  await commitUsage({ ...key, mode: "live", operation: "ceiling", units: 1, request_id: "ceiling" })
+  await commitUsage({ ...key, mode: "live", operation: "ceiling", calls: 1, units: 1, request_id: "ceiling" })
   outgoing.writeHead(200, { "content-type": "application/json", "content-length": answer.byteLength })
   outgoing.end(answer)
 })

@@ -28,7 +28,9 @@ export async function load(
   if (!/^127\.0\.0\.1:/.test(host)) throw new Error(`A load goes to this machine only, not to ${host}`)
   const script = path.join(dir, "load.lua")
   writeFileSync(script, lua(target))
-  const { stdout } = await run("wrk", ["-t1", "-c20", `-d${seconds}s`, "--latency", "-s", script, target.url])
+  // The first compilation of a route may take longer than wrk's own 2 s.
+  const options = ["-t1", "-c20", `-d${seconds}s`, "--timeout", "10s", "--latency", "-s", script]
+  const { stdout } = await run("wrk", [...options, target.url])
   const number = (pattern: RegExp) => Number(pattern.exec(stdout)?.[1] ?? Number.NaN)
   return {
     requests_per_s: number(/^requests_per_s=([\d.]+)/m),

@@ -21,6 +21,17 @@ export type Access =
   | { readonly kind: "key"; readonly scope: Scope }
   | { readonly kind: "widget" }
 
+export interface NestedCall {
+  readonly path: string
+  readonly body?: unknown
+}
+
+export interface NestedAnswer {
+  readonly status: number
+  /** Answer or problem. */
+  readonly body: unknown
+}
+
 /** What `run` is given besides its parsed input. */
 export interface Caller {
   /** Absent where the operation is public. */
@@ -32,8 +43,8 @@ export interface Caller {
    * call which the cap holds back stores nothing.
    */
   charge(): Promise<void>
-  /** Performs another operation as the same caller: validated, metered and refused in the same way. */
-  perform(path: string, body: unknown): Promise<{ status: number; body: unknown }>
+  /** Performs calculations as the same caller, each validated, metered in its turn and refused as if it came alone. */
+  perform(calls: readonly NestedCall[]): Promise<NestedAnswer[]>
 }
 
 export interface Operation<Request extends z.ZodType = z.ZodType, Response extends z.ZodType = z.ZodType> {
@@ -53,6 +64,8 @@ export interface Operation<Request extends z.ZodType = z.ZodType, Response exten
   readonly response: Response
   /** Status of success. */
   readonly status: 200 | 201 | 204
+  /** Most calls of one network address in a window, whichever account they concern: what anybody's page may call. */
+  readonly perAddress?: { readonly points: number; readonly window_s: number }
   /** A body of CSV instead of JSON: its text is the input's `csv`, beside the query; and its largest size. */
   readonly csv?: { readonly limit_bytes: number }
   /** Whether a success stores something, so that an `Idempotency-Key` guards against storing it twice. */

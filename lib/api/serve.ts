@@ -5,8 +5,8 @@ import { newId } from "@/lib/id"
 import { logRefusal } from "@/lib/usage"
 import { admit } from "./admit"
 import { preflight } from "./cors"
-import type { AnyOperation, Caller } from "./define-operation"
-import { charge, limitRate } from "./limits"
+import type { AnyOperation, Caller, NestedAnswer, NestedCall } from "./define-operation"
+import { charge, chargeInTurn, limitAddress, limitRate } from "./limits"
 import { once } from "./once"
 import { parseBody, parseInput } from "./parse"
 import { problemOf, problems, refusalOf } from "./problem"
@@ -74,6 +74,7 @@ export function createServe({ registry, publicUrl, onFault }: ServeOptions): Ser
   ): Promise<Ctx | undefined> {
     if (match.operation.access.kind === "public") return undefined
     const access = await admit(match, request, publicUrl, progress)
+    await limitAddress(match.operation, request.address)
     await limitRate(access, progress)
     return {
       account_id: access.account_id,
@@ -100,37 +101,57 @@ export function createServe({ registry, publicUrl, onFault }: ServeOptions): Ser
         charging ??= charge(operation, progress)
         return charging
       },
-      perform: (path, body) => performNested(path, body, ctx, request, progress),
+      perform: (calls) => performNested(calls, ctx as Ctx, request, progress),
     }
     const output = await operation.run({ input: input as z.output<z.ZodType>, caller })
     await caller.charge()
     return output
   }
 
-  /** One item of a batch: an operation performed, metered and refused as if it had come alone. */
+  /** The items of a batch, each performed, metered and refused as if it had come alone. */
   async function performNested(
-    path: string,
-    body: unknown,
-    ctx: Ctx | undefined,
+    calls: readonly NestedCall[],
+    ctx: Ctx,
     request: ApiRequest,
     progress: Progress,
-  ): Promise<{ status: number; body: unknown }> {
-    try {
-      const match = routeOf({ ...request, method: "POST", path })
-      const { operation } = match
-      if (
-        operation.access.kind !== "key" ||
-        operation.access.scope !== "calculate" ||
-        operation.units === 0
-      ) {
-        throw new TarnwrightError("not_found", `${path} cannot be part of a batch: calculations can.`)
+  ): Promise<NestedAnswer[]> {
+    const outcomes = await Promise.all(calls.map((call) => calculate(call, ctx, request)))
+    const charged = await chargeInTurn(
+      outcomes.flatMap((outcome) => ("operation" in outcome ? [outcome.operation] : [])),
+      progress,
+    )
+    let turn = 0
+    return outcomes.map((outcome) => {
+      const refused = "error" in outcome ? reported(outcome.error, progress) : charged[turn++]
+      if (!refused && "operation" in outcome) {
+        return { status: outcome.operation.status, body: outcome.output }
       }
-      const input = parseInput(operation, match, request, body)
-      return { status: operation.status, body: await run(operation, input, ctx, request, progress) }
-    } catch (error) {
-      const problem = problemOf(reported(error, progress), publicUrl, progress.requestId)
+      const problem = problemOf(refused as TarnwrightError, publicUrl, progress.requestId)
       return { status: problem.status, body: problem }
+    })
+  }
+
+  /** One calculation of a batch, not yet metered. */
+  async function calculate({ path, body }: NestedCall, ctx: Ctx, request: ApiRequest): Promise<Calculated> {
+    try {
+      const match = nestedRoute(path)
+      const { operation } = match
+      const caller: Caller = { ctx, origin: request.header("origin"), charge: nothing, perform: noBatch }
+      const input = parseInput(operation, match, request, body) as z.output<z.ZodType>
+      return { operation, output: await operation.run({ input, caller }) }
+    } catch (error) {
+      return { error }
     }
+  }
+
+  function nestedRoute(path: string): Match {
+    const match = router.find("POST", path)
+    if (!match) throw new TarnwrightError("not_found", `There is no operation at ${path}.`)
+    const nested = "operation" in match ? match.operation : undefined
+    if (nested?.access.kind !== "key" || nested.access.scope !== "calculate" || nested.units === 0) {
+      throw new TarnwrightError("not_found", `${path} cannot be part of a batch: calculations can.`)
+    }
+    return match as Match
   }
 
   /** The refusal that an error stands for; where the fault is ours, `onFault` is told its cause. */
@@ -140,6 +161,13 @@ export function createServe({ registry, publicUrl, onFault }: ServeOptions): Ser
     return refused
   }
 }
+
+/** A calculation of a batch before it is metered. */
+type Calculated = { readonly operation: AnyOperation; readonly output: unknown } | { readonly error: unknown }
+
+// A calculation stores nothing, so it charges nothing by itself; and no batch is part of another.
+const nothing = () => Promise.resolve()
+const noBatch = () => Promise.reject(new TarnwrightError("not_found", "A batch cannot be part of a batch."))
 
 /** Puts a refusal into the request log of the account whose key it was. */
 function logRefused(

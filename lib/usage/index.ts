@@ -1,5 +1,5 @@
 export { ANNOUNCE_THRESHOLD, announceThreshold, type ReachedThreshold } from "./announce-threshold"
-export { commitUsage, type MeteredCall, SANDBOX_UNITS_A_DAY, type UsageReceipt } from "./commit"
+export { commitUsage, type MeteredRun, SANDBOX_UNITS_A_DAY, type UsageReceipt } from "./commit"
 export { databaseAnswers } from "./database-answers"
 export {
   claimIdempotencyKey,
@@ -20,6 +20,6 @@ export {
   rateLimiter,
 } from "./rate-limiter"
 export { type Drift, describeDrift, reconcileUsage } from "./reconcile"
-export { deleteExpired } from "./retention"
+export { deleteExpired, ENQUIRY_DAYS } from "./retention"
 export { type RolledHours, rollUpUsage } from "./roll-up"
 export { type UsageQuery, type UsageRow, usageBy } from "./usage-by"

@@ -43,7 +43,7 @@ export async function reconcileUsage(): Promise<Drift[]> {
         select date_trunc('hour', now() - make_interval(days => ${REACH_DAYS}), 'UTC') as first, rolled_until as last
           from usage_rollup
       ), ledger as (
-        select account_id, mode, operation, key_id, date_trunc('hour', at, 'UTC') as start, count(*) as calls,
+        select account_id, mode, operation, key_id, date_trunc('hour', at, 'UTC') as start, sum(calls) as calls,
                sum(units) as units
           from usage_event, span where at >= first and at < last group by 1, 2, 3, 4, 5
       ), hourly as (

@@ -26,7 +26,7 @@ export async function rollUpUsage(): Promise<RolledHours | undefined> {
     const { from, until } = span
     await sql`
       insert into usage_hour (account_id, hour, mode, operation, key_id, calls, units)
-        select account_id, date_trunc('hour', at, 'UTC'), mode, operation, key_id, count(*), sum(units)
+        select account_id, date_trunc('hour', at, 'UTC'), mode, operation, key_id, sum(calls), sum(units)
           from usage_event where at >= ${from} and at < ${until}
          group by 1, 2, 3, 4, 5
       on conflict (account_id, hour, mode, operation, key_id)

@@ -31,7 +31,7 @@ export function usageBy({ ctx, input }: Call<UsageQuery>): Promise<UsageRow[]> {
       .selectFrom("usage_event")
       .select([
         group.as("group"),
-        sql<number>`count(*)`.as("calls"),
+        sql<number>`sum(calls)::bigint`.as("calls"),
         sql<number>`sum(units)::bigint`.as("units"),
       ])
       .where("account_id", "=", ctx.account_id)

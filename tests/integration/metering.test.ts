@@ -147,6 +147,39 @@ describe("a batch", () => {
     expect((await books(account)).units).toBe(3)
   })
 
+  it("is charged by runs of one operation, up to the cap, and counts each call", async () => {
+    const account = await createTestAccount({ unit_cap: 6 })
+    const { secret } = await account.key({ scopes: ["calculate", "usage"] })
+    const paths = ["/carbonate/co2", "/carbonate/co2", "/gas/lead-time", "/gas/lead-time", "/carbonate/co2"]
+    const tank = { volume_l: 180, surface_area_m2: 0.4, kh_dkh: 4 }
+    const calls = paths.map((path, index) => ({
+      id: `${index}`,
+      path,
+      body: path.startsWith("/gas") ? tank : body,
+    }))
+    const lastTwo = await post("/batch", secret, { calls: [...calls, ...calls] }).expect(200)
+    const statuses = lastTwo.body.results.map(({ status }: { status: number }) => status)
+    expect(statuses).toEqual([200, 200, 200, 200, 402, 402, 402, 402, 402, 402])
+    expect(lastTwo.headers["tarnwright-units"]).toBe("6")
+    expect(lastTwo.headers["tarnwright-units-remaining"]).toBe("0")
+    const { ledger, units } = await books(account)
+    expect(ledger.map(({ operation, calls }) => `${operation} ${calls}`).sort()).toEqual([
+      "carbonateCo2 2",
+      "gasLeadTime 2",
+    ])
+    expect(units).toBe(6)
+    const today = new Date().toISOString().slice(0, 10)
+    const { body: usage } = await request(stack().appUrl)
+      .get("/api/v1/usage")
+      .query({ from: today, to: today, by: "operation" })
+      .set("authorization", `Bearer ${secret}`)
+      .expect(200)
+    expect(usage.data).toEqual([
+      { group: "carbonateCo2", calls: 2, units: 2 },
+      { group: "gasLeadTime", calls: 2, units: 4 },
+    ])
+  })
+
   it("takes 100 items and refuses 101", async () => {
     const account = await createTestAccount()
     const { secret } = await account.key()

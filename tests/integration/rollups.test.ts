@@ -142,6 +142,7 @@ describe("the comparison of ledger, sums and counters", () => {
       key_id: "key_a",
       mode: "live",
       operation: "carbonateCo2",
+      calls: 1,
       units: 1,
       request_id: newId("request"),
     })

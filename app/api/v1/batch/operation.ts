@@ -58,9 +58,7 @@ export const batch = defineOperation({
     },
   },
   async run({ input, caller }) {
-    const results = await Promise.all(
-      input.calls.map(async ({ id, path, body }) => ({ id, ...(await caller.perform(path, body)) })),
-    )
-    return { results }
+    const answers = await caller.perform(input.calls)
+    return { results: answers.map((answer, index) => ({ id: input.calls[index]?.id ?? "", ...answer })) }
   },
 })
