@@ -12,6 +12,7 @@ import {
   reportOverage,
   reviewSubscriptions,
 } from "@/lib/billing"
+import { type EnquiryCopy, SEND_ENQUIRY_COPY, sendEnquiryCopy } from "@/lib/enquiries"
 import { env } from "@/lib/env"
 import { remindOfExpiry } from "@/lib/keys"
 import { deliverMail, type Mail, SEND_MAIL } from "@/lib/mail"
@@ -34,6 +35,7 @@ loadLocalEnv()
 /** A job may run twice, when its answer is lost: each task is safe to repeat. */
 const taskList: TaskList = {
   [SEND_MAIL]: (payload, { job }) => deliverMail(payload as Mail, `job-${job.id}`),
+  [SEND_ENQUIRY_COPY]: (payload) => sendEnquiryCopy(payload as EnquiryCopy),
   [PROCESS_STRIPE_EVENT]: (payload) => processStripeEvent({ input: payload as { event_id: string } }),
   [REVIEW_SUBSCRIPTIONS]: async () => void (await reviewSubscriptions({ now: new Date() })),
   [REPORT_METER_HOURS]: (payload) =>

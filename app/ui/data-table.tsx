@@ -17,7 +17,7 @@ import {
 import { type ReactNode, useMemo } from "react"
 import { Button } from "./button"
 import { classNames } from "./class-names"
-import { type CsvValue, csvOf } from "./csv"
+import { type CsvValue, csvOf } from "@/lib/csv"
 import { DownMark, UpMark } from "./marks"
 
 const features = tableFeatures({

@@ -1,5 +1,6 @@
 export { deliverMail } from "./deliver"
 export { enqueueMail, SEND_MAIL } from "./enqueue"
+export { type Language, languages } from "./languages"
 export type { LetterName, Mail } from "./letters"
-export { type AboutAccount, notifyOwners } from "./notify-owners"
+export { type AboutAccount, notifyOwners, notifyRoles } from "./notify-owners"
 export { renderMail } from "./render"

@@ -24,7 +24,7 @@ const retention = {
   usage_threshold: "period_end < now() - interval '400 days'",
   key_reminder: "expires_at < now() - interval '30 days'",
   enquiry: `created_at < now() - interval '${ENQUIRY_DAYS} days'`,
-  tank_event: "day < current_date - 800",
+  tank_event: "day < current_date - 400",
 } as const
 
 export type Retained = keyof typeof retention

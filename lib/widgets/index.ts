@@ -1,5 +1,6 @@
 export { type Calculator, calculators } from "./calculators"
 export { createWidget, type NewWidget } from "./create"
+export { findWidget } from "./find"
 export { listWidgets } from "./list"
 export { openSession, type WidgetSession } from "./open-session"
 export type { WidgetRow } from "./row"

@@ -17,6 +17,11 @@ export interface SessionClaims {
   readonly origin: string
 }
 
+/** The claims with the session's own id, a random one that leads to nobody. */
+export interface Session extends SessionClaims {
+  readonly session_id: string
+}
+
 /** A token that says so for {@link SESSION_SECONDS} seconds. */
 export async function signSessionToken(claims: SessionClaims, now: Date): Promise<string> {
   const { secret } = keys()
@@ -35,19 +40,32 @@ export async function signSessionToken(claims: SessionClaims, now: Date): Promis
 /**
  * What a token says, if it is ours, of this kind, in time, and sent from the origin that it was made for.
  *
+ * `late_s`: seconds for which it is taken beyond its time, where a shopper's own pace decides and nothing is paid for.
+ *
  * @throws TarnwrightError `origin_not_allowed` for any other token: it tells nobody what was wrong with it.
  */
-export async function verifySessionToken(token: string, origin: string, now: Date): Promise<SessionClaims> {
-  const payload = await verified(token, now)
-  const { sub, org } = payload ?? {}
-  if (payload?.origin !== origin || typeof sub !== "string" || typeof org !== "string") {
+export async function verifySessionToken(
+  token: string,
+  origin: string,
+  now: Date,
+  late_s = 0,
+): Promise<Session> {
+  const payload = await verified(token, now, late_s)
+  const { sub, org, jti } = payload ?? {}
+  if (payload?.origin !== origin || typeof sub !== "string" || typeof org !== "string" || !jti) {
     throw new TarnwrightError("origin_not_allowed", "The widget's session is not valid here. Open a new one.")
   }
-  return { widget_id: sub, account_id: org, origin }
+  return { widget_id: sub, account_id: org, origin, session_id: jti }
 }
 
-function verified(token: string, now: Date): Promise<JWTPayload | undefined> {
-  const rules = { algorithms: [algorithm], issuer: env().PUBLIC_URL, audience, typ: type, clockTolerance: 5 }
+function verified(token: string, now: Date, late_s: number): Promise<JWTPayload | undefined> {
+  const rules = {
+    algorithms: [algorithm],
+    issuer: env().PUBLIC_URL,
+    audience,
+    typ: type,
+    clockTolerance: 5 + late_s,
+  }
   return jwtVerify(token, keys().open, { ...rules, currentDate: now }).then(
     ({ payload }) => payload,
     () => undefined,

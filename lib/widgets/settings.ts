@@ -24,6 +24,10 @@ export const widgetSettings = z.strictObject({
   link: z
     .union([z.strictObject({ label: z.string().trim().min(1).max(80), url: z.url().max(500) }), z.null()])
     .default(null),
+  /** The part by which a shopper asks the shop, with the page that says how it treats their data; null: without it. */
+  enquiries: z.union([z.strictObject({ privacy_url: z.url().max(500) }), z.null()]).default(null),
+  /** Whether the widget tells what tanks it was asked about, with no person in it. */
+  statistics: z.boolean().default(true),
 })
 
 export type WidgetSettings = z.output<typeof widgetSettings>
@@ -31,7 +35,7 @@ export type WidgetSettings = z.output<typeof widgetSettings>
 /**
  * The settings with what they leave out filled in.
  *
- * @throws TarnwrightError `validation_failed`, with pointers into the settings, when one is malformed or the link
+ * @throws TarnwrightError `validation_failed`, with pointers into the settings, when one is malformed or a link
  * leads away from the widget's own origins.
  */
 export function parseSettings(settings: unknown, origins: readonly string[]): WidgetSettings {
@@ -44,12 +48,14 @@ export function parseSettings(settings: unknown, origins: readonly string[]): Wi
       })),
     )
   }
-  const { link } = outcome.data
-  if (link && !originMatches(new URL(link.url).origin, origins)) {
-    throw refusal([
-      { pointer: "/settings/link/url", detail: "The link must lead to one of the widget's own origins." },
-    ])
-  }
+  const { link, enquiries } = outcome.data
+  const links = { link: link?.url, enquiries: enquiries?.privacy_url }
+  const strays = Object.entries(links).flatMap(([name, url]) => {
+    if (!url || originMatches(new URL(url).origin, origins)) return []
+    const pointer = name === "link" ? "/settings/link/url" : "/settings/enquiries/privacy_url"
+    return [{ pointer, detail: "The link must lead to one of the widget's own origins." }]
+  })
+  if (strays.length > 0) throw refusal(strays)
   return outcome.data
 }
 

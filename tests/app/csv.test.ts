@@ -1,6 +1,6 @@
 import { parse } from "csv-parse/sync"
 import { describe, expect, it } from "vitest"
-import { csvOf } from "@/app/ui/csv"
+import { csvOf } from "@/lib/csv"
 
 describe("an exported table", () => {
   it("is read back by an independent reader as it was", () => {

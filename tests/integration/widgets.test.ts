@@ -1,8 +1,10 @@
+import type { Agent } from "node:http"
 import request from "supertest"
 import { beforeAll, describe, expect, it } from "vitest"
 import { withTenant } from "@/db"
 import { createWidget, listWidgets, updateWidget, verifySessionToken, type WidgetRow } from "@/lib/widgets"
 import { createTestAccount, type TestAccount } from "../support/account"
+import { ownAddress } from "../support/address"
 import { stack, takeSettings } from "../support/stack"
 
 const shop = "https://shop.example"
@@ -17,7 +19,10 @@ function makeWidget(
 }
 
 function openSession(widget_id: string, origin: string | null, body: object = {}) {
-  const call = request(stack().appUrl).post(`/api/v1/widgets/${widget_id}/sessions`).send(body)
+  const call = request(stack().appUrl)
+    .post(`/api/v1/widgets/${widget_id}/sessions`)
+    .agent(ownAddress())
+    .send(body)
   return origin ? call.set("origin", origin) : call
 }
 
@@ -46,6 +51,7 @@ describe("200: a session of a widget", () => {
       widget_id: widget.id,
       account_id: account.ctx.account_id,
       origin: shop,
+      session_id: expect.any(String),
     })
   })
 
@@ -71,6 +77,8 @@ describe("200: the settings of a widget", () => {
         temperature_unit: "c",
         start: { ph: 7.2 },
         link,
+        enquiries: null,
+        statistics: true,
       },
       credit_line: true,
     })
@@ -85,6 +93,27 @@ describe("200: the settings of a widget", () => {
     await updateWidget({ ctx: account.ctx, input: { widget_id: widget.id, settings: { language: "de" } } })
     const { body } = await readSettings(widget.id, shop).expect(200)
     expect(body.settings.language).toBe("de")
+  })
+})
+
+describe("429: a flood of sessions", () => {
+  it("is refused to the address it comes from, after ten in a minute, and to no other", async () => {
+    const account = await createTestAccount()
+    const widget = await makeWidget(account)
+    const address = ownAddress()
+    const open = (from: Agent) =>
+      request(stack().appUrl)
+        .post(`/api/v1/widgets/${widget.id}/sessions`)
+        .agent(from)
+        .set("origin", shop)
+        .send({})
+    for (let count = 0; count < 10; count += 1) await open(address).expect(200)
+    const { body, headers } = await open(address).expect(429)
+    expect(body.code).toBe("rate_limited")
+    expect(Number(headers["retry-after"])).toBeGreaterThan(0)
+    expect(headers["access-control-allow-origin"]).toBe(shop)
+    expect(await ledgerOf(account)).toHaveLength(10)
+    await open(ownAddress()).expect(200)
   })
 })
 
@@ -187,6 +216,11 @@ describe("the widgets of an account", () => {
       "a link that leads away from the shop",
       { settings: { link: { label: "x", url: "https://other.example/" } } },
       "/settings/link/url",
+    ],
+    [
+      "a privacy page that is not the shop's",
+      { settings: { enquiries: { privacy_url: "https://other.example/privacy" } } },
+      "/settings/enquiries/privacy_url",
     ],
     [
       "a link that is a script",

@@ -14,12 +14,13 @@ beforeAll(() => {
 })
 
 const later = (seconds: number) => new Date(now.getTime() + seconds * 1000)
+const uuid = expect.stringMatching(/^[0-9a-f-]{36}$/)
 const refused = { code: "origin_not_allowed" }
 
 describe("a widget's session token", () => {
   it("names the widget, the account and the page's origin", async () => {
     const token = await signSessionToken(claims, now)
-    expect(await verifySessionToken(token, claims.origin, later(60))).toEqual(claims)
+    expect(await verifySessionToken(token, claims.origin, later(60))).toEqual({ ...claims, session_id: uuid })
   })
 
   it("is a JWT of its own type, signed with Ed25519, for one audience, that another library can verify", async () => {
@@ -37,8 +38,14 @@ describe("a widget's session token", () => {
 
   it("ends after ten minutes, with five seconds for clocks that differ", async () => {
     const token = await signSessionToken(claims, now)
-    await expect(verifySessionToken(token, claims.origin, later(604))).resolves.toEqual(claims)
+    await expect(verifySessionToken(token, claims.origin, later(604))).resolves.toMatchObject(claims)
     await expect(verifySessionToken(token, claims.origin, later(606))).rejects.toMatchObject(refused)
+  })
+
+  it("is taken later where its shopper's pace decides, and no longer than that", async () => {
+    const token = await signSessionToken(claims, now)
+    await expect(verifySessionToken(token, claims.origin, later(4_000), 3_600)).resolves.toMatchObject(claims)
+    await expect(verifySessionToken(token, claims.origin, later(4_300), 3_600)).rejects.toMatchObject(refused)
   })
 
   it("is refused from another origin", async () => {

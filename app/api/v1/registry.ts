@@ -11,6 +11,8 @@ import { importCatalog } from "./catalog/imports/operation"
 import { changeCatalogItem, deleteCatalogItem, readCatalogItem } from "./catalog/items/[item_id]/operation"
 import { createCatalogItem, listCatalogItems } from "./catalog/items/operation"
 import { matchCatalogItems } from "./catalog/match/operation"
+import { eraseShopperEnquiry, readShopperEnquiry } from "./enquiries/[enquiry_id]/operation"
+import { listShopperEnquiries } from "./enquiries/operation"
 import { flowClogging } from "./flow/clogging/operation"
 import { flowOperatingPoint } from "./flow/operating-point/operation"
 import { flowReactor } from "./flow/reactor/operation"
@@ -22,6 +24,7 @@ import { gasLeadTime } from "./gas/lead-time/operation"
 import { gasRoomSafety } from "./gas/room-safety/operation"
 import { gasWorkingPressure } from "./gas/working-pressure/operation"
 import { health } from "./health/operation"
+import { tankInsightsOperation } from "./insights/tanks/operation"
 import { openapi } from "./openapi.json/operation"
 import { plan } from "./plan/operation"
 import { usage } from "./usage/operation"
@@ -33,6 +36,9 @@ import { readWebhookSecret } from "./webhooks/[endpoint_id]/secret/operation"
 import { rotateWebhookSecret } from "./webhooks/[endpoint_id]/secret/rotate/operation"
 import { testWebhook } from "./webhooks/[endpoint_id]/test/operation"
 import { createWebhook, listWebhooks } from "./webhooks/operation"
+import { readWidgetConsent } from "./widgets/[widget_id]/consent/operation"
+import { sendWidgetEnquiry } from "./widgets/[widget_id]/enquiries/operation"
+import { recordWidgetEvent } from "./widgets/[widget_id]/events/operation"
 import { openWidgetSession } from "./widgets/[widget_id]/sessions/operation"
 import { readWidgetSettings } from "./widgets/[widget_id]/settings/operation"
 
@@ -78,6 +84,13 @@ export const registry: readonly AnyOperation[] = [
   replayWebhookDelivery,
   openWidgetSession,
   readWidgetSettings,
+  readWidgetConsent,
+  sendWidgetEnquiry,
+  recordWidgetEvent,
+  listShopperEnquiries,
+  readShopperEnquiry,
+  eraseShopperEnquiry,
+  tankInsightsOperation,
   health,
   openapi,
 ]

@@ -1,4 +1,6 @@
 import { alreadySignedUp } from "./already-signed-up"
+import { enquiryCopy } from "./enquiry-copy"
+import { enquiryReceived } from "./enquiry-received"
 import { invitation } from "./invitation"
 import { keyExpiring } from "./key-expiring"
 import { keyRevoked } from "./key-revoked"
@@ -23,6 +25,8 @@ export const letters = {
   usage_threshold: usageThreshold,
   payment_failed: paymentFailed,
   webhook_disabled: webhookDisabled,
+  enquiry_received: enquiryReceived,
+  enquiry_copy: enquiryCopy,
 } as const
 
 export type LetterName = keyof typeof letters

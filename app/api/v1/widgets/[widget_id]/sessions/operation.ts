@@ -11,9 +11,12 @@ export const openWidgetSession = defineOperation({
   summary: "Open a widget's session",
   description:
     "The widget calls this when a shopper first changes something, from a page of one of its origins. One session " +
-    "covers all that the shopper calculates on that page view. The token is kept in memory only.",
+    "covers all that the shopper calculates on that page view. The token is kept in memory only. At most ten in a " +
+    "minute from one address.",
   access: { kind: "widget" },
   units: 2,
+  // @source PLATFORM 4.13
+  perAddress: { points: 10, window_s: 60 },
   request: z.strictObject({ widget_id: widgetId }),
   response: z.object({
     token: z.string().meta({ description: "Signed token (JWT, Ed25519) of this session" }),
@@ -33,6 +36,8 @@ export const openWidgetSession = defineOperation({
         temperature_unit: "c",
         start: { ph: 6.8, kh_dkh: 4, temperature_c: 25 },
         link: { label: "Ask at the counter", url: "https://fernhollow.example/advice" },
+        enquiries: { privacy_url: "https://fernhollow.example/privacy" },
+        statistics: true,
       },
       credit_line: false,
     },

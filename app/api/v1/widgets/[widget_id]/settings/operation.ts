@@ -26,6 +26,8 @@ export const readWidgetSettings = defineOperation({
         temperature_unit: "c",
         start: { ph: 6.8, kh_dkh: 4, temperature_c: 25 },
         link: null,
+        enquiries: null,
+        statistics: true,
       },
       credit_line: false,
     },

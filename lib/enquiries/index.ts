@@ -1,0 +1,8 @@
+export type { Consent } from "./consent"
+export { type EnquiryCopy, SEND_ENQUIRY_COPY, sendEnquiryCopy } from "./copy"
+export type { Enquiry } from "./enquiry"
+export { eraseEnquiry } from "./erase"
+export { exportEnquiries } from "./export"
+export { type EnquiryQuery, listEnquiries, showEnquiry } from "./find"
+export { consentFor, type NewEnquiry, type SentEnquiry, sendEnquiry } from "./send"
+export { showWithdrawal, type Withdrawal, withdraw, withdrawalToken } from "./withdraw"
