@@ -1,5 +1,5 @@
 import { describe, expect, it } from "vitest"
-import { type Mail, renderMail } from "@/lib/mail"
+import { languages, type Mail, renderMail } from "@/lib/mail"
 
 const url = "http://127.0.0.1:3000/verify?token=abc&from=mail"
 
@@ -44,6 +44,25 @@ const mails: Mail[] = [
     data: { account_name: "<b>Shop</b>", url: "https://shop.test/hooks?<b>", webhooks_url: url },
   },
   {
+    template: "enquiry_received",
+    to: "a@shop.test",
+    data: { account_name: "<b>Shop</b>", widget_name: "<b>w</b>", enquiry_url: url },
+  },
+  ...languages.map(
+    (language): Mail => ({
+      template: "enquiry_copy",
+      to: "a@shopper.test",
+      data: {
+        language,
+        shop_name: "<b>Shop</b>",
+        name: "<b>Ebba</b>",
+        message: "<b>Two</b>\nlines",
+        tank: { volume_l: 180, ph: 6.8, kh_dkh: 4, temperature_c: 25 },
+        withdraw_url: url,
+      },
+    }),
+  ),
+  {
     template: "usage_threshold",
     to: "a@shop.test",
     data: {
@@ -71,7 +90,7 @@ describe.each(mails)("the letter $template", (mail) => {
   })
 
   it("says in the foot why it came", () => {
-    expect(text).toMatch(/\n--\nTarnwright\. .+\.\n$/)
+    expect(text).toMatch(/\n--\nTarnwright\. .+[.。]\n$/)
     expect(subject).not.toBe("")
   })
 })
