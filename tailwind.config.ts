@@ -31,7 +31,7 @@ export default {
     },
     borderRadius: { none: "0", DEFAULT: "2px", full: "9999px" },
     extend: {
-      maxWidth: { measure: "42rem", page: "90rem" },
+      maxWidth: { measure: "42rem", page: "90rem", wide: "105rem" },
     },
   },
 } satisfies Config

@@ -18,6 +18,10 @@ export const menu: readonly { readonly group: string; readonly items: readonly M
     ],
   },
   {
+    group: "Shop",
+    items: [{ path: "/bench", label: "Bench", right: "bench.use" }],
+  },
+  {
     group: "Account",
     items: [
       { path: "/team", label: "Team", right: "team.read" },
