@@ -1,6 +1,8 @@
 import { useId, useMemo } from "react"
 import type { Co2Level } from "@/lib/chemistry/level"
+import type { Reading } from "@/lib/units/format"
 import { areas, doubtOf, lineOf, type Place, placeOnMap } from "@/widgets/co2-level/map-geometry"
+import { shownIn, symbolIn } from "./plots/shown"
 
 const box = { left: 48, top: 30, width: 470, height: 300 }
 const size = { width: 530, height: 376 }
@@ -15,13 +17,26 @@ const fills: Record<Co2Level, string> = {
   dangerous: "var(--level-dangerous)",
 }
 
+/** A set-point: where a controller is to hold a water, where its meter may stand there, and the CO2 that it is for. */
+export interface Aim {
+  readonly ph: number
+  readonly ph_low: number
+  readonly ph_high: number
+  readonly kh_dkh: number
+  readonly co2_mg_l: number
+}
+
 /** Where a water lies among all waters of its temperature, with the waters that its readings may as well stand for. */
 export function Co2Field({
   water,
   errors,
+  aim,
+  reading = { locale: "en", system: "metric" },
 }: {
   water: { readonly ph: number; readonly kh_dkh: number; readonly temperature_c: number }
   errors: { readonly ph_error: number; readonly kh_error_dkh: number }
+  aim?: Aim
+  reading?: Reading
 }) {
   const clip = useId()
   const { temperature_c } = water
@@ -65,6 +80,7 @@ export function Co2Field({
           strokeDasharray="3 2"
         />
       </g>
+      {aim && <AimMark aim={aim} temperature_c={temperature_c} clip={clip} />}
       <path
         d={`M${point.x - 9} ${point.y}h18M${point.x} ${point.y - 9}v18`}
         stroke="var(--ink)"
@@ -108,13 +124,27 @@ export function Co2Field({
           textAnchor="end"
           className="fill-soft"
         >
-          {kh_dkh}
+          {Number(shownIn(kh_dkh, "dKH", reading).toPrecision(2))}
         </text>
       ))}
       <text x={0} y={box.top - 8} className="fill-ink">
-        KH, dKH
+        KH, {symbolIn("dKH", reading)}
       </text>
     </svg>
+  )
+}
+
+/** The line of the CO2 that is aimed at, and the set-point on it with the span in which a meter may stand. */
+function AimMark({ aim, temperature_c, clip }: { aim: Aim; temperature_c: number; clip: string }) {
+  const [low, at, high] = [aim.ph_low, aim.ph, aim.ph_high].map((ph) =>
+    onPaper(placeOnMap({ ph, kh_dkh: aim.kh_dkh })),
+  ) as [Place, Place, Place]
+  return (
+    <g clipPath={`url(#${clip})`} fill="none" stroke="var(--action)" strokeWidth={2}>
+      <path d={open(lineOf(aim.co2_mg_l, temperature_c))} />
+      <path d={`M${low.x} ${low.y - 6}v12M${low.x} ${low.y}H${high.x}M${high.x} ${high.y - 6}v12`} />
+      <circle cx={at.x} cy={at.y} r={5} fill="var(--paper)" />
+    </g>
   )
 }
 

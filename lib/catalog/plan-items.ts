@@ -3,7 +3,8 @@ import type { CatalogItem } from "@/lib/plan/match"
 import { listItems } from "./find"
 import type { Item } from "./item"
 
-const mostItems = 5_000
+/** More parts than any shop matches at once. */
+export const mostItems = 5_000
 
 /** The account's filters, reactors, cylinders and diffusers, as the plan matches them. */
 export async function planItems({ ctx }: { ctx: Ctx }): Promise<CatalogItem[]> {
@@ -11,7 +12,8 @@ export async function planItems({ ctx }: { ctx: Ctx }): Promise<CatalogItem[]> {
   return items.flatMap((item) => planItem(item) ?? [])
 }
 
-function planItem({ id, name, kind, price_minor, attributes }: Item): CatalogItem | undefined {
+/** The item as the plan knows it; undefined for a kind that is not matched. */
+export function planItem({ id, name, kind, price_minor, attributes }: Item): CatalogItem | undefined {
   const number = (attribute: string) => attributes[attribute] as number | undefined
   switch (kind) {
     case "filter": {

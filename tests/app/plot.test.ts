@@ -1,6 +1,6 @@
 import fc from "fast-check"
 import { describe, expect, it } from "vitest"
-import { linear, ticksTo } from "@/app/ui/plot"
+import { linear, ticksTo, ticksWithin } from "@/app/ui/plot"
 
 describe("an axis", () => {
   it.each([
@@ -21,6 +21,14 @@ describe("an axis", () => {
         expect(ticks.every((tick) => Number.isInteger(tick))).toBe(true)
       }),
     )
+  })
+
+  it.each([
+    [0, 1.6, [0, 0.5, 1, 1.5]],
+    [6.4, 7.6, [6.5, 7, 7.5]],
+    [0, 34.5, [0, 10, 20, 30]],
+  ])("from %d to %d has the marks %j between its ends", (from, to, ticks) => {
+    expect(ticksWithin(from, to, 4)).toEqual(ticks)
   })
 
   it("maps its ends to the ends", () => {

@@ -1,0 +1,60 @@
+"use client"
+
+import { useState } from "react"
+import { Button } from "@/app/ui/button"
+import { Dialog } from "@/app/ui/dialog"
+import { PageHead } from "@/app/ui/sheet"
+import { SaveReport } from "./save-report"
+import type { Worked } from "./work-out"
+
+/** The head of the Bench: what is done with the plan as a whole. */
+export function BenchHead({
+  account,
+  worked,
+  maySave,
+  onNew,
+}: {
+  account: string
+  /** Absent while something has to be mended: a sheet in doubt is not handed over. */
+  worked: Worked | undefined
+  maySave: boolean
+  onNew: () => void
+}) {
+  const [asks, setAsks] = useState(false)
+  return (
+    <>
+      <PageHead
+        title="Bench"
+        lead="The whole plan for the customer in front of you, worked out here as you type. Nothing is billed until you save it."
+        actions={
+          <>
+            <Button onClick={() => setAsks(true)}>New customer</Button>
+            <Button disabled={!worked} onClick={() => window.print()}>
+              Print
+            </Button>
+            {maySave && <SaveReport account={account} worked={worked} />}
+          </>
+        }
+      />
+      <Dialog
+        open={asks}
+        onClose={() => setAsks(false)}
+        title="Begin with a new customer?"
+        lead="All that is typed here is cleared. Reports that were saved stay."
+      >
+        <div className="flex flex-wrap gap-3">
+          <Button
+            look="primary"
+            onClick={() => {
+              onNew()
+              setAsks(false)
+            }}
+          >
+            Clear the bench
+          </Button>
+          <Button onClick={() => setAsks(false)}>Keep this tank</Button>
+        </div>
+      </Dialog>
+    </>
+  )
+}
