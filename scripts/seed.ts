@@ -12,6 +12,7 @@ import { newId } from "@/lib/id"
 import { createKey } from "@/lib/keys"
 import { createWidget, listWidgets } from "@/lib/widgets"
 import { writeHistory } from "./seed/history"
+import { writeEnquiries, writeTanks } from "./seed/shoppers"
 import { accounts, admin } from "./seed/world"
 import type { Demo } from "./stack/stack"
 
@@ -58,6 +59,16 @@ async function load(): Promise<void> {
     ],
     now,
   )
+  const shop = {
+    account_id: fernhollow.account_id,
+    name: "Fernhollow Aquatics",
+    widget_id: widgetId,
+    origin: shopOrigin,
+  }
+  await asWorker(async (trx) => {
+    await writeTanks(trx, shop, now)
+    await writeEnquiries(trx, shop, now)
+  })
   const demo: Demo = {
     password,
     people: [
@@ -143,6 +154,7 @@ async function makeWidget(ctx: Ctx): Promise<string> {
     calculator: "co2-level",
     name: "CO2 level on product pages",
     origins: [shopOrigin],
+    settings: { enquiries: { privacy_url: `${shopOrigin}/privacy` } },
   } as const
   return (await createWidget({ ctx, input })).id
 }
@@ -157,6 +169,11 @@ async function moveShop(demo: Demo): Promise<void> {
         .where(sql<boolean>`${demo.shopOrigin} = any(origins)`)
         .execute()
     }
+    await trx
+      .updateTable("widget")
+      .set({ settings: sql<string>`replace(settings::text, ${demo.shopOrigin}, ${shopOrigin})::jsonb` })
+      .where("id", "=", demo.widgetId)
+      .execute()
   })
   writeFileSync(file, `${JSON.stringify({ ...demo, shopOrigin }, null, 2)}\n`, { mode: 0o600 })
 }

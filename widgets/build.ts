@@ -38,17 +38,9 @@ interface Built {
 
 const parts: Built[] = [pinned("frame", await bundle("widgets/frame.ts"))]
 const catalogues: Built[] = []
-for (const calculator of calculators) {
-  const own: Record<string, Address> = {}
-  for (const language of languages) {
-    const code = await bundle(`widgets/${calculator}/messages/${language}.ts`)
-    const catalogue = pinned(`${calculator}.${language}`, code)
-    own[language] = addressOf(catalogue)
-    catalogues.push(catalogue)
-  }
-  const define = { CATALOGUES: JSON.stringify(own) }
-  parts.push(pinned(calculator, await bundle(`widgets/${calculator}/index.ts`, { define })))
-}
+const ask = await withCatalogues("ask", {})
+for (const calculator of calculators)
+  await withCatalogues(calculator, { ASK: JSON.stringify(addressOf(ask)) })
 const addresses = Object.fromEntries(parts.map((part) => [part.name, addressOf(part)]))
 const loader = await bundle("widgets/loader.ts", { define: { PARTS: JSON.stringify(addresses) } })
 const builtLoader = pinned("loader", loader)
@@ -95,6 +87,20 @@ async function bundle(entry: string, options: BuildOptions = {}): Promise<string
     ...options,
   })
   return outputFiles![0]!.text
+}
+
+/** Builds a part and its catalogues, which it loads by the addresses that are put into it. */
+async function withCatalogues(name: string, define: Record<string, string>): Promise<Built> {
+  const own: Record<string, Address> = {}
+  for (const language of languages) {
+    const catalogue = pinned(`${name}.${language}`, await bundle(`widgets/${name}/messages/${language}.ts`))
+    own[language] = addressOf(catalogue)
+    catalogues.push(catalogue)
+  }
+  const code = await bundle(`./widgets/${name}`, { define: { ...define, CATALOGUES: JSON.stringify(own) } })
+  const part = pinned(name, code)
+  parts.push(part)
+  return part
 }
 
 function addressOf({ path, integrity }: Built): Address {

@@ -38,7 +38,7 @@ export const themeProperties: readonly ThemeProperty[] = [
 
 /** Names that a page may style through `tarnwright-widget::part(…)`. Part of the widgets' contract. */
 export const parts = [
-  ...["widget", "header", "title", "notice", "button", "footer", "link"],
+  ...["widget", "header", "title", "notice", "button", "footer", "link", "ask"],
   ...["inputs", "field", "label", "slider", "number", "unit", "problem", "measured"],
   ...["outcome", "figure", "level", "ruler", "sentence", "set-point", "cautions", "caution", "map", "method"],
 ] as const

@@ -7,6 +7,27 @@ interface ProductPage {
   readonly embedding: Embedding
 }
 
+/** How the shop treats personal data: where a widget that takes questions leads to. */
+export function privacyPage(): string {
+  return `<!doctype html>
+<html lang="en">
+<head>
+<meta charset="utf-8">
+<meta name="viewport" content="width=device-width, initial-scale=1">
+<title>Privacy – Fernhollow Aquatics</title>
+<link rel="stylesheet" href="/shop.css">
+</head>
+<body>
+<header class="bar"><a class="brand" href="/">Fernhollow <span>Aquatics</span></a></header>
+<main>
+  <h1>How we treat your data</h1>
+  <p>When you ask us something through the calculator, we keep your address, your question and your tank's figures to answer you, for 180 days at most. We pass them to nobody. The link in your copy erases them at once.</p>
+</main>
+</body>
+</html>
+`
+}
+
 /** The product page of a reactor. Its height for the widget stands in shop.css, since the policy takes no styles here. */
 export function productPage({ appUrl, widgetId, embedding }: ProductPage): string {
   return `<!doctype html>

@@ -2,13 +2,14 @@
  * A page of Fernhollow Aquatics, an invented shop, on an origin of its own: what a retailer has to do to put a
  * Tarnwright widget on a product page, under a content security policy as strict as a shop's can be.
  *
- * Pages: `/` with the element, `/framed` with the element in its own frame, `/plain-frame` with a bare iframe.
+ * Pages: `/` with the element, `/framed` with the element in its own frame, `/plain-frame` with a bare iframe,
+ * `/privacy` with what the shop says of personal data.
  * Environment: `PORT`, `APP_URL` (where Tarnwright is), `WIDGET_ID`.
  */
 import { readFileSync } from "node:fs"
 import { createServer } from "node:http"
 import path from "node:path"
-import { type Embedding, productPage } from "./page"
+import { type Embedding, privacyPage, productPage } from "./page"
 
 const appUrl = setting("APP_URL")
 const widgetId = setting("WIDGET_ID")
@@ -39,6 +40,12 @@ const server = createServer((request, response) => {
       "content-security-policy": [...policy, "base-uri 'none'", "form-action 'none'"].join("; "),
     })
     response.end(productPage({ appUrl, widgetId, embedding }))
+  } else if (pathname === "/privacy") {
+    response.writeHead(200, {
+      "content-type": "text/html; charset=utf-8",
+      "content-security-policy": "default-src 'none'; style-src 'self'; base-uri 'none'; form-action 'none'",
+    })
+    response.end(privacyPage())
   } else if (fileType) {
     response.writeHead(200, { "content-type": fileType })
     response.end(readFileSync(path.join(import.meta.dirname, pathname)))

@@ -109,7 +109,7 @@ function sumOfShares(count: number): number {
 }
 
 /** Numbers from 0 to 1 that are the same in each run: a linear congruential generator (Numerical Recipes, ch. 7). */
-function randomFrom(seed: number): () => number {
+export function randomFrom(seed: number): () => number {
   let state = seed
   return () => {
     state = (Math.imul(state, 1_664_525) + 1_013_904_223) >>> 0

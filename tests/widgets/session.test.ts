@@ -48,6 +48,26 @@ function states(session: Session, open = session.begin): Promise<SessionState[]>
 }
 
 describe("a widget's session", () => {
+  it("hands its token to whoever waits for it, and opens once for all of them", async () => {
+    const opened = (_: IncomingMessage, response: ServerResponse) => response.end('{"token":"t1"}')
+    const session = createSession(await answering(opened))
+    expect(session.token).toBeNull()
+    expect(await Promise.all([session.opened(), session.opened()])).toEqual(["t1", "t1"])
+    session.begin()
+    expect(await session.opened()).toBe("t1")
+    expect(asked).toHaveLength(1)
+  })
+
+  it("has no token where it is closed, and tries anew where it rested", async () => {
+    expect(await createSession(await answering(status(403))).opened()).toBeNull()
+    asked.length = 0
+    const opened = (_: IncomingMessage, response: ServerResponse) => response.end('{"token":"t2"}')
+    const session = createSession(await answering(status(500), opened))
+    expect(await session.opened()).toBeNull()
+    expect(session.state).toBe("resting")
+    expect(await session.opened()).toBe("t2")
+  })
+
   it("asks for nothing until it is opened, and once however often it is", async () => {
     const session = createSession(await answering(status(200)))
     expect(asked).toHaveLength(0)

@@ -7,6 +7,7 @@ import { MethodView } from "@/widgets/shared/method"
 import type { CalculatorProps } from "@/widgets/shared/mount"
 import { useSettled } from "@/widgets/shared/settled"
 import { isCurrent } from "@/widgets/shared/sheet"
+import { useTank } from "@/widgets/shared/visit"
 import { waterFields } from "@/widgets/shared/water-fields"
 import type { Co2LevelMessages } from "./messages/co2-level-messages"
 import { Ruler } from "./ruler"
@@ -40,6 +41,8 @@ export function Co2Level({ shown, session, locale, messages }: CalculatorProps<C
   useEffect(() => {
     tell({ type: "paused", isPaused: sessionState === "resting" || sessionState === "closed" })
   }, [sessionState])
+
+  useTank({ ...state.asked.values, level: state.answer.result.level })
 
   function change(event: Event): void {
     session.begin()

@@ -1,4 +1,5 @@
 import { type ReactNode, useId, useSyncExternalStore } from "react"
+import { AskButton } from "./ask-button"
 import type { Locale } from "./locale"
 import type { SharedMessages } from "./messages/shared-messages"
 import type { Session, SessionState } from "./session"
@@ -45,6 +46,7 @@ export function Frame({ title, locale, messages, shown, session, children }: Fra
         </div>
       )}
       {children}
+      <AskButton messages={messages} />
       {(link || shown.credit_line) && (
         <footer className="footer" part="footer">
           {link && (

@@ -8,10 +8,14 @@ export type SessionState = "unopened" | "opening" | "open" | "resting" | "closed
 
 export interface Session {
   readonly state: SessionState
+  /** Proof to the service that it was opened; null until then. Kept here and nowhere else. */
+  readonly token: string | null
   /** Opens the session when the shopper first changes something; does nothing from then on. */
   begin(): void
   /** Tries a resting session again. */
   retry(): void
+  /** The token, once an opening that this begins or waits for has brought one; null where it cannot be had. */
+  opened(): Promise<string | null>
   /** Calls back on each change of state; returns how to stop. */
   subscribe(onChange: () => void): () => void
 }
@@ -33,24 +37,45 @@ export function sessionOf(widgetUrl: string): Session {
 export function createSession(widgetUrl: string): Session {
   const listeners = new Set<() => void>()
   let state: SessionState = "unopened"
+  let token: string | null = null
 
   function become(next: SessionState): void {
     state = next
     for (const listener of listeners) listener()
   }
 
+  function nextChange(): Promise<void> {
+    return new Promise((changed) => {
+      const heard = () => {
+        listeners.delete(heard)
+        changed()
+      }
+      listeners.add(heard)
+    })
+  }
+
   async function openFrom(expected: SessionState): Promise<void> {
     if (state !== expected) return
     become("opening")
-    become(await outcomeOf(`${widgetUrl}/sessions`))
+    const outcome = await outcomeOf(`${widgetUrl}/sessions`)
+    token = outcome.token
+    become(outcome.state)
   }
 
   return {
     get state() {
       return state
     },
+    get token() {
+      return token
+    },
     begin: () => void openFrom("unopened"),
     retry: () => void openFrom("resting"),
+    async opened() {
+      await openFrom(state === "resting" ? "resting" : "unopened")
+      while (state === "opening") await nextChange()
+      return token
+    },
     subscribe(onChange) {
       listeners.add(onChange)
       return () => listeners.delete(onChange)
@@ -58,13 +83,13 @@ export function createSession(widgetUrl: string): Session {
   }
 }
 
-async function outcomeOf(url: string): Promise<SessionState> {
+async function outcomeOf(url: string): Promise<{ state: SessionState; token: string | null }> {
   const headers = { "content-type": "application/json" }
   try {
     const answer = await call(url, { method: "POST", headers, body: "{}" })
-    if (answer.ok) return "open"
-    return answer.status >= 500 || answer.status === 429 ? "resting" : "closed"
+    if (answer.ok) return { state: "open", token: (await answer.json()).token ?? null }
+    return { state: answer.status >= 500 || answer.status === 429 ? "resting" : "closed", token: null }
   } catch {
-    return "resting"
+    return { state: "resting", token: null }
   }
 }

@@ -7,6 +7,10 @@ export interface ShownWidget {
     readonly kh_unit?: string
     readonly temperature_unit?: string
     readonly start?: Readonly<Record<string, number>>
+    /** The page that says how the shop treats personal data; null: it takes no questions. */
+    readonly enquiries?: { readonly privacy_url: string } | null
+    /** Whether the widget may tell what tanks it was asked about. */
+    readonly statistics?: boolean
     readonly link?: { readonly label: string; readonly url: string } | null
   }
   readonly credit_line?: boolean

@@ -17,5 +17,7 @@ export const shared: SharedMessages = {
   methodTitle: "So wird gerechnet",
   sourcesTitle: "Quellen",
   engine: (version) => `Rechenkern ${version}`,
+  ask: "Den Laden fragen",
+  askFailed: "Das Formular ließ sich nicht laden. Versuchen Sie es gleich noch einmal.",
   credit: "Berechnet mit Tarnwright",
 }

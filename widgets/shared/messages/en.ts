@@ -17,5 +17,7 @@ export const shared: SharedMessages = {
   methodTitle: "How this is worked out",
   sourcesTitle: "Sources",
   engine: (version) => `Engine ${version}`,
+  ask: "Ask the shop",
+  askFailed: "The form could not be brought. Try again in a moment.",
   credit: "Calculated by Tarnwright",
 }

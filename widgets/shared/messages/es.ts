@@ -17,5 +17,7 @@ export const shared: SharedMessages = {
   methodTitle: "Cómo se calcula",
   sourcesTitle: "Fuentes",
   engine: (version) => `Motor ${version}`,
+  ask: "Preguntar a la tienda",
+  askFailed: "No se pudo cargar el formulario. Inténtelo de nuevo en un momento.",
   credit: "Calculado con Tarnwright",
 }

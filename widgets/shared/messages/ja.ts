@@ -17,5 +17,7 @@ export const shared: SharedMessages = {
   methodTitle: "計算の方法",
   sourcesTitle: "出典",
   engine: (version) => `エンジン ${version}`,
+  ask: "お店に質問する",
+  askFailed: "フォームを読み込めませんでした。少し待ってからもう一度お試しください。",
   credit: "計算：Tarnwright",
 }

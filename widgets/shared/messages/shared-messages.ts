@@ -14,5 +14,7 @@ export interface SharedMessages {
   readonly methodTitle: string
   readonly sourcesTitle: string
   readonly engine: (version: string) => string
+  readonly ask: string
+  readonly askFailed: string
   readonly credit: string
 }
