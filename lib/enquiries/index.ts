@@ -1,4 +1,4 @@
-export type { Consent } from "./consent"
+export { type Consent, consentOf } from "./consent"
 export { type EnquiryCopy, SEND_ENQUIRY_COPY, sendEnquiryCopy } from "./copy"
 export type { Enquiry } from "./enquiry"
 export { eraseEnquiry } from "./erase"
