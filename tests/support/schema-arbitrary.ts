@@ -30,6 +30,17 @@ export function fuzzed(schema: Schema): fc.Arbitrary<unknown> {
   return fc.oneof({ weight: 14, arbitrary: allowed(schema) }, { weight: 1, arbitrary: odd })
 }
 
+/** An input that works, with none or a few of its members drawn anew. */
+export function varied(works: object, given: Schema): fc.Arbitrary<object> {
+  const { properties = {} } = resolved(given)
+  const names = Object.keys(properties)
+  if (names.length === 0) return fc.constant(works)
+  const change = fc
+    .constantFrom(...names)
+    .chain((name) => fuzzed(properties[name] ?? {}).map((value) => [name, value] as const))
+  return fc.array(change, { maxLength: 3 }).map((changes) => ({ ...works, ...Object.fromEntries(changes) }))
+}
+
 function allowed(given: Schema): fc.Arbitrary<unknown> {
   const schema = resolved(given)
   const choices = schema.anyOf ?? schema.oneOf
