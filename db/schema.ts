@@ -8,6 +8,8 @@ export interface Schema {
   invitation: Invitation
   session: Session
   one_time_token: OneTimeToken
+  second_factor: SecondFactor
+  recovery_code: RecoveryCode
   sign_in_failure: SignInFailure
   api_key: ApiKey
   usage_event: UsageEvent
@@ -106,6 +108,23 @@ interface OneTimeToken {
   payload: ColumnType<Record<string, unknown>, string | undefined, string>
   created_at: CreatedAt
   expires_at: Date
+  used_at: Date | null
+}
+
+interface SecondFactor {
+  user_id: string
+  /** Sealed; see lib/seal.ts. */
+  seed: Buffer
+  /** The time step of the newest code that was accepted: it and the ones before it are used up. */
+  last_step: Generated<number>
+  created_at: CreatedAt
+  /** Null until a first code has shown that the app holds the seed. */
+  confirmed_at: Date | null
+}
+
+interface RecoveryCode {
+  user_id: string
+  digest: Buffer
   used_at: Date | null
 }
 

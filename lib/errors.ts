@@ -2,6 +2,8 @@
 export type ErrorCode =
   | "malformed_json"
   | "session_missing"
+  | "second_factor_required"
+  | "step_up_required"
   | "key_missing"
   | "key_unknown"
   | "key_revoked"

@@ -1,13 +1,12 @@
-import { withoutTenant, withTenant } from "@/db"
-import { recordAct } from "@/lib/audit"
+import { withoutTenant } from "@/db"
 import { env } from "@/lib/env"
 import { TarnwrightError } from "@/lib/errors"
 import { enqueueMail } from "@/lib/mail"
-import { listMemberships } from "./memberships"
 import { consumeToken, mintToken, peekToken } from "./one-time-token"
 import { hashPassword } from "./password"
 import { passwordProblem } from "./password-policy"
 import { normaliseEmail, type Visit } from "./person"
+import { recordOfPerson } from "./record-of-person"
 import { endSessionsOf } from "./session"
 import { forgetFailures, mayWriteTo } from "./throttle"
 
@@ -83,21 +82,7 @@ export async function resetPassword({
     })
     return updated
   })
-  for (const { account, role } of await listMemberships({ user_id: person.id })) {
-    await withTenant(account.id, (trx) =>
-      recordAct(
-        trx,
-        {
-          account_id: account.id,
-          actor: { kind: "user", id: person.id, role },
-          ip: visitor.ip,
-          request_id: visitor.request_id,
-          now: visitor.now,
-        },
-        { action: "person.password_reset", target: person.id },
-      ),
-    )
-  }
+  await recordOfPerson(visitor, person.id, "person.password_reset")
 }
 
 function deadLink(): TarnwrightError {

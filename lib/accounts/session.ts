@@ -17,8 +17,16 @@ export interface OpenedSession {
   readonly person: Person
 }
 
-/** Opens a session under a new random id. */
-export async function openSession(trx: Trx, visitor: Visitor, person: Person): Promise<OpenedSession> {
+/**
+ * Opens a session under a new random id. Whoever has just shown a password or a code is fresh, and need not confirm
+ * for a while that it is them; a link alone does not show it.
+ */
+export async function openSession(
+  trx: Trx,
+  visitor: Visitor,
+  person: Person,
+  { fresh }: { fresh: boolean } = { fresh: true },
+): Promise<OpenedSession> {
   const token = randomBytes(32).toString("base64url")
   const hours = person.is_admin ? longestForAdmin_h : longest_h
   await trx
@@ -30,7 +38,7 @@ export async function openSession(trx: Trx, visitor: Visitor, person: Person): P
       created_at: visitor.now,
       last_seen_at: visitor.now,
       expires_at: new Date(visitor.now.getTime() + hours * 3_600_000),
-      stepped_up_at: null,
+      stepped_up_at: fresh ? visitor.now : null,
       ip: visitor.ip ?? null,
       user_agent: visitor.user_agent?.slice(0, 300) ?? null,
     })
@@ -41,6 +49,10 @@ export async function openSession(trx: Trx, visitor: Visitor, person: Person): P
 export interface ReadSession {
   readonly session_id: string
   readonly person: Person
+  /** When the person last showed a password or a code in this session. */
+  readonly stepped_up_at: Date | null
+  /** Whether the person has set a second factor up; then this session was opened with it. */
+  readonly second_factor: boolean
 }
 
 /** Whose session a cookie stands for; undefined when it was ended, is too old, or never was. */
@@ -50,9 +62,16 @@ export async function readSession(token: string | undefined, now: Date): Promise
     const found = await trx
       .selectFrom("session")
       .innerJoin("app_user", "app_user.id", "session.user_id")
+      .leftJoin("second_factor", (join) =>
+        join
+          .onRef("second_factor.user_id", "=", "session.user_id")
+          .on("second_factor.confirmed_at", "is not", null),
+      )
       .select([
         "session.id as session_id",
         "session.last_seen_at",
+        "session.stepped_up_at",
+        "second_factor.confirmed_at as second_factor_at",
         "app_user.id",
         "app_user.email",
         "app_user.name",
@@ -60,7 +79,7 @@ export async function readSession(token: string | undefined, now: Date): Promise
       ])
       .where("session.token_digest", "=", digestOf(token))
       .where("session.expires_at", ">", now)
-      .where("session.last_seen_at", ">", new Date(now.getTime() - idle_h * 3_600_000))
+      .where("session.last_seen_at", ">", idleSince(now))
       .executeTakeFirst()
     if (!found) return undefined
     if (now.getTime() - found.last_seen_at.getTime() > seenEvery_ms) {
@@ -70,9 +89,19 @@ export async function readSession(token: string | undefined, now: Date): Promise
         .where("token_digest", "=", digestOf(token))
         .execute()
     }
-    const { session_id, id, email, name, is_admin } = found
-    return { session_id, person: { id, email, name, is_admin } }
+    const { session_id, stepped_up_at, id, email, name, is_admin } = found
+    return {
+      session_id,
+      person: { id, email, name, is_admin },
+      stepped_up_at,
+      second_factor: found.second_factor_at !== null,
+    }
   })
+}
+
+/** Whatever was seen last before this is dead by idleness. */
+export function idleSince(now: Date): Date {
+  return new Date(now.getTime() - idle_h * 3_600_000)
 }
 
 /** Ends one session: its cookie is worth nothing from now on. */
@@ -82,9 +111,13 @@ export async function endSession(token: string): Promise<void> {
   )
 }
 
-/** Ends every session of a person. */
-export async function endSessionsOf(trx: Trx, user_id: string): Promise<void> {
-  await trx.deleteFrom("session").where("user_id", "=", user_id).execute()
+/** Ends every session of a person, but for the one in which they act, if they do. */
+export async function endSessionsOf(trx: Trx, user_id: string, but?: { session_id: string }): Promise<void> {
+  await trx
+    .deleteFrom("session")
+    .where("user_id", "=", user_id)
+    .where("id", "!=", but?.session_id ?? "")
+    .execute()
 }
 
 function digestOf(token: string): Buffer {

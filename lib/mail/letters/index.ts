@@ -8,6 +8,8 @@ import { membershipChanged } from "./membership-changed"
 import { passwordChanged } from "./password-changed"
 import { paymentFailed } from "./payment-failed"
 import { resetPassword } from "./reset-password"
+import { secondFactorChanged } from "./second-factor-changed"
+import { signInLink } from "./sign-in-link"
 import { usageThreshold } from "./usage-threshold"
 import { verifyEmail } from "./verify-email"
 import { webhookDisabled } from "./webhook-disabled"
@@ -18,6 +20,8 @@ export const letters = {
   already_signed_up: alreadySignedUp,
   reset_password: resetPassword,
   password_changed: passwordChanged,
+  second_factor_changed: secondFactorChanged,
+  sign_in_link: signInLink,
   invitation,
   membership_changed: membershipChanged,
   key_revoked: keyRevoked,

@@ -14,6 +14,14 @@ export const errorWords: Record<ErrorCode, { readonly why: string; readonly mend
     why: "A page of the portal asked for something, and nobody is signed in any more.",
     mend: "Sign in again. Your own code never meets this: it uses keys.",
   },
+  second_factor_required: {
+    why: "The password or the link is right, and this sign-in is protected by a second factor as well.",
+    mend: "Write the six digits that your authenticator app shows, or one of your recovery codes. Your own code never meets this: it uses keys.",
+  },
+  step_up_required: {
+    why: "What was asked for can do lasting harm, and nobody has confirmed in the last ten minutes that it is really them.",
+    mend: "Confirm with your password or a code in the dialog that the portal shows. Your own code never meets this: it uses keys.",
+  },
   key_missing: {
     why: "The call carries no key.",
     mend: "Add the header Authorization: Bearer followed by the key.",
