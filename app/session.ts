@@ -24,23 +24,30 @@ export const currentSession = cache(async (): Promise<ReadSession | undefined> =
   return readSession(cookie?.value, new Date())
 })
 
-/** The person who is signed in; whoever is not goes to the sign-in page and comes back here. */
-export async function signedIn(path: string): Promise<Person> {
+/** The session of who is signed in; whoever is not goes to the sign-in page and comes back here. */
+export async function openSelf(path: string): Promise<ReadSession> {
   const session = await currentSession()
   if (!session) redirect(`/signin?next=${encodeURIComponent(path)}`)
-  return session.person
+  return session
+}
+
+/** The person who is signed in; otherwise as {@link openSelf}. */
+export async function signedIn(path: string): Promise<Person> {
+  return (await openSelf(path)).person
 }
 
 /** What a page of an account works with. */
 export interface OpenAccount extends Membership {
   readonly person: Person
+  /** Whether the person has set a second factor up. */
+  readonly second_factor: boolean
   readonly actor: Actor
   readonly ctx: Ctx
 }
 
 /** A person's place in the account of an address. One who has none there sees what they would see if it did not exist. */
 export const openAccount = cache(async (slug: string): Promise<OpenAccount> => {
-  const person = await signedIn(`/portal/${slug}`)
+  const { person, second_factor } = await openSelf(`/portal/${slug}`)
   const membership = await findMembership({ user_id: person.id, slug })
   if (!membership) notFound()
   const actor: Actor = { kind: "user", id: person.id, role: membership.role }
@@ -48,6 +55,7 @@ export const openAccount = cache(async (slug: string): Promise<OpenAccount> => {
   return {
     ...membership,
     person,
+    second_factor,
     actor,
     ctx: { account_id: membership.account.id, actor, ip, now, request_id },
   }
@@ -63,10 +71,11 @@ export async function openAccountFor(
   return opened
 }
 
-/** The platform's admin; for anyone else the admin area does not exist. */
+/** The platform's admin, who sets a second factor up before anything else; for anyone else there is no such area. */
 export const openAdmin = cache(async (): Promise<{ person: Person; actor: Actor }> => {
-  const person = await signedIn("/admin")
+  const { person, second_factor } = await openSelf("/admin")
   if (!person.is_admin) notFound()
+  if (!second_factor) redirect("/person/second-factor?next=/admin")
   return { person, actor: { kind: "admin", id: person.id } }
 })
 

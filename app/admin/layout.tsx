@@ -5,6 +5,7 @@ import { openAdmin } from "@/app/session"
 import { themeOf } from "@/app/theme"
 import { Area } from "@/app/ui/area"
 import { PersonMenu } from "@/app/ui/person-menu"
+import { StepUp } from "@/app/ui/step-up"
 import { listMemberships } from "@/lib/accounts"
 
 export const metadata: Metadata = {
@@ -34,6 +35,7 @@ export default async function AdminLayout({ children }: { children: ReactNode })
       theme={themeOf(await cookies())}
     >
       {children}
+      <StepUp secondFactor />
     </Area>
   )
 }

@@ -9,12 +9,44 @@ export class ApiProblem extends Error {
   }
 }
 
+type Method = "GET" | "POST" | "PATCH" | "DELETE"
+
 /**
- * Asks one of our own routes.
+ * Asks one of our own routes. Where it first wants to know that it is still the same person, they are asked, and the
+ * request is made again.
  *
  * @throws ApiProblem when it refuses, cannot be reached, or answers with something else than JSON.
  */
-export async function ask<Answer>(method: "GET" | "POST" | "PATCH" | "DELETE", path: string, body?: unknown) {
+export async function ask<Answer>(method: Method, path: string, body?: unknown): Promise<Answer> {
+  try {
+    return await askOnce<Answer>(method, path, body)
+  } catch (error) {
+    const wantsToKnow = error instanceof ApiProblem && error.problem.code === "step_up_required"
+    if (!wantsToKnow || !(await confirmed())) throw error
+    return askOnce<Answer>(method, path, body)
+  }
+}
+
+let confirmIdentity: (() => Promise<boolean>) | undefined
+let confirming: Promise<boolean> | undefined
+
+/** Says who asks the person whether it is them; gives back how to end that. */
+export function onStepUp(confirm: () => Promise<boolean>): () => void {
+  confirmIdentity = confirm
+  return () => {
+    if (confirmIdentity === confirm) confirmIdentity = undefined
+  }
+}
+
+/** Requests that are refused together ask once. */
+async function confirmed(): Promise<boolean> {
+  confirming ??= confirmIdentity?.().finally(() => {
+    confirming = undefined
+  })
+  return (await confirming) ?? false
+}
+
+async function askOnce<Answer>(method: Method, path: string, body?: unknown): Promise<Answer> {
   const response = await fetch(path, {
     method,
     headers: body === undefined ? undefined : { "content-type": "application/json" },

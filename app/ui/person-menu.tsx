@@ -36,6 +36,11 @@ export function PersonMenu({
         >
           <DropdownMenu.Label className="truncate px-4 py-1.5 text-soft">{email}</DropdownMenu.Label>
           <DropdownMenu.Separator className="my-2 border-t border-line" />
+          <DropdownMenu.Item asChild>
+            <Link href="/person" className={item}>
+              Your sign-in
+            </Link>
+          </DropdownMenu.Item>
           {links.map(({ href, label }) => (
             <DropdownMenu.Item key={href} asChild>
               <Link href={href} className={item}>
@@ -43,7 +48,7 @@ export function PersonMenu({
               </Link>
             </DropdownMenu.Item>
           ))}
-          {links.length > 0 && <DropdownMenu.Separator className="my-2 border-t border-line" />}
+          <DropdownMenu.Separator className="my-2 border-t border-line" />
           <DropdownMenu.Item onSelect={leave} className={`${item} cursor-pointer`}>
             Sign out
           </DropdownMenu.Item>

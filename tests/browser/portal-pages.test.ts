@@ -14,6 +14,9 @@ const site = [
   "/status",
   "/changelog",
   "/signin",
+  "/signin/link",
+  "/signin/link/open",
+  "/invite/none",
   "/signup",
   "/verify",
   "/reset",
@@ -24,7 +27,7 @@ const account = ["", "/keys", "/explorer", "/usage", "/team", "/billing", "/sett
 )
 const areas = [
   { who: undefined, pages: site },
-  { who: "maren@fernhollow.test", pages: account },
+  { who: "maren@fernhollow.test", pages: [...account, "/person", "/person/second-factor"] },
   { who: "admin@tarnwright.test", pages: ["/admin", "/admin/keys"] },
 ]
 const screens = [

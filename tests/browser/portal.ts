@@ -1,7 +1,8 @@
 import axe from "axe-core"
 import type { BrowserContextOptions, Page } from "playwright-core"
 import { expect } from "vitest"
-import { stack } from "../support/stack"
+import { codeOf, nextCodeOf } from "../support/second-factor"
+import { stack, takeSettings } from "../support/stack"
 import { launched } from "./shop"
 
 export interface Visit {
@@ -28,7 +29,10 @@ export async function visit(path: string, options: BrowserContextOptions = {}): 
   return { page, complaints, close: () => context.close() }
 }
 
-/** Signs a person of the demo world in, and waits until where it leads is there. */
+/**
+ * Signs a person of the demo world in, and waits until where it leads is there. Who has a second factor shows a code
+ * of it; a platform admin without one sets it up first, as they must.
+ */
 export async function signInAs(
   email: string,
   path = "/portal",
@@ -36,8 +40,45 @@ export async function signInAs(
 ): Promise<Visit> {
   const visited = await visit(`/signin?next=${encodeURIComponent(path)}`, options)
   await submitSignIn(visited.page, email, stack().demo.password)
-  await visited.page.waitForURL((url) => !url.pathname.startsWith("/signin"))
+  await passSecondFactor(visited.page, email)
   return visited
+}
+
+async function passSecondFactor(page: Page, email: string): Promise<void> {
+  const inside = () => page.waitForURL((url) => !url.pathname.startsWith("/signin"))
+  const code = page.getByLabel("Code", { exact: true })
+  const asked = await Promise.race([inside().then(() => false), code.waitFor().then(() => true)])
+  if (asked) {
+    takeSettings()
+    await code.fill(await nextCodeOf(email))
+    await page.getByRole("button", { name: "Sign in" }).click()
+    await inside()
+  }
+  const { pathname, searchParams } = new URL(page.url())
+  const next = searchParams.get("next")
+  if (pathname === "/person/second-factor" && next) {
+    await enrol(page)
+    await page.waitForURL((url) => url.pathname === next)
+  }
+}
+
+/** What a page shows this once: a secret, or recovery codes. */
+export async function shownOnce(page: Page): Promise<string> {
+  return (await page.locator("pre").textContent()) ?? ""
+}
+
+/** Sets a second factor up on its page, and says what its secret and its recovery codes are. */
+export async function enrol(page: Page): Promise<{ secret: string; recoveryCodes: string[] }> {
+  await ready(page)
+  await page.getByRole("button", { name: "Set it up" }).click()
+  await page.getByRole("img", { name: /QR code/ }).waitFor()
+  const secret = (await shownOnce(page)).replace(/\s/g, "")
+  await page.getByLabel("Code", { exact: true }).fill(codeOf(secret))
+  await page.getByRole("button", { name: "Switch it on" }).click()
+  await page.getByRole("heading", { name: "Your recovery codes" }).waitFor()
+  const recoveryCodes = (await shownOnce(page)).split("\n")
+  await page.getByRole("button", { name: "I have stored them" }).click()
+  return { secret, recoveryCodes }
 }
 
 export async function submitSignIn(page: Page, email: string, password: string): Promise<void> {

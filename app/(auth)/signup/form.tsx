@@ -8,8 +8,8 @@ import { ask, showProblem } from "@/app/ui/api"
 import { Button } from "@/app/ui/button"
 import { Input } from "@/app/ui/field"
 import { Notice } from "@/app/ui/notice"
+import { PasswordInput } from "@/app/ui/password-input"
 import { LetterSent } from "../letter-sent"
-import { PasswordInput } from "../password-input"
 
 export function SignUpForm({ passwordMin }: { passwordMin: number }) {
   const [sentTo, setSentTo] = useState<string>()

@@ -9,6 +9,7 @@ import {
   readSession,
   SESSION_DAYS,
   signIn,
+  signInByLink,
   verifyEmail,
 } from "@/lib/accounts"
 import { env } from "@/lib/env"
@@ -39,10 +40,20 @@ export function authOptions(): NextAuthOptions {
       callbackUrl: cookie(cookieName("tarn-callback")),
     },
     providers: [
-      provider("password", { email: {}, password: {} }, (fields, headers) =>
+      provider("password", { email: {}, password: {}, code: {} }, (fields, headers) =>
         signIn({
           visitor: visitorOf((name) => headers?.[name]),
-          input: { email: fields?.email ?? "", password: fields?.password ?? "" },
+          input: {
+            email: fields?.email ?? "",
+            password: fields?.password ?? "",
+            code: fields?.code || undefined,
+          },
+        }),
+      ),
+      provider("link", { token: {}, code: {} }, (fields, headers) =>
+        signInByLink({
+          visitor: visitorOf((name) => headers?.[name]),
+          input: { token: fields?.token ?? "", code: fields?.code || undefined },
         }),
       ),
       provider("verify", { token: {} }, (fields, headers) =>
@@ -105,8 +116,10 @@ function provider(
         const opened = await open(fields as Fields, request.headers as Headers)
         return opened ? { id: opened.person.id, session_token: opened.token } : null
       } catch (error) {
-        // next-auth hands the message of an error on to the page.
-        if (error instanceof TarnwrightError) throw new Error(error.detail)
+        // next-auth hands the message of an error on to the page, which asks for the code of the second factor.
+        if (error instanceof TarnwrightError) {
+          throw new Error(error.code === "second_factor_required" ? error.code : error.detail)
+        }
         console.error("next-auth:", error)
         throw new Error("Something failed on our side.")
       }

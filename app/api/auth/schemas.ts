@@ -19,6 +19,26 @@ export const signUpInput = z.strictObject({
 
 export const signInInput = z.strictObject({ email, password: z.string().min(1, "Write your password.") })
 
+const code = z.string().trim().min(6, "Write the six digits, or a recovery code.").max(60)
+
+export const codeInput = z.strictObject({ code })
+
+export const stepUpInput = z.union([
+  z.strictObject({ password: z.string().min(1, "Write your password.").max(500) }),
+  codeInput,
+])
+
+export const personNameInput = z.strictObject({ name: line("your name") })
+
+export const passwordChangeInput = z.strictObject({
+  present: z.string().min(1, "Write your present password.").max(500),
+  password: z.string().min(1, "Choose a password.").max(500),
+})
+
+export const ofSession = z.strictObject({ ended_id: z.string() })
+
+export const signInLinkInput = z.strictObject({ email })
+
 export const resetRequestInput = z.strictObject({ email })
 
 export const ofLink = z.strictObject({ token: z.string().max(200) })

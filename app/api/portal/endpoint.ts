@@ -2,7 +2,16 @@ import { cookies } from "next/headers"
 import type { z } from "zod"
 import { sessionCookieName } from "@/app/session-cookie"
 import { visitorOf } from "@/app/visitor"
-import { authorize, findMembership, type Person, type Right, readSession, type Visitor } from "@/lib/accounts"
+import {
+  authorize,
+  findMembership,
+  type Person,
+  type ReadSession,
+  type Right,
+  readSession,
+  requireFresh,
+  type Visitor,
+} from "@/lib/accounts"
 import type { Ctx } from "@/lib/context"
 import { TarnwrightError } from "@/lib/errors"
 import { answer, inputOf, refuse, refuseOtherSites } from "./answer"
@@ -13,6 +22,8 @@ type Handler = (request: Request, context: { params: Promise<Params> }) => Promi
 interface Endpoint<Schema extends z.ZodType, Asked> {
   /** Path, query and body, in one strict object; the account of the path is not in it. */
   readonly input: Schema
+  /** Whether it takes a password or a code that was shown in the last ten minutes. */
+  readonly fresh?: boolean | ((input: z.output<Schema>) => boolean)
   run(asked: Asked & { readonly input: z.output<Schema> }): Promise<unknown>
 }
 
@@ -21,7 +32,8 @@ export function accountEndpoint<Schema extends z.ZodType>(
   endpoint: Endpoint<Schema, { readonly ctx: Ctx; readonly person: Person }> & { readonly right: Right },
 ): Handler {
   return handler(async (request, params, visitor) => {
-    const person = await personOf(visitor)
+    const session = await sessionOf(visitor)
+    const { person } = session
     const { account: slug = "", ...rest } = params
     const membership = await findMembership({ user_id: person.id, slug })
     if (!membership)
@@ -42,30 +54,44 @@ export function accountEndpoint<Schema extends z.ZodType>(
       request_id,
     }
     authorize(ctx.actor, endpoint.right)
-    return endpoint.run({ ctx, person, input: await inputOf(endpoint.input, request, rest) })
+    const input = await inputOf(endpoint.input, request, rest)
+    if (needsFresh(endpoint, input)) requireFresh(session, now)
+    return endpoint.run({ ctx, person, input })
   })
 }
 
 /** A route of whoever is signed in, about themselves and no account. */
 export function personEndpoint<Schema extends z.ZodType>(
-  endpoint: Endpoint<Schema, { readonly visitor: Visitor; readonly person: Person }>,
+  endpoint: Endpoint<
+    Schema,
+    { readonly visitor: Visitor; readonly person: Person; readonly session_id: string }
+  >,
 ): Handler {
   return handler(async (request, params, visitor) => {
-    const person = await personOf(visitor)
-    return endpoint.run({ visitor, person, input: await inputOf(endpoint.input, request, params) })
+    const session = await sessionOf(visitor)
+    const { person, session_id } = session
+    const input = await inputOf(endpoint.input, request, params)
+    if (needsFresh(endpoint, input)) requireFresh(session, visitor.now)
+    return endpoint.run({ visitor, person, session_id, input })
   })
 }
 
-/** A route of the admin area; for anyone but an admin it does not exist. */
+/** A route of the admin area; for anyone but an admin it does not exist, and without a second factor it is closed. */
 export function adminEndpoint<Schema extends z.ZodType>(
   endpoint: Endpoint<Schema, { readonly ctx: Omit<Ctx, "account_id"> }>,
 ): Handler {
   return handler(async (request, params, visitor) => {
-    const person = await personOf(visitor)
+    const session = await sessionOf(visitor)
+    const { person } = session
     if (!person.is_admin) throw new TarnwrightError("not_found", "There is nothing here.")
+    if (!session.second_factor) {
+      throw new TarnwrightError("forbidden", "Set up your second factor first: open the admin area.")
+    }
     const { ip, now, request_id } = visitor
     const ctx = { actor: { kind: "admin", id: person.id }, ip, now, request_id } as const
-    return endpoint.run({ ctx, input: await inputOf(endpoint.input, request, params) })
+    const input = await inputOf(endpoint.input, request, params)
+    if (needsFresh(endpoint, input)) requireFresh(session, now)
+    return endpoint.run({ ctx, input })
   })
 }
 
@@ -99,9 +125,16 @@ function handler(run: (request: Request, params: Params, visitor: Visitor) => Pr
   }
 }
 
-async function personOf(visitor: Visitor): Promise<Person> {
+function needsFresh<Schema extends z.ZodType>(
+  { fresh = false }: Pick<Endpoint<Schema, unknown>, "fresh">,
+  input: z.output<Schema>,
+): boolean {
+  return typeof fresh === "function" ? fresh(input) : fresh
+}
+
+async function sessionOf(visitor: Visitor): Promise<ReadSession> {
   const cookie = (await cookies()).get(sessionCookieName())
   const session = await readSession(cookie?.value, visitor.now)
   if (!session) throw new TarnwrightError("session_missing", "Your session has ended. Sign in again.")
-  return session.person
+  return session
 }

@@ -7,6 +7,7 @@ import { themeOf } from "@/app/theme"
 import { Area } from "@/app/ui/area"
 import { Notice } from "@/app/ui/notice"
 import { PersonMenu } from "@/app/ui/person-menu"
+import { StepUp } from "@/app/ui/step-up"
 import { can, listMemberships } from "@/lib/accounts"
 import { planOf } from "@/lib/billing/plans"
 import { menu } from "../menu"
@@ -17,7 +18,7 @@ export async function generateMetadata({ params }: OfAccount): Promise<Metadata>
 }
 
 export default async function AccountLayout({ params, children }: OfAccount & { children: ReactNode }) {
-  const { account, role, actor, person } = await openAccount((await params).account)
+  const { account, role, actor, person, second_factor } = await openAccount((await params).account)
   const base = `/portal/${account.slug}`
   const groups = menu
     .map(({ group, items }) => ({
@@ -52,6 +53,7 @@ export default async function AccountLayout({ params, children }: OfAccount & { 
         </div>
       )}
       {children}
+      <StepUp secondFactor={second_factor} />
     </Area>
   )
 }

@@ -7,7 +7,7 @@ import { invitedInput } from "@/app/api/auth/schemas"
 import { Button } from "@/app/ui/button"
 import { Input } from "@/app/ui/field"
 import { Notice } from "@/app/ui/notice"
-import { PasswordInput } from "../../password-input"
+import { PasswordInput } from "@/app/ui/password-input"
 
 export function SignUpForm({
   token,

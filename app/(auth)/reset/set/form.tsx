@@ -6,7 +6,7 @@ import { resetInput } from "@/app/api/auth/schemas"
 import { ask, showProblem } from "@/app/ui/api"
 import { Button } from "@/app/ui/button"
 import { Notice } from "@/app/ui/notice"
-import { PasswordInput } from "../../password-input"
+import { PasswordInput } from "@/app/ui/password-input"
 
 export function ResetForm({
   token,

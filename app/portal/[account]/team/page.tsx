@@ -10,7 +10,7 @@ import { Team } from "./team"
 export const metadata: Metadata = { title: "Team" }
 
 export default async function TeamPage({ params }: OfAccount) {
-  const { account, ctx, person } = await openAccountFor("team.read", params)
+  const { account, role, ctx, person, second_factor } = await openAccountFor("team.read", params)
   const manages = can(ctx.actor, "team.manage")
   const members = asJson(await listTeam({ ctx }))
   const invitations = manages ? asJson(await listInvitations({ ctx })) : undefined
@@ -23,6 +23,7 @@ export default async function TeamPage({ params }: OfAccount) {
       me={person.id}
       initial={members}
       initialInvitations={invitations}
+      offerSecondFactor={role === "owner" && !second_factor}
     />
   )
 }

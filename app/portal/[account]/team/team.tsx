@@ -1,11 +1,13 @@
 "use client"
 
 import { useQuery, useQueryClient } from "@tanstack/react-query"
+import Link from "next/link"
 import { useMemo, useState } from "react"
 import { ask, detailOf } from "@/app/ui/api"
 import { Button } from "@/app/ui/button"
 import { type Column, DataTable } from "@/app/ui/data-table"
 import type { Json } from "@/app/ui/json"
+import { Notice } from "@/app/ui/notice"
 import { PageHead } from "@/app/ui/sheet"
 import { Failed } from "@/app/ui/states"
 import { Day } from "@/app/ui/time"
@@ -28,12 +30,14 @@ export function Team({
   me,
   initial,
   initialInvitations,
+  offerSecondFactor,
 }: {
   account: string
   lead: string
   me: string
   initial: Json<Member>[]
   initialInvitations?: Json<Invitation>[]
+  offerSecondFactor: boolean
 }) {
   const path = `/api/portal/${account}/team`
   const manages = initialInvitations !== undefined
@@ -64,6 +68,16 @@ export function Team({
           )
         }
       />
+      {offerSecondFactor && (
+        <div className="mb-8">
+          <Notice title="Your password alone opens this account">
+            <Link className="link" href="/person/second-factor">
+              Set up a second factor
+            </Link>
+            , and nobody who learns it comes in.
+          </Notice>
+        </div>
+      )}
       {error && <Failed detail={detailOf(error)} onRetry={refetch} />}
       <DataTable
         caption="People of this account"
@@ -120,7 +134,7 @@ const columns: readonly Column<Row>[] = [
     cell: ({ role }) => (
       <>
         <span className="block first-letter:uppercase">{role}</span>
-        <span className="block text-soft">{does[role]}</span>
+        <span className="hidden text-soft sm:block">{does[role]}</span>
       </>
     ),
   },

@@ -4,4 +4,9 @@ import { invitationInput, nothing } from "../../../schemas"
 
 export const GET = accountEndpoint({ right: "team.manage", input: nothing, run: listInvitations })
 
-export const POST = accountEndpoint({ right: "team.manage", input: invitationInput, run: invite })
+export const POST = accountEndpoint({
+  right: "team.manage",
+  input: invitationInput,
+  fresh: true,
+  run: invite,
+})
