@@ -19,7 +19,11 @@ export const menu: readonly { readonly group: string; readonly items: readonly M
   },
   {
     group: "Shop",
-    items: [{ path: "/bench", label: "Bench", right: "bench.use" }],
+    items: [
+      { path: "/bench", label: "Bench", right: "bench.use" },
+      { path: "/enquiries", label: "Enquiries", right: "enquiry.read" },
+      { path: "/insights", label: "Insights", right: "insight.read" },
+    ],
   },
   {
     group: "Account",

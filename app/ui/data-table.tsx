@@ -15,9 +15,10 @@ import {
   useTable,
 } from "@tanstack/react-table"
 import { type ReactNode, useMemo } from "react"
+import { type CsvValue, csvOf } from "@/lib/csv"
 import { Button } from "./button"
 import { classNames } from "./class-names"
-import { type CsvValue, csvOf } from "@/lib/csv"
+import { download } from "./download"
 import { DownMark, UpMark } from "./marks"
 
 const features = tableFeatures({
@@ -44,7 +45,7 @@ export interface Column<Row> {
 
 const pageSize = 25
 
-/** A list that sorts, filters, pages and exports. `actions` stand at the end of each row. */
+/** A list that sorts, filters, pages and, with a `fileName`, exports. `actions` stand at the end of each row. */
 export function DataTable<Row extends { readonly id: string }>({
   caption,
   columns,
@@ -59,7 +60,7 @@ export function DataTable<Row extends { readonly id: string }>({
   columns: readonly Column<Row>[]
   rows: readonly Row[]
   actions?: (row: Row) => ReactNode
-  fileName: string
+  fileName?: string
   toolbar?: ReactNode
   empty: ReactNode
   sortedBy?: { id: string; desc: boolean }
@@ -88,19 +89,12 @@ export function DataTable<Row extends { readonly id: string }>({
   const pages = table.getPageCount()
   const page = table.state.pagination.pageIndex
 
-  function download() {
+  function save(fileName: string) {
     const sorted = table
       .getSortedRowModel()
       .rows.map(({ original }) => columns.map((column) => column.value(original)))
-    const text = csvOf(
-      columns.map(({ header }) => header),
-      sorted,
-    )
-    const link = document.createElement("a")
-    link.href = URL.createObjectURL(new Blob([text], { type: "text/csv;charset=utf-8" }))
-    link.download = `${fileName}.csv`
-    link.click()
-    URL.revokeObjectURL(link.href)
+    const header = columns.map(({ header }) => header)
+    download(`${fileName}.csv`, csvOf(header, sorted))
   }
 
   return (
@@ -122,9 +116,11 @@ export function DataTable<Row extends { readonly id: string }>({
           />
           {toolbar}
         </div>
-        <Button look="quiet" small onClick={download} disabled={matching === 0}>
-          Export CSV
-        </Button>
+        {fileName && (
+          <Button look="quiet" small onClick={() => save(fileName)} disabled={matching === 0}>
+            Export CSV
+          </Button>
+        )}
       </div>
       {/* biome-ignore lint/a11y/noNoninteractiveTabindex: a region that scrolls must be reachable by keyboard */}
       <section aria-label={caption} tabIndex={0} className="relative overflow-x-auto border-y border-line">

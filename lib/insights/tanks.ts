@@ -4,11 +4,8 @@ import { type Co2Level, co2Levels } from "@/lib/chemistry/level"
 import type { Call } from "@/lib/context"
 import { type Verdict, verdicts } from "@/lib/flow/reactor-criteria"
 import { type GasMethodName, gasMethods } from "@/lib/gas/methods"
+import { khEdges_dkh, volumeEdges_l } from "./edges"
 import { suppressed } from "./suppress"
-
-/** Lower ends of the buckets; the last one has no upper end. */
-export const volumeEdges_l = [0, 30, 60, 100, 150, 200, 300, 450, 700, 1000] as const
-export const khEdges_dkh = [0, 2, 4, 6, 8, 10, 12, 15, 20] as const
 
 const methodNames = Object.keys(gasMethods) as GasMethodName[]
 

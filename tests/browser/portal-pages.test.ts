@@ -22,9 +22,17 @@ const site = [
   "/reset",
   "/reset/set",
 ]
-const account = ["", "/keys", "/explorer", "/usage", "/team", "/billing", "/settings"].map(
-  (page) => `/portal/fernhollow${page}`,
-)
+const account = [
+  "",
+  "/keys",
+  "/explorer",
+  "/usage",
+  "/enquiries",
+  "/insights",
+  "/team",
+  "/billing",
+  "/settings",
+].map((page) => `/portal/fernhollow${page}`)
 const areas = [
   { who: undefined, pages: site },
   { who: "maren@fernhollow.test", pages: [...account, "/person", "/person/second-factor"] },

@@ -1,5 +1,6 @@
 import { type Browser, type BrowserContextOptions, chromium, type Locator, type Page } from "playwright-core"
 import { stack } from "../support/stack"
+import { ownWay } from "./own-address"
 
 let browser: Browser | undefined
 
@@ -37,7 +38,12 @@ interface Visit extends BrowserContextOptions {
 
 /** Opens the shop's product page as a shopper whose browser has never seen it. */
 export async function visitShop({ path = "/", url, prepare, ...options }: Visit = {}): Promise<ShopPage> {
-  const context = await (await launched()).newContext({ viewport: { width: 1280, height: 900 }, ...options })
+  const way = await ownWay()
+  const context = await (await launched()).newContext({
+    viewport: { width: 1280, height: 900 },
+    proxy: { server: way.server, bypass: "<-loopback>" },
+    ...options,
+  })
   const page = await context.newPage()
   const complaints: string[] = []
   page.on("console", (message) => {
@@ -46,5 +52,9 @@ export async function visitShop({ path = "/", url, prepare, ...options }: Visit 
   page.on("pageerror", (error) => complaints.push(error.message))
   await prepare?.(page)
   await page.goto(url ?? `${stack().shopUrl}${path}`)
-  return { page, widget: page.locator("tarnwright-widget"), complaints, close: () => context.close() }
+  async function close(): Promise<void> {
+    await context.close()
+    way.close()
+  }
+  return { page, widget: page.locator("tarnwright-widget"), complaints, close }
 }

@@ -36,6 +36,12 @@ export const usageInput = z.strictObject({
   by: z.enum(["day", "operation", "key"]).default("day"),
 })
 
+export const insightsInput = z.strictObject({ days: z.coerce.number().int().min(1).max(365).default(90) })
+
+export const enquiryInput = z.strictObject({ enquiry_id: z.string().max(100) })
+
+export const withdrawalInput = z.strictObject({ token: z.string().max(300) })
+
 export const accountNameInput = z.strictObject({
   name: z
     .string()
