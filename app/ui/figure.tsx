@@ -24,11 +24,18 @@ export function Figure({
   )
 }
 
+/** How many figures stand side by side: as many as fit, unless a page knows better. */
+const asManyAsFit = "grid-cols-[repeat(auto-fit,minmax(11rem,1fr))]"
+export const closeColumns = "grid-cols-[repeat(auto-fit,minmax(9.5rem,1fr))]"
+
 /** Figures side by side, divided by hairlines. */
-export function FigureRow({ children }: { children: ReactNode }) {
+export function FigureRow({ columns = asManyAsFit, children }: { columns?: string; children: ReactNode }) {
+  // Each figure draws the rules above and before it; those at the edges lie outside and are cut off.
   return (
-    <dl className="grid grid-cols-[repeat(auto-fit,minmax(11rem,1fr))] gap-px overflow-hidden border-y border-line bg-line [&>*]:bg-paper [&>*]:py-4 [&>*]:pr-4 sm:[&>*:not(:first-child)]:pl-4">
-      {children}
-    </dl>
+    <div className="overflow-hidden border-y border-line">
+      <dl className={`-mt-px -ml-[17px] grid ${columns} [&>*]:border-t [&>*]:border-l [&>*]:px-4 [&>*]:py-4`}>
+        {children}
+      </dl>
+    </div>
   )
 }

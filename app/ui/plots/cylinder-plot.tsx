@@ -100,8 +100,13 @@ export function CylinderPlot({
                 look="hollow"
                 name={`Last liquid gone at ${said(liquid_gone_g)}, week ${weekOf(liquid_gone_g).toFixed(0)}: from here the gauge falls`}
               />
-              <text x={x(weekOf(liquid_gone_g)) + 10} y={y(mass(liquid_gone_g)) - 8} className="fill-soft">
-                {width < 480 ? "gauge falls" : "last liquid gone: the gauge begins to fall"}
+              <text
+                x={frame.left + frame.width}
+                y={y(mass(liquid_gone_g)) - 10}
+                textAnchor="end"
+                className="fill-soft"
+              >
+                gauge falls from here
               </text>
             </>
           )}

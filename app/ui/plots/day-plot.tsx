@@ -36,7 +36,7 @@ export function DayPlot({ day, target_co2_mg_l }: { day: DayCourse; target_co2_m
       table={{
         columns: ["Time", "CO2, mg/L", "pH"],
         rows: day.series
-          .filter(({ t_min }) => t_min % 60 === 0)
+          .filter(({ t_min }) => t_min % 60 === 0 && t_min < 1440)
           .map(({ t_min, co2_mg_l, ph: value }) => [
             clock(t_min / 60),
             co2_mg_l.toFixed(1),

@@ -1,5 +1,6 @@
 "use client"
 
+import { useId } from "react"
 import type { OperatingPoint } from "@/lib/flow/operating-point"
 import type { CurvePoint } from "@/lib/flow/pump-curve"
 import { type Reading, written } from "@/lib/units/format"
@@ -13,18 +14,15 @@ const height = 300
 /** A pump's curve against what its loop asks for, now and when the filter is due for cleaning; flow where they meet. */
 export function PumpPlot({ flow, reading }: { flow: OperatingPoint; reading: Reading }) {
   const [element, width] = useWidth(620)
-  const frame: Frame = { left: 48, top: 28, width: width - 60, height: height - 76 }
+  const clip = useId()
+  const frame: Frame = { left: 48, top: 28, width: width - 74, height: height - 76 }
   const flowIn = (value: number) => shownIn(value, "L/h", reading)
   const headIn = (value: number) => shownIn(value, "m", reading)
   const most = { flow: flowIn(flow.pump_curve.at(-1)!.flow_l_h), head: headIn(flow.pump_curve[0]!.head_m) }
   const x = linear([0, most.flow], [frame.left, frame.left + frame.width])
   const y = linear([0, most.head * 1.08], [frame.top + frame.height, frame.top])
   const line = (points: readonly CurvePoint[]) =>
-    pathOf(
-      points
-        .filter(({ head_m }) => headIn(head_m) <= most.head * 1.08)
-        .map(({ flow_l_h, head_m }) => [x(flowIn(flow_l_h)), y(headIn(head_m))] as const),
-    )
+    pathOf(points.map(({ flow_l_h, head_m }) => [x(flowIn(flow_l_h)), y(headIn(head_m))] as const))
   const due_m = headAt(flow.due_loop_curve, flow.due_flow_l_h)
   const said = (flow_l_h: number, head_m: number) => {
     const [q, h] = [written(flow_l_h, "L/h", reading, 3), written(head_m, "m", reading, 2)]
@@ -71,7 +69,10 @@ export function PumpPlot({ flow, reading }: { flow: OperatingPoint; reading: Rea
               title: `flow, ${symbolIn("L/h", reading)}`,
             }}
           />
-          <g fill="none" strokeWidth={2}>
+          <clipPath id={clip}>
+            <rect x={frame.left} y={frame.top - 4} width={frame.width} height={frame.height + 4} />
+          </clipPath>
+          <g fill="none" strokeWidth={2} clipPath={`url(#${clip})`}>
             <path d={line(flow.due_loop_curve)} stroke="var(--warning-mark)" strokeDasharray="5 3" />
             <path d={line(flow.loop_curve)} stroke="var(--action)" />
             <path d={line(flow.pump_curve)} stroke="var(--ink)" />

@@ -15,7 +15,7 @@ export function Answer({ worked, reading }: { worked: Worked; reading: Reading }
   const use = uncertainty.demand
   return (
     <div className="pb-6" aria-live="polite">
-      <FigureRow>
+      <FigureRow columns="grid-cols-2 @min-[36rem]:grid-cols-3 @min-[58rem]:grid-cols-6">
         <Figure
           label="Hold the pH at"
           value={ph.ph.toFixed(2)}

@@ -1,6 +1,6 @@
 "use client"
 
-import { Figure, FigureRow } from "@/app/ui/figure"
+import { closeColumns, Figure, FigureRow } from "@/app/ui/figure"
 import { CylinderPlot } from "@/app/ui/plots/cylinder-plot"
 import type { RoomVerdict } from "@/lib/gas/room-safety"
 import type { Reading } from "@/lib/units/format"
@@ -12,12 +12,12 @@ export function CylinderPart({ worked, reading }: { worked: Worked; reading: Rea
   const { cylinder, dosing } = worked.plan.result
   return (
     <Part title="Cylinder" cautions={cautionsBeside(worked, ["cylinder"])}>
-      <FigureRow>
+      <FigureRow columns={closeColumns}>
         <Figure
           label={cylinder.days_left < cylinder.days ? "What is left lasts" : "A fill lasts"}
           value={cylinder.days_left.toFixed(0)}
           unit="days"
-          under={`${cylinder.refills_per_year.toPrecision(2)} fills a year`}
+          under={`${Number(cylinder.refills_per_year.toPrecision(2))} fills a year`}
         />
         <Figure
           label="Refills cost"
@@ -62,8 +62,8 @@ export function RoomPart({ worked, reading }: { worked: Worked; reading: Reading
   const { room_safety: room, cylinder } = worked.plan.result
   const { word, tone } = verdicts[room.verdict]
   return (
-    <Part title="Room" cautions={cautionsBeside(worked, ["room_safety"])}>
-      <FigureRow>
+    <Part title="Room" cautions={cautionsBeside(worked, ["room_safety"], [], ["cylinder"])}>
+      <FigureRow columns={closeColumns}>
         <Figure
           label={`If all ${said(reading, cylinder.cylinder_mass_g, "cylinder_mass_g", 2)} escape`}
           value={Number(room.peak_ppm.toPrecision(2)).toLocaleString("en")}

@@ -1,6 +1,6 @@
 "use client"
 
-import { Figure, FigureRow } from "@/app/ui/figure"
+import { closeColumns, Figure, FigureRow } from "@/app/ui/figure"
 import { clock, DayPlot } from "@/app/ui/plots/day-plot"
 import type { Reading } from "@/lib/units/format"
 import { cautionsBeside, Part, planCodes } from "./part"
@@ -17,8 +17,8 @@ export function DayPart({ worked }: { worked: Worked; reading: Reading }) {
         ? `${lead_time.lead_time_low_min.toFixed(0)} min or far longer`
         : `${lead_time.lead_time_low_min.toFixed(0)} to ${lead_time.lead_time_high_min.toFixed(0)} min may be needed`
   return (
-    <Part title="The day" cautions={cautionsBeside(worked, ["lead_time"], planCodes.day)}>
-      <FigureRow>
+    <Part title="The day" cautions={cautionsBeside(worked, ["demand", "lead_time"], planCodes.day, ["ph"])}>
+      <FigureRow columns={closeColumns}>
         <Figure label="Gas opens" value={clock(day.gas_opens_h)} under={`on a ${dosing.control}`} />
         <Figure
           label="Before the lights"

@@ -1,7 +1,8 @@
 "use client"
 
-import { Figure, FigureRow } from "@/app/ui/figure"
+import { closeColumns, Figure, FigureRow } from "@/app/ui/figure"
 import { PumpPlot } from "@/app/ui/plots/pump-plot"
+import { type ElementKind, elementTable } from "@/lib/flow/elements"
 import type { ReactorAnswer } from "@/lib/flow/reactor-verdict"
 import type { Reading } from "@/lib/units/format"
 import { CloggingScale } from "./clogging-scale"
@@ -18,7 +19,7 @@ export function FlowPart({ worked, reading }: { worked: Worked; reading: Reading
   const cautions = cautionsBeside(worked, isReactor ? ["flow", "reactor"] : ["flow"], planCodes.reactor)
   return (
     <Part title="Flow and reactor" cautions={cautions}>
-      <FigureRow>
+      <FigureRow columns={closeColumns}>
         <Figure
           label="Real flow"
           {...amount(reading, flow.flow_l_h, "flow_l_h")}
@@ -95,7 +96,10 @@ function Reasons({ reasons }: { reasons: ReactorAnswer["reasons"] }) {
   return (
     <ul className="mt-2 divide-y divide-line border-y border-line text-sm">
       {reasons.map(({ criterion, verdict, message }) => (
-        <li key={criterion} className="grid gap-x-4 py-2 @min-[36rem]:grid-cols-[7rem_minmax(0,1fr)]">
+        <li
+          key={criterion}
+          className="grid items-start gap-x-4 py-2 @min-[36rem]:grid-cols-[7rem_minmax(0,1fr)]"
+        >
           <VerdictWord verdict={verdict} />
           <span>{message}</span>
         </li>
@@ -104,19 +108,26 @@ function Reasons({ reasons }: { reasons: ReactorAnswer["reasons"] }) {
   )
 }
 
+/** An element of the loop in words: by the table of fittings, or by its own name. */
+function labelOf(element: string): string {
+  return element in elementTable ? elementTable[element as ElementKind].label : element.replaceAll("_", " ")
+}
+
 function HeadBudget({ worked, reading }: { worked: Worked; reading: Reading }) {
   const { flow } = worked.plan.result
   const most = Math.max(...flow.head_budget.map(({ head_m }) => head_m))
   const sorted = [...flow.head_budget].sort((a, b) => b.head_m - a.head_m)
   return (
     <section aria-label="Where the pump's head goes">
-      <h3 className="font-semibold">Where the pump's {said(reading, flow.head_m, "head_m", 2)} of head go</h3>
+      <h3 className="font-semibold">
+        Where the pump's {said(reading, flow.head_m, "head_m", 2)} of head goes
+      </h3>
       <table className="mt-2 w-full text-sm">
         <tbody>
           {sorted.map(({ element, head_m }) => (
             <tr key={element} className="border-t border-line">
-              <th scope="row" className="w-40 py-1 pr-4 text-left font-normal first-letter:uppercase">
-                {element.replaceAll("_", " ")}
+              <th scope="row" className="w-44 py-1 pr-4 text-left font-normal first-letter:uppercase">
+                {labelOf(element)}
               </th>
               <td className="py-1 pr-4" aria-hidden="true">
                 <span className="block h-2 bg-action" style={{ width: `${(100 * head_m) / most}%` }} />

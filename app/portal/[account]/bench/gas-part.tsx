@@ -1,6 +1,6 @@
 "use client"
 
-import { Figure, FigureRow } from "@/app/ui/figure"
+import { closeColumns, Figure, FigureRow } from "@/app/ui/figure"
 import type { Reading } from "@/lib/units/format"
 import { amount, cautionsBeside, Part, planCodes, said, span } from "./part"
 import type { Worked } from "./work-out"
@@ -13,9 +13,12 @@ export function GasPart({ worked, reading }: { worked: Worked; reading: Reading 
   return (
     <Part
       title="Feed, bubbles, pressure"
-      cautions={cautionsBeside(worked, ["demand", "bubble_rate", "working_pressure"], planCodes.pressure)}
+      cautions={cautionsBeside(worked, ["bubble_rate", "working_pressure"], planCodes.pressure, [
+        "cylinder",
+        "lead_time",
+      ])}
     >
-      <FigureRow>
+      <FigureRow columns={closeColumns}>
         <Figure
           label="Feed"
           value={Number(dosing.feed_mg_min.toPrecision(2))}

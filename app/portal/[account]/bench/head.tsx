@@ -25,7 +25,7 @@ export function BenchHead({
     <>
       <PageHead
         title="Bench"
-        lead="The whole plan for the customer in front of you, worked out here as you type. Nothing is billed until you save it."
+        lead="Worked out as you type; only saving is billed."
         actions={
           <>
             <Button onClick={() => setAsks(true)}>New customer</Button>

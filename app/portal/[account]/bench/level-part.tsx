@@ -1,6 +1,6 @@
 "use client"
 
-import { Figure, FigureRow } from "@/app/ui/figure"
+import { closeColumns, Figure, FigureRow } from "@/app/ui/figure"
 import { LevelWord } from "@/app/ui/level-word"
 import { WaterPlot } from "@/app/ui/plots/water-plot"
 import type { Reading } from "@/lib/units/format"
@@ -15,7 +15,7 @@ export function LevelPart({ worked, reading }: { worked: Worked; reading: Readin
   const ofReading = now?.cautions.filter(({ code }) => !known.has(code)) ?? []
   return (
     <Part title="Level and set-point" cautions={[...cautionsBeside(worked, ["ph"]), ...ofReading]}>
-      <FigureRow>
+      <FigureRow columns={closeColumns}>
         {now && (
           <Figure
             label={`CO2 now, at pH ${now.ph}`}

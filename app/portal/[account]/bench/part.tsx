@@ -37,14 +37,17 @@ export function Part({
   )
 }
 
-/** Cautions that the engine set beside these parts of its result. */
+/** Cautions that the engine set beside these parts of its result, without those that stand beside `elsewhere`. */
 export function cautionsBeside(
   { plan }: Worked,
   sections: readonly PlanSection[],
   extra: readonly string[] = [],
+  elsewhere: readonly PlanSection[] = [],
 ) {
-  const codes = new Set([...sections.flatMap((section) => plan.result.caution_sections[section]), ...extra])
-  return plan.cautions.filter(({ code }) => codes.has(code))
+  const of = (names: readonly PlanSection[]) => names.flatMap((name) => plan.result.caution_sections[name])
+  const codes = new Set([...of(sections), ...extra])
+  const left = new Set(of(elsewhere))
+  return plan.cautions.filter(({ code }) => codes.has(code) && !left.has(code))
 }
 
 /** Codes that the plan as a whole adds, by the part that they stand beside. */

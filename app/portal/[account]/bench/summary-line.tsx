@@ -20,12 +20,9 @@ export function SummaryLine({ worked }: { worked: Worked }) {
 function Line({ worked }: { worked: Worked }) {
   const { ph, co2, method, reactor, dosing } = worked.plan.result
   return (
-    <a
-      href="#results"
-      className="flex min-w-0 grow items-center gap-x-4 sm:gap-x-6"
-      aria-label="To the results"
-    >
+    <a href="#results" className="flex min-w-0 grow items-center gap-x-4 sm:gap-x-6">
       <span>
+        <span className="sr-only">To the results: </span>
         <span className="text-sm text-soft">pH </span>
         <span className="font-mono font-medium" data-testid="set-point">
           {ph.ph.toFixed(2)}

@@ -13,7 +13,7 @@ export function UnitChoice({
 }) {
   const label = (text: string) => <span className="block truncate text-sm">{text}</span>
   return (
-    <div className="grid grid-cols-3 gap-3 pb-4">
+    <div className="grid grid-cols-[1.3fr_0.9fr_1.1fr] gap-3 pb-4">
       <Select
         label={label("Units")}
         value={units.system}
@@ -41,7 +41,7 @@ export function UnitChoice({
         onChange={(event) => onChange({ ...units, kh: event.target.value as BenchUnits["kh"] })}
       >
         <option value="dkh">dKH</option>
-        <option value="kh_ppm_caco3">ppm CaCO3</option>
+        <option value="kh_ppm_caco3">ppm</option>
         <option value="kh_meq_l">meq/L</option>
       </Select>
     </div>

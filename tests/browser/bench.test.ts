@@ -1,0 +1,174 @@
+import type { Page } from "playwright-core"
+import { afterAll, describe, expect, it } from "vitest"
+import { stack } from "../support/stack"
+import { expectAccessible, ready, signInAs, type Visit } from "./portal"
+import { closeBrowser } from "./shop"
+
+afterAll(closeBrowser)
+
+const path = "/portal/fernhollow/bench"
+
+async function openBench(options: Parameters<typeof signInAs>[2] = {}): Promise<Visit> {
+  const visit = await signInAs("maren@fernhollow.test", path, options)
+  await ready(visit.page)
+  await visit.page.getByTestId("set-point").waitFor()
+  return visit
+}
+
+/** What the API answers to the same tank, with a sandbox key made for this visit. */
+async function askApi(page: Page, operation: string, body: unknown, method = "POST"): Promise<unknown> {
+  const { secret } = (await page.evaluate(async () => {
+    const answer = await fetch("/api/portal/fernhollow/explorer", { method: "POST" })
+    return answer.json()
+  })) as { secret: string }
+  const answer = await fetch(`${stack().appUrl}/api/v1${operation}`, {
+    method,
+    headers: { authorization: `Bearer ${secret}`, "content-type": "application/json" },
+    body: body === undefined ? undefined : JSON.stringify(body),
+  })
+  expect(answer.status).toBeLessThan(300)
+  return answer.status === 204 ? undefined : answer.json()
+}
+
+const asked = (page: Page) =>
+  page.waitForRequest((request) => request.url().endsWith("/bench/matches") && request.method() === "POST")
+
+describe("the Bench", { timeout: 120_000 }, () => {
+  it("follows what is typed, and says what POST /api/v1/plan says", async () => {
+    const { page, complaints, close } = await openBench()
+    const before = await page.getByTestId("set-point").textContent()
+    const request = asked(page)
+    await page.getByLabel("Length").fill("120")
+    await page.getByLabel("Carbonate hardness, KH").fill("7.5")
+    await expect.poll(() => page.getByTestId("set-point").textContent()).not.toBe(before)
+    const input = (await request).postDataJSON()
+    expect(input).toMatchObject({ length_cm: 120, kh_dkh: 7.5 })
+
+    const { result } = (await askApi(page, "/plan", input)) as { result: PlanNumbers }
+    const results = page.locator("#results")
+    expect(await page.getByTestId("set-point").textContent()).toBe(result.ph.ph.toFixed(2))
+    const figure = (label: string) =>
+      results
+        .locator("dl > div", { has: page.getByText(label, { exact: true }) })
+        .first()
+        .locator("dd")
+        .first()
+    expect(await figure("Hold the pH at").textContent()).toBe(result.ph.ph.toFixed(2))
+    expect(await figure("A fill lasts").textContent()).toBe(`${result.cylinder.days.toFixed(0)}days`)
+    expect(await figure("Real flow").textContent()).toBe(`${result.flow.flow_l_h.toFixed(0)}L/h`)
+    expect(complaints).toEqual([])
+    await close()
+  })
+
+  it("keeps the last good result while a field is wrong, and says how to mend it", async () => {
+    const { page, close } = await openBench()
+    const good = await page.locator("#results").textContent()
+    await page.getByLabel("Temperature").fill("95")
+    const status = page.getByRole("status").filter({ hasText: "The last good result is shown." })
+    await status.waitFor()
+    expect(await page.locator("#results").textContent()).toBe(good)
+    expect(await page.getByLabel("Temperature").getAttribute("aria-invalid")).toBe("true")
+    await page.getByText("Enter 0 to 50 °C; you gave 95.").first().waitFor()
+    await page.getByLabel("Length").focus()
+    await status.getByRole("button", { name: "Mend it" }).click()
+    expect(await page.evaluate(() => document.activeElement?.getAttribute("name"))).toBe("temperature_c")
+    await page.keyboard.type("24")
+    await page.getByTestId("set-point").waitFor()
+    await close()
+  })
+
+  it("keeps the tank when the units change, and remembers both over a reload", async () => {
+    const { page, close } = await openBench()
+    await page.getByLabel("Length").fill("101.3")
+    await page.getByLabel("Carbonate hardness, KH").fill("5.3")
+    await expect.poll(() => page.getByTestId("set-point").textContent()).not.toBe("6.65")
+    const setPoint = await page.getByTestId("set-point").textContent()
+    await page.getByLabel("Units").selectOption("us")
+    await page.getByLabel("Hardness", { exact: true }).selectOption("kh_ppm_caco3")
+    expect(await page.getByLabel("Length").inputValue()).toBe("39.88")
+    expect(await page.getByLabel("Carbonate hardness, KH").inputValue()).toBe("94.59")
+    expect(await page.getByTestId("set-point").textContent()).toBe(setPoint)
+    await page.reload()
+    await page.getByTestId("set-point").waitFor()
+    expect(await page.getByLabel("Length").inputValue()).toBe("39.88")
+    expect(await page.getByTestId("set-point").textContent()).toBe(setPoint)
+    await page.getByLabel("Units").selectOption("metric")
+    expect(await page.getByLabel("Length").inputValue()).toBe("101.3")
+    await close()
+  })
+
+  it("clears the bench for a new customer once that is confirmed", async () => {
+    const { page, close } = await openBench()
+    await page.getByLabel("Length").fill("150")
+    await page.getByRole("button", { name: "New customer" }).click()
+    await page.getByRole("button", { name: "Keep this tank" }).click()
+    expect(await page.getByLabel("Length").inputValue()).toBe("150")
+    await page.getByRole("button", { name: "New customer" }).click()
+    await page.getByRole("button", { name: "Clear the bench" }).click()
+    expect(await page.getByLabel("Length").inputValue()).toBe("90")
+    await close()
+  })
+
+  it("ranks the shop's own parts, and plans with the one that is chosen", async () => {
+    const { page, close } = await openBench()
+    const name = `Fernhollow Current ${Date.now()}`
+    const item = (await askApi(page, "/catalog/items", {
+      kind: "filter",
+      name,
+      attributes: { max_flow_l_h: 1337, max_head_m: 2.1, hose_inner_diameter_mm: 16 },
+    })) as { id: string }
+    await page.reload()
+    const row = page.getByRole("listitem").filter({ hasText: name })
+    await row.getByText("It moves").waitFor()
+    await row.getByRole("button", { name: "Plan with it" }).click()
+    await row.getByText("in this plan").waitFor()
+    expect(await page.getByLabel("Flow on the box").inputValue()).toBe("1337")
+    await askApi(page, `/catalog/items/${item.id}`, undefined, "DELETE")
+    await close()
+  })
+
+  it("is worked by keyboard: arrows step a number, the plots and folded parts can be reached", async () => {
+    const { page, close } = await openBench()
+    await page.getByLabel("Water height").focus()
+    await page.keyboard.press("ArrowUp")
+    expect(await page.getByLabel("Water height").inputValue()).toBe("50")
+    const table = page
+      .locator("figure", { has: page.locator("svg") })
+      .getByText("As a table")
+      .first()
+    await table.focus()
+    await page.keyboard.press("Enter")
+    expect(
+      await page.getByRole("table", { name: "pH and hardness with lines of equal CO2" }).isVisible(),
+    ).toBe(true)
+    await close()
+  })
+
+  it.each([
+    { colorScheme: "light", viewport: { width: 390, height: 844 } },
+    { colorScheme: "dark", viewport: { width: 1600, height: 900 } },
+  ] as const)("is accessible with every part open, $viewport.width pixels wide", async (screen) => {
+    const { page, complaints, close } = await openBench(screen)
+    await page.evaluate(() => {
+      for (const details of document.querySelectorAll("main details")) details.setAttribute("open", "")
+    })
+    await expectAccessible(page)
+    expect(complaints).toEqual([])
+    await close()
+  })
+
+  it("prints the sheet and nothing else", async () => {
+    const { page, close } = await openBench()
+    await page.emulateMedia({ media: "print" })
+    await page.getByRole("heading", { name: "CO2 plan" }).waitFor()
+    expect(await page.getByRole("button", { name: "Print" }).isVisible()).toBe(false)
+    expect(await page.getByRole("link", { name: "Overview" }).isVisible()).toBe(false)
+    await close()
+  })
+})
+
+interface PlanNumbers {
+  readonly ph: { readonly ph: number }
+  readonly cylinder: { readonly days: number }
+  readonly flow: { readonly flow_l_h: number }
+}
