@@ -30,6 +30,7 @@ export const menu: readonly { readonly group: string; readonly items: readonly M
     items: [
       { path: "/team", label: "Team", right: "team.read" },
       { path: "/billing", label: "Billing", right: "billing.read" },
+      { path: "/audit", label: "Audit", right: "audit.read" },
       { path: "/settings", label: "Settings", right: "account.manage" },
     ],
   },

@@ -31,6 +31,7 @@ const account = [
   "/insights",
   "/team",
   "/billing",
+  "/audit",
   "/settings",
 ].map((page) => `/portal/fernhollow${page}`)
 const areas = [
