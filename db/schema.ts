@@ -8,6 +8,7 @@ export interface Schema {
   membership: Membership
   invitation: Invitation
   session: Session
+  account_export: AccountExport
   one_time_token: OneTimeToken
   second_factor: SecondFactor
   recovery_code: RecoveryCode
@@ -56,6 +57,8 @@ interface Account {
   overage_cap_minor: Generated<number>
   status: Generated<AccountStatus>
   status_reason: string | null
+  /** Set while the status is `closing`. */
+  closing_since: Date | null
   stripe_customer_id: string | null
   created_at: CreatedAt
 }
@@ -88,6 +91,17 @@ interface Invitation {
   invited_by: string
   created_at: CreatedAt
   expires_at: Date
+}
+
+interface AccountExport {
+  account_id: string
+  id: string
+  requested_by: string
+  requested_at: CreatedAt
+  finished_at: ColumnType<Date | null, undefined, Date>
+  expires_at: ColumnType<Date, Date, never>
+  /** A zip file; null while it is being made. */
+  archive: ColumnType<Buffer | null, undefined, Buffer>
 }
 
 interface Session {

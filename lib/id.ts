@@ -6,6 +6,7 @@ const prefixes = {
   user: "user",
   session: "sess",
   invitation: "inv",
+  export: "exp",
   key: "key",
   widget: "wdgt",
   call: "call",

@@ -12,8 +12,10 @@ import {
   reportOverage,
   reviewSubscriptions,
 } from "@/lib/billing"
+import { deleteClosedAccounts } from "@/lib/closing"
 import { type EnquiryCopy, SEND_ENQUIRY_COPY, sendEnquiryCopy } from "@/lib/enquiries"
 import { env } from "@/lib/env"
+import { BUILD_EXPORT, buildExport } from "@/lib/exports"
 import { remindOfExpiry } from "@/lib/keys"
 import { deliverMail, type Mail, SEND_MAIL } from "@/lib/mail"
 import {
@@ -52,6 +54,8 @@ const taskList: TaskList = {
   },
   make_partitions: () => makePartitions(),
   drop_old_partitions: async () => void (await dropOldPartitions()),
+  [BUILD_EXPORT]: (payload) => buildExport(payload as { account_id: string; export_id: string }),
+  delete_closed_accounts: async () => void (await deleteClosedAccounts({ now: new Date() })),
   delete_expired: async () => void (await deleteExpired()),
   remind_of_expiry: async () => void (await remindOfExpiry()),
   recover_deliveries: async () => void (await recoverDeliveries()),
@@ -68,6 +72,7 @@ const timetable = parseCronItems([
   { task: "make_partitions", match: "5 0 * * *", options: { backfillPeriod: 86_400_000 } },
   { task: "drop_old_partitions", match: "25 1 * * *" },
   { task: "delete_expired", match: "35 * * * *" },
+  { task: "delete_closed_accounts", match: "40 * * * *" },
   { task: "reconcile_usage", match: "45 1 * * *", options: { backfillPeriod: 86_400_000 } },
 ])
 

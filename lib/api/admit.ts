@@ -120,12 +120,14 @@ function refuseStrangerAddress(access: Access, address: string): void {
 }
 
 function refuseSuspended(access: Access): void {
-  if (access.account_status !== "active") {
-    throw new TarnwrightError(
-      "account_suspended",
-      "This account is suspended. Its owner was told why by mail.",
-    )
-  }
+  if (access.account_status === "active") return
+  const closing = access.account_status === "closing"
+  throw new TarnwrightError(
+    "account_suspended",
+    closing
+      ? "An owner has closed this account, so its keys have stopped."
+      : "This account is suspended. Its owner was told why by mail.",
+  )
 }
 
 async function countFailure(address: string): Promise<void> {

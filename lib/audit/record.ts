@@ -14,6 +14,10 @@ export interface Act {
 export const actionNames = {
   "account.created": "Account opened",
   "account.renamed": "Account renamed",
+  "account.export_asked": "Archive of the data asked for",
+  "account.export_fetched": "Archive of the data fetched",
+  "account.closed": "Account closed, to be deleted",
+  "account.reopened": "Deletion of the account taken back",
   "person.password_reset": "Password set anew",
   "person.password_changed": "Password changed",
   "person.second_factor_set_up": "Second factor set up",

@@ -160,7 +160,8 @@ export async function keepPlan({ ctx }: Pick<Call<never>, "ctx">): Promise<void>
   )
 }
 
-async function dropSchedule(subscription: string): Promise<void> {
+/** Takes back a change of plan that waits for the end of the period, where one does. */
+export async function dropSchedule(subscription: string): Promise<void> {
   const { schedule } = await stripe().subscriptions.retrieve(subscription)
   if (schedule)
     await stripe().subscriptionSchedules.release(typeof schedule === "string" ? schedule : schedule.id)

@@ -7,6 +7,7 @@ export {
   previewPlanChange,
 } from "./change-plan"
 export { COMPARE_OVERAGE, compareOverage, type OverageDifference } from "./compare-overage"
+export { endSubscription, setRenewal } from "./end-subscription"
 export type { PaidPlanId } from "./ensure-prices"
 export { type InvoiceRow, listInvoices } from "./list-invoices"
 export { openBillingPortal } from "./open-billing-portal"

@@ -17,6 +17,7 @@ const retention = {
   webhook_delivery: "created_at < now() - interval '30 days'",
   session: "expires_at < now()",
   one_time_token: "expires_at < now() - interval '7 days'",
+  account_export: "expires_at < now()",
   invitation: "expires_at < now() - interval '30 days'",
   sign_in_failure: "at < now() - interval '30 days'",
   stripe_event: "processed_at < now() - interval '90 days'",

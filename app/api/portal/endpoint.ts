@@ -24,6 +24,7 @@ interface Endpoint<Schema extends z.ZodType, Asked> {
   readonly input: Schema
   /** Whether it takes a password or a code that was shown in the last ten minutes. */
   readonly fresh?: boolean | ((input: z.output<Schema>) => boolean)
+  /** What it gives back is the JSON of the answer, or, for a file, the answer itself. */
   run(asked: Asked & { readonly input: z.output<Schema> }): Promise<unknown>
 }
 
@@ -118,7 +119,8 @@ function handler(run: (request: Request, params: Params, visitor: Visitor) => Pr
     const requestId = visitor.request_id ?? ""
     try {
       refuseOtherSites(request)
-      return answer(await run(request, await context.params, visitor), requestId)
+      const done = await run(request, await context.params, visitor)
+      return done instanceof Response ? done : answer(done, requestId)
     } catch (error) {
       return refuse(error, requestId)
     }

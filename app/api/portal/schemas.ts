@@ -67,6 +67,10 @@ export const ofMember = z.strictObject({ user_id: z.string() })
 
 export const roleInput = ofMember.extend({ role })
 
+export const ofExport = z.strictObject({ export_id: z.string() })
+
+export const closingInput = z.strictObject({ name: z.string().max(200) })
+
 export const checkoutInput = z.strictObject({ plan: z.enum(["storefront", "brand"]) })
 
 export const spendingCapInput = z.strictObject({ overage_cap_minor: z.number().int() })

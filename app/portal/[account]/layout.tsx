@@ -52,6 +52,13 @@ export default async function AccountLayout({ params, children }: OfAccount & { 
           </Notice>
         </div>
       )}
+      {account.status === "closing" && (
+        <div className="mb-8">
+          <Notice severity="danger" title="This account is being deleted">
+            Its keys and widgets have stopped. An owner can take it back under Settings.
+          </Notice>
+        </div>
+      )}
       {children}
       <StepUp secondFactor={second_factor} />
     </Area>

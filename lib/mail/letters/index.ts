@@ -1,6 +1,8 @@
+import { accountClosing } from "./account-closing"
 import { alreadySignedUp } from "./already-signed-up"
 import { enquiryCopy } from "./enquiry-copy"
 import { enquiryReceived } from "./enquiry-received"
+import { exportReady } from "./export-ready"
 import { invitation } from "./invitation"
 import { keyExpiring } from "./key-expiring"
 import { keyRevoked } from "./key-revoked"
@@ -9,6 +11,7 @@ import { passwordChanged } from "./password-changed"
 import { paymentFailed } from "./payment-failed"
 import { resetPassword } from "./reset-password"
 import { secondFactorChanged } from "./second-factor-changed"
+import { sharedReport } from "./shared-report"
 import { signInLink } from "./sign-in-link"
 import { usageThreshold } from "./usage-threshold"
 import { verifyEmail } from "./verify-email"
@@ -22,6 +25,8 @@ export const letters = {
   password_changed: passwordChanged,
   second_factor_changed: secondFactorChanged,
   sign_in_link: signInLink,
+  export_ready: exportReady,
+  account_closing: accountClosing,
   invitation,
   membership_changed: membershipChanged,
   key_revoked: keyRevoked,
@@ -31,6 +36,7 @@ export const letters = {
   webhook_disabled: webhookDisabled,
   enquiry_received: enquiryReceived,
   enquiry_copy: enquiryCopy,
+  shared_report: sharedReport,
 } as const
 
 export type LetterName = keyof typeof letters
