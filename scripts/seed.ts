@@ -75,7 +75,7 @@ async function load(): Promise<void> {
       ...accounts.flatMap(({ name, people }) =>
         people.map(({ email, role }) => ({ email, does: `${role} of ${name}` })),
       ),
-      { email: admin.email, does: "platform admin" },
+      { email: admin.email, does: "platform admin, who sets up a second factor first" },
     ],
     sandboxKey: sandbox.secret,
     browserKey: browser.secret,

@@ -14,6 +14,22 @@ const mails: Mail[] = [
     to: "a@shop.test",
     data: { inviter_name: "<b>Ada</b>", account_name: "<b>Shop</b>", role: "viewer", url },
   },
+  { template: "sign_in_link", to: "a@shop.test", data: { name: "<b>Ada</b>", url } },
+  {
+    template: "second_factor_changed",
+    to: "a@shop.test",
+    data: { name: "<b>Ada</b>", what: "recovery_code_used", codes_left: 1, reset_url: url },
+  },
+  {
+    template: "export_ready",
+    to: "a@shop.test",
+    data: { name: "<b>Ada</b>", account_name: "<b>Shop</b>", days: 7, url },
+  },
+  {
+    template: "account_closing",
+    to: "a@shop.test",
+    data: { account_name: "<b>Shop</b>", deleted_on: "2027-01-01T00:00:00Z", settings_url: url },
+  },
   {
     template: "key_revoked",
     to: "a@shop.test",
