@@ -53,7 +53,7 @@ export function Co2Field({
       viewBox={`0 0 ${size.width} ${size.height}`}
       role="img"
       aria-label={`pH ${water.ph} and KH ${water.kh_dkh} dKH among lines of equal CO2`}
-      className="w-full max-w-2xl font-mono text-[11px]"
+      className="w-full max-w-2xl font-mono text-[11px] max-sm:text-[15px]"
     >
       <clipPath id={clip}>
         <rect x={box.left} y={box.top} width={box.width} height={box.height} />
@@ -99,8 +99,13 @@ export function Co2Field({
           {co2_mg_l}
         </text>
       ))}
-      <text x={box.left + box.width} y={box.top - 8} textAnchor="end" className="fill-soft">
-        mg/L CO2
+      <text
+        x={onPaper(ground.lines.at(-1)!.places.at(-1)!).x - 16}
+        y={box.top - 8}
+        textAnchor="end"
+        className="fill-soft"
+      >
+        CO2, mg/L
       </text>
       {phTicks.map((ph) => (
         <text

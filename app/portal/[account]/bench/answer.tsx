@@ -22,7 +22,7 @@ export function Answer({ worked, reading }: { worked: Worked; reading: Reading }
           under={`${ph.ph_low.toFixed(2)} to ${ph.ph_high.toFixed(2)}, 95 %`}
         />
         <Figure
-          label="CO2 that it stands for"
+          label="CO2 to hold"
           value={co2.target_co2_mg_l}
           unit="mg/L"
           under={

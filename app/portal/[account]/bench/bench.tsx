@@ -1,6 +1,6 @@
 "use client"
 
-import { useDeferredValue, useEffect, useMemo, useState, useSyncExternalStore } from "react"
+import { useCallback, useDeferredValue, useEffect, useMemo, useState, useSyncExternalStore } from "react"
 import { useForm, useWatch } from "react-hook-form"
 import { Loading } from "@/app/ui/states"
 import { BenchContext, type BenchShared } from "./bench-context"
@@ -38,6 +38,7 @@ const noProblems: Problems = {}
 function OpenBench({ account, shop, may }: BenchProps) {
   const [first] = useState(() => keptSheet(account))
   const [{ exact, units }, setRest] = useState<Omit<Sheet, "form">>(first)
+  const [isWide] = useState(() => window.matchMedia("(min-width: 64rem)").matches)
   const form = useForm<BenchForm>({ defaultValues: first.form })
   const values = useWatch({ control: form.control }) as BenchForm
   const sheet = useMemo<Sheet>(() => ({ form: values, exact, units }), [values, exact, units])
@@ -55,21 +56,28 @@ function OpenBench({ account, shop, may }: BenchProps) {
 
   useEffect(() => keepSheet(account, sheet), [account, sheet])
 
-  function write(next: Sheet) {
-    form.reset(next.form)
-    setRest(next)
-  }
-  const reading = useMemo(() => readingOf(units), [units])
-  const shared: BenchShared = {
-    form,
-    units,
-    reading,
-    problems,
-    fill(filled, chosen = {}) {
-      const next = withValues({ form: form.getValues(), exact, units }, filled)
-      write({ ...next, form: { ...next.form, ...chosen } })
+  const write = useCallback(
+    (next: Sheet) => {
+      form.reset(next.form)
+      setRest(next)
     },
-  }
+    [form],
+  )
+  const reading = useMemo(() => readingOf(units), [units])
+  // Stays the same while someone types, so that a keystroke draws its own field anew and no other.
+  const shared = useMemo<BenchShared>(
+    () => ({
+      form,
+      units,
+      reading,
+      problems,
+      fill(filled, chosen = {}) {
+        const next = withValues({ form: form.getValues(), exact, units }, filled)
+        write({ ...next, form: { ...next.form, ...chosen } })
+      },
+    }),
+    [form, units, reading, problems, exact, write],
+  )
 
   function changeUnits(next: BenchUnits) {
     keepUnits(next)
@@ -90,15 +98,15 @@ function OpenBench({ account, shop, may }: BenchProps) {
           <form
             aria-label="The customer's tank"
             onSubmit={(event) => event.preventDefault()}
-            className="lg:sticky lg:top-12 lg:max-h-[calc(100dvh-3rem)] lg:overflow-y-auto lg:pr-1 lg:pb-6"
+            className="lg:sticky lg:top-12 lg:max-h-[calc(100dvh-3rem)] lg:-ml-1 lg:overflow-y-auto lg:px-1 lg:pb-6"
           >
             <UnitChoice units={units} onChange={changeUnits} />
-            <Inputs allOpen={window.matchMedia("(min-width: 64rem)").matches} />
+            <Inputs allOpen={isWide} />
           </form>
           {worked && (
             <div
               id="results"
-              className={`@container min-w-0 scroll-mt-14 transition-opacity ${isStale ? "opacity-45" : ""}`}
+              className={`@container min-w-0 scroll-mt-14 transition-opacity ${isStale ? "opacity-60" : ""}`}
             >
               <Results account={account} worked={worked} reading={reading} mayStock={may.stock} />
             </div>

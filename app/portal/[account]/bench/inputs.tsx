@@ -1,13 +1,13 @@
 "use client"
 
-import type { ReactNode } from "react"
+import { memo, type ReactNode } from "react"
 import { useWatch } from "react-hook-form"
 import { DownMark } from "@/app/ui/marks"
 import { useBench } from "./bench-context"
 import { ChoiceInput, FieldInput } from "./field-inputs"
 
 /** Everything that is asked, in the order of a talk at the counter. */
-export function Inputs({ allOpen }: { allOpen: boolean }) {
+export const Inputs = memo(function Inputs({ allOpen }: { allOpen: boolean }) {
   return (
     <>
       <Tank />
@@ -17,7 +17,7 @@ export function Inputs({ allOpen }: { allOpen: boolean }) {
       <GasSide isOpen={allOpen} />
     </>
   )
-}
+})
 
 function Tank() {
   const { form } = useBench()

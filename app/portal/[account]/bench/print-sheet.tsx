@@ -1,5 +1,6 @@
 "use client"
 
+import { memo } from "react"
 import { clock } from "@/app/ui/plots/day-plot"
 import { SchematicDrawing } from "@/app/ui/schematic/drawing"
 import type { Reading } from "@/lib/units/format"
@@ -7,7 +8,15 @@ import { said, span } from "./part"
 import type { Worked } from "./work-out"
 
 /** The sheet that is handed over on paper: the tank, the answer, the drawing, the cautions, the parts. */
-export function PrintSheet({ shop, worked, reading }: { shop: string; worked: Worked; reading: Reading }) {
+export const PrintSheet = memo(function PrintSheet({
+  shop,
+  worked,
+  reading,
+}: {
+  shop: string
+  worked: Worked
+  reading: Reading
+}) {
   const { plan } = worked
   const { parts, schematic } = plan.result
   const grave = plan.cautions.filter(({ severity }) => severity !== "info")
@@ -59,7 +68,7 @@ export function PrintSheet({ shop, worked, reading }: { shop: string; worked: Wo
       </p>
     </article>
   )
-}
+})
 
 type Line = readonly [name: string, value: string]
 

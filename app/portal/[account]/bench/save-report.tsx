@@ -15,12 +15,14 @@ const REPORT_UNITS = 10
 export function SaveReport({ account, worked }: { account: string; worked: Worked | undefined }) {
   const [open, setOpen] = useState(false)
   const [title, setTitle] = useState("")
+  const [shopper, setShopper] = useState("")
   const save = useMutation({
     mutationFn: (plan: Worked) =>
       ask<{ report: { id: string } }>("POST", `/api/portal/${account}/reports`, {
         kind: "plan",
         input: plan.request,
         ...(title.trim() && { title: title.trim() }),
+        ...(shopper.trim() && { shopper: shopper.trim() }),
       }),
   })
 
@@ -65,6 +67,15 @@ export function SaveReport({ account, worked }: { account: string; worked: Worke
               maxLength={120}
               autoComplete="off"
               onChange={(event) => setTitle(event.target.value)}
+            />
+            <Input
+              className="mt-4"
+              label="For whom"
+              hint="The customer's name as it should stand on the sheet. It may stay empty."
+              value={shopper}
+              maxLength={120}
+              autoComplete="off"
+              onChange={(event) => setShopper(event.target.value)}
             />
             <FieldError message={save.error ? detailOf(save.error) : undefined} />
             <div className="mt-6 flex flex-wrap gap-3">
