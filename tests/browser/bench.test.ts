@@ -1,18 +1,33 @@
 import type { Page } from "playwright-core"
-import { afterAll, describe, expect, it } from "vitest"
+import { afterAll, beforeAll, describe, expect, it } from "vitest"
 import { stack } from "../support/stack"
-import { expectAccessible, ready, signInAs, type Visit } from "./portal"
+import { expectAccessible, signInAs, type Visit } from "./portal"
 import { closeBrowser } from "./shop"
 
+const path = "/portal/fernhollow/bench"
+let signedIn: Visit
+
+beforeAll(async () => {
+  signedIn = await signInAs("maren@fernhollow.test", path)
+  await inSight(signedIn.page)
+}, 120_000)
 afterAll(closeBrowser)
 
-const path = "/portal/fernhollow/bench"
+async function inSight(page: Page): Promise<void> {
+  await page.getByTestId("set-point").waitFor({ timeout: 60_000 })
+}
 
-async function openBench(options: Parameters<typeof signInAs>[2] = {}): Promise<Visit> {
-  const visit = await signInAs("maren@fernhollow.test", path, options)
-  await ready(visit.page)
-  await visit.page.getByTestId("set-point").waitFor()
-  return visit
+/** The Bench in a tab of its own, with nothing kept from another one. */
+async function openBench(): Promise<{ page: Page; complaints: string[] }> {
+  const page = await signedIn.page.context().newPage()
+  const complaints: string[] = []
+  page.on("console", (message) => {
+    if (message.type() === "error") complaints.push(message.text())
+  })
+  page.on("pageerror", (error) => complaints.push(error.message))
+  await page.goto(path)
+  await inSight(page)
+  return { page, complaints }
 }
 
 /** What the API answers to the same tank, with a sandbox key made for this visit. */
@@ -30,16 +45,19 @@ async function askApi(page: Page, operation: string, body: unknown, method = "PO
   return answer.status === 204 ? undefined : answer.json()
 }
 
-const asked = (page: Page) =>
-  page.waitForRequest((request) => request.url().endsWith("/bench/matches") && request.method() === "POST")
+/** The plan of a tank of this length, as the page asks the server to match it once the typing has paused. */
+const askedFor = (page: Page, length_cm: number) =>
+  page.waitForRequest(
+    (request) => request.url().endsWith("/bench/matches") && request.postDataJSON().length_cm === length_cm,
+  )
 
 describe("the Bench", { timeout: 120_000 }, () => {
   it("follows what is typed, and says what POST /api/v1/plan says", async () => {
-    const { page, complaints, close } = await openBench()
+    const { page, complaints } = await openBench()
     const before = await page.getByTestId("set-point").textContent()
-    const request = asked(page)
-    await page.getByLabel("Length").fill("120")
+    const request = askedFor(page, 120)
     await page.getByLabel("Carbonate hardness, KH").fill("7.5")
+    await page.getByLabel("Length").fill("120")
     await expect.poll(() => page.getByTestId("set-point").textContent()).not.toBe(before)
     const input = (await request).postDataJSON()
     expect(input).toMatchObject({ length_cm: 120, kh_dkh: 7.5 })
@@ -57,11 +75,11 @@ describe("the Bench", { timeout: 120_000 }, () => {
     expect(await figure("A fill lasts").textContent()).toBe(`${result.cylinder.days.toFixed(0)}days`)
     expect(await figure("Real flow").textContent()).toBe(`${result.flow.flow_l_h.toFixed(0)}L/h`)
     expect(complaints).toEqual([])
-    await close()
+    await page.close()
   })
 
   it("keeps the last good result while a field is wrong, and says how to mend it", async () => {
-    const { page, close } = await openBench()
+    const { page } = await openBench()
     const good = await page.locator("#results").textContent()
     await page.getByLabel("Temperature").fill("95")
     const status = page.getByRole("status").filter({ hasText: "The last good result is shown." })
@@ -74,11 +92,11 @@ describe("the Bench", { timeout: 120_000 }, () => {
     expect(await page.evaluate(() => document.activeElement?.getAttribute("name"))).toBe("temperature_c")
     await page.keyboard.type("24")
     await page.getByTestId("set-point").waitFor()
-    await close()
+    await page.close()
   })
 
   it("keeps the tank when the units change, and remembers both over a reload", async () => {
-    const { page, close } = await openBench()
+    const { page } = await openBench()
     await page.getByLabel("Length").fill("101.3")
     await page.getByLabel("Carbonate hardness, KH").fill("5.3")
     await expect.poll(() => page.getByTestId("set-point").textContent()).not.toBe("6.65")
@@ -93,12 +111,13 @@ describe("the Bench", { timeout: 120_000 }, () => {
     expect(await page.getByLabel("Length").inputValue()).toBe("39.88")
     expect(await page.getByTestId("set-point").textContent()).toBe(setPoint)
     await page.getByLabel("Units").selectOption("metric")
+    await page.getByLabel("Hardness", { exact: true }).selectOption("dkh")
     expect(await page.getByLabel("Length").inputValue()).toBe("101.3")
-    await close()
+    await page.close()
   })
 
   it("clears the bench for a new customer once that is confirmed", async () => {
-    const { page, close } = await openBench()
+    const { page } = await openBench()
     await page.getByLabel("Length").fill("150")
     await page.getByRole("button", { name: "New customer" }).click()
     await page.getByRole("button", { name: "Keep this tank" }).click()
@@ -106,11 +125,11 @@ describe("the Bench", { timeout: 120_000 }, () => {
     await page.getByRole("button", { name: "New customer" }).click()
     await page.getByRole("button", { name: "Clear the bench" }).click()
     expect(await page.getByLabel("Length").inputValue()).toBe("90")
-    await close()
+    await page.close()
   })
 
   it("ranks the shop's own parts, and plans with the one that is chosen", async () => {
-    const { page, close } = await openBench()
+    const { page } = await openBench()
     const name = `Fernhollow Current ${Date.now()}`
     const item = (await askApi(page, "/catalog/items", {
       kind: "filter",
@@ -124,11 +143,11 @@ describe("the Bench", { timeout: 120_000 }, () => {
     await row.getByText("in this plan").waitFor()
     expect(await page.getByLabel("Flow on the box").inputValue()).toBe("1337")
     await askApi(page, `/catalog/items/${item.id}`, undefined, "DELETE")
-    await close()
+    await page.close()
   })
 
   it("is worked by keyboard: arrows step a number, the plots and folded parts can be reached", async () => {
-    const { page, close } = await openBench()
+    const { page } = await openBench()
     await page.getByLabel("Water height").focus()
     await page.keyboard.press("ArrowUp")
     expect(await page.getByLabel("Water height").inputValue()).toBe("50")
@@ -141,14 +160,15 @@ describe("the Bench", { timeout: 120_000 }, () => {
     expect(
       await page.getByRole("table", { name: "pH and hardness with lines of equal CO2" }).isVisible(),
     ).toBe(true)
-    await close()
+    await page.close()
   })
 
   it.each([
     { colorScheme: "light", viewport: { width: 390, height: 844 } },
     { colorScheme: "dark", viewport: { width: 1600, height: 900 } },
   ] as const)("is accessible with every part open, $viewport.width pixels wide", async (screen) => {
-    const { page, complaints, close } = await openBench(screen)
+    const { page, complaints, close } = await signInAs("maren@fernhollow.test", path, screen)
+    await inSight(page)
     await page.evaluate(() => {
       for (const details of document.querySelectorAll("main details")) details.setAttribute("open", "")
     })
@@ -158,12 +178,12 @@ describe("the Bench", { timeout: 120_000 }, () => {
   })
 
   it("prints the sheet and nothing else", async () => {
-    const { page, close } = await openBench()
+    const { page } = await openBench()
     await page.emulateMedia({ media: "print" })
     await page.getByRole("heading", { name: "CO2 plan" }).waitFor()
     expect(await page.getByRole("button", { name: "Print" }).isVisible()).toBe(false)
     expect(await page.getByRole("link", { name: "Overview" }).isVisible()).toBe(false)
-    await close()
+    await page.close()
   })
 })
 
