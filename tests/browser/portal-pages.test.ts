@@ -26,6 +26,7 @@ const account = [
   "",
   "/keys",
   "/explorer",
+  "/bench",
   "/usage",
   "/enquiries",
   "/insights",

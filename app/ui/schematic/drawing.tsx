@@ -30,7 +30,7 @@ export function SchematicDrawing({
       >
         <NarrowSchematic schematic={schematic} reading={reading} />
       </svg>
-      <details className="mt-4">
+      <details className="mt-4 print:hidden">
         <summary className="link text-sm">The same values as a table</summary>
         <SchematicTable schematic={schematic} reading={reading} />
       </details>

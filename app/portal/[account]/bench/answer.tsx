@@ -54,7 +54,7 @@ export function Answer({ worked, reading }: { worked: Worked; reading: Reading }
         />
         <Figure
           label="Gas used"
-          {...amount(reading, dosing.daily_use_g_day, "daily_use_g_day")}
+          {...amount(reading, dosing.daily_use_g_day, "daily_use_g_day", 2)}
           under={
             dosing.daily_use_g_day === demand.daily_use_g_day
               ? span(reading, use.daily_use_low_g_day, use.daily_use_high_g_day, "daily_use_g_day")
@@ -63,9 +63,8 @@ export function Answer({ worked, reading }: { worked: Worked; reading: Reading }
         />
         <Figure
           label="A fill lasts"
-          value={cylinder.days.toFixed(0)}
-          unit="days"
-          under={`${cylinder.days_low.toFixed(0)} to ${cylinder.days_high.toFixed(0)} days`}
+          {...amount(reading, cylinder.days, "days", 2)}
+          under={span(reading, cylinder.days_low, cylinder.days_high, "days")}
         />
       </FigureRow>
     </div>

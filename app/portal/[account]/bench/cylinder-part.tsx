@@ -15,8 +15,7 @@ export function CylinderPart({ worked, reading }: { worked: Worked; reading: Rea
       <FigureRow columns={closeColumns}>
         <Figure
           label={cylinder.days_left < cylinder.days ? "What is left lasts" : "A fill lasts"}
-          value={cylinder.days_left.toFixed(0)}
-          unit="days"
+          {...amount(reading, cylinder.days_left, "days_left", 2)}
           under={`${Number(cylinder.refills_per_year.toPrecision(2))} fills a year`}
         />
         <Figure

@@ -27,9 +27,9 @@ export function DayPart({ worked }: { worked: Worked; reading: Reading }) {
           under={lead}
         />
         <Figure
-          label="Lights on, off"
-          value={`${clock(day.lights_on_h)}–${clock(day.lights_off_h)}`}
-          under={`${day.lights_on_co2_mg_l.toFixed(0)} mg/L when they come on`}
+          label="Lights on"
+          value={clock(day.lights_on_h)}
+          under={`until ${clock(day.lights_off_h)}; they find ${day.lights_on_co2_mg_l.toFixed(0)} mg/L`}
         />
         <Figure
           label="Gas closes"

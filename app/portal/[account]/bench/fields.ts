@@ -202,6 +202,27 @@ export const startForm = Object.fromEntries([
   ...choiceNames.map((name) => [name, choices[name].start]),
 ]) as BenchForm
 
+/** What a tank is met with where it is measured in inches, in the engine's units: 36 by 18 by 18 in, 5 lb of CO2. */
+export const usStart: Readonly<Partial<Record<FieldName, number>>> = {
+  length_cm: 91.44,
+  width_cm: 45.72,
+  height_cm: 45.72,
+  substrate_depth_cm: 5.08,
+  hardscape_l: 3.785411784,
+  max_flow_l_h: 1211.33177,
+  max_head_m: 1.8288,
+  hose_diameter_mm: 15.875,
+  hose_length_m: 3.048,
+  cylinder_mass_g: 2267.96185,
+  ambient_c: 22.222222222222,
+  depth_m: 0.381,
+  line_length_m: 1.8288,
+  line_diameter_mm: 2.54,
+  room_length_m: 3.9624,
+  room_width_m: 3.9624,
+  room_height_m: 2.4384,
+}
+
 /** Fields that count with what is chosen; the others keep their text and are left out. */
 export function activeFields(form: BenchForm): FieldName[] {
   const out = new Set<FieldName>()

@@ -112,7 +112,7 @@ function answerLines({ plan }: Worked, reading: Reading): Line[] {
   return [
     ["Hold the pH at", `${ph.ph.toFixed(2)} (${ph.ph_low.toFixed(2)} to ${ph.ph_high.toFixed(2)})`],
     [
-      "CO2 that it stands for",
+      "CO2 to hold",
       `${co2.target_co2_mg_l} mg/L (${co2.co2_low_mg_l.toFixed(0)} to ${co2.co2_high_mg_l.toFixed(0)})`,
     ],
     ["Gas goes in by", method.label],
@@ -124,10 +124,10 @@ function answerLines({ plan }: Worked, reading: Reading): Line[] {
       "Reducer to",
       `${said(reading, working_pressure.working_pressure_bar, "working_pressure_bar", 2)} (${span(reading, working_pressure.low_bar, working_pressure.high_bar, "working_pressure_bar")})`,
     ],
-    ["Gas used", said(reading, dosing.daily_use_g_day, "daily_use_g_day", 3)],
+    ["Gas used", said(reading, dosing.daily_use_g_day, "daily_use_g_day", 2)],
     [
       "Cylinder",
-      `${said(reading, cylinder.cylinder_mass_g, "cylinder_mass_g", 2)}, ${cylinder.days.toFixed(0)} days`,
+      `${said(reading, cylinder.cylinder_mass_g, "cylinder_mass_g", 2)}, ${said(reading, cylinder.days, "days", 2)}`,
     ],
   ]
 }

@@ -2,7 +2,7 @@ import type { CurvePoint } from "@/lib/flow/pump-curve"
 import { fromBase } from "@/lib/units/convert"
 import { type Quantity, type QuantityName, quantities } from "@/lib/units/quantities"
 import { type BenchUnits, fieldSymbol, fieldUnit, metricUnits, numberOf, textOf } from "./bench-units"
-import { type BenchForm, type FieldName, fieldNames, fieldOf, startForm } from "./fields"
+import { type BenchForm, type FieldName, fieldNames, fieldOf, startForm, usStart } from "./fields"
 
 /** What a field stands for in the engine's units; undefined where an optional one is empty. */
 export type FieldValue = number | readonly CurvePoint[] | undefined
@@ -22,8 +22,10 @@ export interface Unusable {
   readonly problem: string
 }
 
+/** A new customer, with round numbers in the units of the counter. */
 export function startSheet(units: BenchUnits): Sheet {
-  return inUnits({ form: startForm, exact: {}, units: metricUnits }, units)
+  const sheet = inUnits({ form: startForm, exact: {}, units: metricUnits }, units)
+  return units.system === "us" ? withValues(sheet, usStart) : sheet
 }
 
 /** The same customer's tank written in other units. A text that cannot be read stays as it is. */

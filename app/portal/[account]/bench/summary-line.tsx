@@ -2,6 +2,7 @@
 
 import { LevelWord } from "@/app/ui/level-word"
 import { CautionMark } from "@/app/ui/marks"
+import { figures } from "@/lib/units/figures"
 import { useBench } from "./bench-context"
 import { type FieldName, fieldOf } from "./fields"
 import type { Worked } from "./work-out"
@@ -41,7 +42,7 @@ function Line({ worked }: { worked: Worked }) {
         before the lights
       </span>
       <span className="hidden text-sm text-soft xl:inline">
-        <span className="font-mono text-ink">{dosing.daily_use_g_day.toFixed(1)}</span> g a day
+        <span className="font-mono text-ink">{figures(dosing.daily_use_g_day, 2)}</span> g a day
       </span>
     </a>
   )
