@@ -3,12 +3,15 @@ import { sql } from "kysely"
 import request from "supertest"
 import { afterAll, beforeAll, describe, expect, it } from "vitest"
 import { asWorker, closePools } from "@/db"
+import { startCheckout } from "@/lib/billing"
+import { syncAccount } from "@/lib/billing/sync-account"
 import { closeAccount, deleteClosedAccounts, readClosing, reopenAccount } from "@/lib/closing"
 import { listExports, readExport, requestExport } from "@/lib/exports"
 import { createTestAccount } from "../support/account"
 import { waitForMail } from "../support/mailbox"
 import { createMember } from "../support/people"
 import { stack, takeSettings } from "../support/stack"
+import { createSubscriber, standInClient, visit } from "../support/subscriber"
 
 beforeAll(takeSettings)
 afterAll(closePools)
@@ -127,6 +130,40 @@ describe("an account that is closed", () => {
       trx.selectFrom("app_user").select("id").where("id", "=", person.id).executeTakeFirstOrThrow(),
     )
     expect(id).toBe(person.id)
+  })
+
+  it("pays no further period, pays on when it is taken back, and its subscription ends with it", async () => {
+    const subscriber = await createSubscriber()
+    const ctx = subscriber.as("owner")
+    const account_id = ctx.account_id
+    await visit((await startCheckout({ ctx, input: { plan: "storefront" } })).url, { card: "pays" })
+    // As its event would do, which the API alone does not receive.
+    const id = await asWorker(async (trx) => {
+      const { stripe_customer_id } = await trx
+        .selectFrom("account")
+        .select("stripe_customer_id")
+        .where("id", "=", account_id)
+        .executeTakeFirstOrThrow()
+      await syncAccount(trx, { account_id, customer: stripe_customer_id! }, ctx.now)
+      const stored = await trx
+        .selectFrom("subscription")
+        .select("stripe_subscription_id")
+        .where("account_id", "=", account_id)
+        .executeTakeFirstOrThrow()
+      return stored.stripe_subscription_id
+    })
+    const renews = async () => !(await standInClient().subscriptions.retrieve(id)).cancel_at_period_end
+    const input = await asWorker((trx) =>
+      trx.selectFrom("account").select("name").where("id", "=", account_id).executeTakeFirstOrThrow(),
+    )
+    await closeAccount({ ctx, input })
+    expect(await renews()).toBe(false)
+    await reopenAccount({ ctx })
+    expect(await renews()).toBe(true)
+    await closeAccount({ ctx, input })
+    const now = new Date(ctx.now.getTime() + 15 * day_ms)
+    expect(await deleteClosedAccounts({ now })).toContain(account_id)
+    expect((await standInClient().subscriptions.retrieve(id)).status).toBe("canceled")
   })
 
   it("is the only one whose ledger and trail the worker may delete", async () => {
