@@ -130,7 +130,10 @@ export function Enquiries({ account, initial, widgetNames, takesEnquiries, first
         <EraseDialog
           path={path}
           item={opened}
-          onDone={() => cache.invalidateQueries({ queryKey: [account, "enquiries"] })}
+          onDone={() => {
+            setOpenId(undefined)
+            return cache.invalidateQueries({ queryKey: [account, "enquiries"] })
+          }}
           onClose={() => setErasing(false)}
         />
       )}

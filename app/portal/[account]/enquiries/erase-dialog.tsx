@@ -49,7 +49,7 @@ export function EraseDialog({
           facts={[
             ["What goes", sentence(goes.filter((part): part is string => Boolean(part)))],
             ["What stays", "that somebody asked, when, through which widget, and the words they agreed to"],
-            ["Not ours", "mails that you have sent to the shopper, and files that were exported before"],
+            ["Out of reach", "mails that you have sent to the shopper, and files that were exported before"],
           ]}
         />
         <div className="flex flex-wrap gap-3">
