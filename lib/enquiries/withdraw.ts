@@ -25,7 +25,7 @@ export function withdrawalToken(account_id: string, enquiry_id: string): string 
  *
  * @throws TarnwrightError `not_found` when it is not one of ours or the enquiry is not kept any more.
  */
-export function showWithdrawal({ token, now }: { token: string; now: Date }): Promise<Withdrawal> {
+export async function showWithdrawal({ token, now }: { token: string; now: Date }): Promise<Withdrawal> {
   const { ctx, enquiry_id } = opened(token, now)
   return withTenant(ctx.account_id, async (trx) => {
     const { language, created_at, erased_at } = await findEnquiry(trx, ctx, enquiry_id)

@@ -331,6 +331,9 @@ describe("erasing an enquiry", () => {
     const [text = "", mac = ""] = token.split(".")
     const forged = `${Buffer.from(Buffer.from(text, "base64url").toString().replace(id, other.id)).toString("base64url")}.${mac}`
     await expect(withdraw({ token: forged, now })).rejects.toMatchObject({ code: "not_found" })
+    for (const token of [forged, "none", ""]) {
+      await expect(showWithdrawal({ token, now })).rejects.toMatchObject({ code: "not_found" })
+    }
     await withdraw({ token, now })
     const kept = await all(shopper)
     expect(kept.map(({ id, email }) => [id, email])).toEqual([
