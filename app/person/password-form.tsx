@@ -2,6 +2,7 @@
 
 import { zodResolver } from "@hookform/resolvers/zod"
 import { useQueryClient } from "@tanstack/react-query"
+import { useState } from "react"
 import { useForm } from "react-hook-form"
 import { passwordChangeInput } from "@/app/api/auth/schemas"
 import { ask, showProblem } from "@/app/ui/api"
@@ -15,12 +16,14 @@ export function PasswordForm({ email, passwordMin }: { email: string; passwordMi
     resolver: zodResolver(passwordChangeInput),
     defaultValues: { present: "", password: "" },
   })
-  const { errors, isSubmitting, isSubmitSuccessful, isDirty } = formState
+  const { errors, isSubmitting, isDirty } = formState
+  const [changed, setChanged] = useState(false)
 
   const submit = handleSubmit(async (values) => {
     try {
       await ask("POST", "/api/person/password", values)
-      reset({ present: "", password: "" }, { keepIsSubmitSuccessful: true })
+      reset()
+      setChanged(true)
       await cache.invalidateQueries({ queryKey: ["sessions"] })
     } catch (error) {
       showProblem(error, setError, ["present", "password"])
@@ -49,7 +52,7 @@ export function PasswordForm({ email, passwordMin }: { email: string; passwordMi
           Change the password
         </Button>
         <span role="status" className="text-sm text-soft">
-          {isSubmitSuccessful && !isDirty && "Changed. Your other sessions have ended."}
+          {changed && !isDirty && "Changed. Your other sessions have ended."}
         </span>
       </div>
     </form>

@@ -40,11 +40,11 @@ export async function signInAs(
 ): Promise<Visit> {
   const visited = await visit(`/signin?next=${encodeURIComponent(path)}`, options)
   await submitSignIn(visited.page, email, stack().demo.password)
-  await passSecondFactor(visited.page, email)
+  await passSecondFactor(visited.page, email, path)
   return visited
 }
 
-async function passSecondFactor(page: Page, email: string): Promise<void> {
+async function passSecondFactor(page: Page, email: string, path: string): Promise<void> {
   const inside = () => page.waitForURL((url) => !url.pathname.startsWith("/signin"))
   const code = page.getByLabel("Code", { exact: true })
   const asked = await Promise.race([inside().then(() => false), code.waitFor().then(() => true)])
@@ -59,6 +59,7 @@ async function passSecondFactor(page: Page, email: string): Promise<void> {
   if (pathname === "/person/second-factor" && next) {
     await enrol(page)
     await page.waitForURL((url) => url.pathname === next)
+    await page.goto(path)
   }
 }
 
