@@ -1,11 +1,11 @@
 import { createServer, request } from "node:http"
 import { type AddressInfo, connect, type Socket } from "node:net"
-import { ownAddress } from "../support/address"
+import { ownAddress, randomAddress } from "../support/address"
 
 /** The way of a browser that has a network address of its own, since limits count by address. */
 export async function ownWay(): Promise<{ server: string; close(): void }> {
-  const agent = ownAddress()
-  const { localAddress } = agent.options
+  const localAddress = randomAddress()
+  const agent = ownAddress(localAddress)
   const tunnels = new Set<Socket>()
   const way = createServer((incoming, outgoing) => {
     const { url = "", method, headers } = incoming
