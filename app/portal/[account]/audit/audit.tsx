@@ -35,7 +35,7 @@ const columns: readonly Column<Row>[] = [
     cell: ({ what, detail, target }) => (
       <>
         <span className="block font-medium">{what}</span>
-        <span className="block max-w-96 text-soft [overflow-wrap:anywhere]">
+        <span className="block max-w-96 min-w-56 text-soft [overflow-wrap:anywhere]">
           {detailsOf(detail) || target}
         </span>
       </>
@@ -52,10 +52,14 @@ const columns: readonly Column<Row>[] = [
 /** What changed, as words: `role viewer, email wren@…`. */
 function detailsOf(detail: Row["detail"]): string {
   return Object.entries(detail)
-    .filter(([, value]) => value !== null && value !== "")
-    .map(
-      ([name, value]) =>
-        `${name.replaceAll("_", " ")} ${typeof value === "object" ? JSON.stringify(value) : value}`,
-    )
+    .map(([name, value]) => [name.replaceAll("_", " "), wordsOf(value)])
+    .filter(([, words]) => words !== "")
+    .map((pair) => pair.join(" "))
     .join(", ")
+}
+
+function wordsOf(value: unknown): string {
+  if (value === null || value === undefined) return ""
+  if (Array.isArray(value)) return value.map(wordsOf).join(" and ")
+  return typeof value === "object" ? JSON.stringify(value) : String(value)
 }
