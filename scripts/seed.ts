@@ -12,6 +12,7 @@ import { newId } from "@/lib/id"
 import { createKey } from "@/lib/keys"
 import { createWidget, listWidgets } from "@/lib/widgets"
 import { writeHistory } from "./seed/history"
+import { fillShelf } from "./seed/shelf"
 import { writeEnquiries, writeTanks } from "./seed/shoppers"
 import { accounts, admin } from "./seed/world"
 import type { Demo } from "./stack/stack"
@@ -37,6 +38,7 @@ async function load(): Promise<void> {
   const fernhollow: Ctx = { ...owners.get("fernhollow")!, now }
   const quillback: Ctx = { ...owners.get("quillback")!, now }
   const widgetId = await makeWidget(fernhollow)
+  await fillShelf(fernhollow)
 
   const key = { scopes: ["calculate"], mode: "sandbox" } as const
   const sandbox = await createKey({

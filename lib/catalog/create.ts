@@ -24,20 +24,34 @@ export function createItem({ ctx, input }: Call<NewItem>): Promise<Item> {
   })
 }
 
-export async function insertItem(trx: Trx, ctx: Ctx, input: NewItem): Promise<Item> {
+async function insertItem(trx: Trx, ctx: Ctx, input: NewItem): Promise<Item> {
   const row = await trx
     .insertInto("catalog_item")
-    .values({
-      account_id: ctx.account_id,
-      id: newId("catalog_item"),
-      ...columnsOf(input),
-      kind: input.kind,
-      created_at: ctx.now,
-      updated_at: ctx.now,
-    })
+    .values(rowOf(ctx, input))
     .returningAll()
     .executeTakeFirstOrThrow()
   return itemOf(row)
+}
+
+/** PostgreSQL takes 65,535 parameters a statement, an item has ten. */
+const itemsPerStatement = 1_000
+
+export async function insertItems(trx: Trx, ctx: Ctx, inputs: readonly NewItem[]): Promise<void> {
+  for (let from = 0; from < inputs.length; from += itemsPerStatement) {
+    const rows = inputs.slice(from, from + itemsPerStatement).map((input) => rowOf(ctx, input))
+    await trx.insertInto("catalog_item").values(rows).execute()
+  }
+}
+
+function rowOf(ctx: Ctx, input: NewItem) {
+  return {
+    account_id: ctx.account_id,
+    id: newId("catalog_item"),
+    ...columnsOf(input),
+    kind: input.kind,
+    created_at: ctx.now,
+    updated_at: ctx.now,
+  }
 }
 
 /** The columns that an item's own fields fill. */

@@ -19,6 +19,8 @@ export interface RowError {
   /** As a spreadsheet counts: the header is row 1. */
   readonly row: number
   readonly column: string
+  /** What stands in the cell. */
+  readonly value: string
   readonly detail: string
 }
 
@@ -53,7 +55,9 @@ export function readCsv(text: string): ReadCsv {
     if (twin) errors.push({ column: "sku", detail: `Row ${twin} has the same sku.` })
     if (item?.sku) rowOfSku.set(item.sku, twin ?? row)
     if (item && errors.length === 0) read.items.push({ row, item })
-    read.errors.push(...errors.map((error) => ({ row, ...error })))
+    read.errors.push(
+      ...errors.map((error) => ({ row, value: (record[error.column] ?? "").slice(0, 80), ...error })),
+    )
   })
   return read
 }
@@ -66,7 +70,7 @@ function tableOf(text: string): string[][] {
   }
 }
 
-type CellError = Omit<RowError, "row">
+type CellError = Pick<RowError, "column" | "detail">
 
 function itemFrom(record: Record<string, string>): { item?: NewItem; errors: CellError[] } {
   const kind = itemKindNames.find((name) => name === record.kind)

@@ -1,8 +1,9 @@
 import { withTenant } from "@/db"
 import { recordAct } from "@/lib/audit"
 import type { Call } from "@/lib/context"
-import { columnsOf, insertItem } from "./create"
+import { columnsOf, insertItems } from "./create"
 import { type RowError, readCsv } from "./csv"
+import type { ItemKind } from "./kinds"
 
 export interface Import {
   readonly csv: string
@@ -12,10 +13,21 @@ export interface Import {
   readonly partial: boolean
 }
 
+/** What becomes of a good row. */
+export interface ImportedRow {
+  readonly row: number
+  readonly kind: ItemKind
+  readonly name: string
+  readonly sku: string | null
+  /** Whether it changes an item that is there. */
+  readonly changes: boolean
+}
+
 export interface ImportOutcome {
   readonly rows: number
   readonly created: number
   readonly changed: number
+  readonly good: ImportedRow[]
   readonly errors: RowError[]
   /** False on a dry run, and when a bad row held all back. */
   readonly imported: boolean
@@ -38,26 +50,37 @@ export function importItems({ ctx, input }: Call<Import>): Promise<ImportOutcome
       .where("sku", "is not", null)
       .execute()
     const idOfSku = new Map(known.map(({ id, sku }) => [sku, id]))
-    let created = 0
-    let changed = 0
-    for (const { item } of items) {
-      const id = item.sku ? idOfSku.get(item.sku) : undefined
-      if (id) changed++
-      else created++
-      if (!imported) continue
-      if (id) {
+    const knownId = ({ item }: (typeof items)[number]) => (item.sku ? idOfSku.get(item.sku) : undefined)
+    const fresh = items.filter((each) => !knownId(each))
+    const old = items.filter(knownId)
+    const [created, changed] = [fresh.length, old.length]
+    if (imported) {
+      await insertItems(
+        trx,
+        ctx,
+        fresh.map(({ item }) => item),
+      )
+      for (const each of old) {
         await trx
           .updateTable("catalog_item")
-          .set({ ...columnsOf(item), kind: item.kind, updated_at: ctx.now })
+          .set({ ...columnsOf(each.item), kind: each.item.kind, updated_at: ctx.now })
           .where("account_id", "=", ctx.account_id)
-          .where("id", "=", id)
+          .where("id", "=", knownId(each)!)
           .execute()
-      } else {
-        await insertItem(trx, ctx, item)
       }
     }
     if (imported) await recordAct(trx, ctx, { action: "catalog.imported", detail: { created, changed } })
     const bad = new Set(errors.map(({ row }) => row)).size
-    return { rows: items.length + bad, created, changed, errors, imported }
+    const good = items.map((each) => {
+      const { kind, name, sku } = each.item
+      return {
+        row: each.row,
+        kind,
+        name: name.trim(),
+        sku: sku ?? null,
+        changes: knownId(each) !== undefined,
+      }
+    })
+    return { rows: items.length + bad, created, changed, good, errors, imported }
   })
 }

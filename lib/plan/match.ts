@@ -131,9 +131,17 @@ function judgeFilter(
   if (margin < 0) return null
   return {
     fit: margin >= COMFORT.from ? "good" : "possible",
-    reason: `It moves ${figures(clean, 3)} L/h through this loop and ${figures(due, 3)} when due for cleaning; ${figures(need.clean_flow_l_h, 3)} and ${figures(need.due_flow_l_h, 3)} are needed.`,
+    reason: `It moves ${figures(clean, 3)} L/h through this loop and ${figures(due, 3)} when due for cleaning; ${neededFlow(need)}.`,
     margin,
   }
+}
+
+/** Only a reactor asks for a flow when the filter is due: every other method gets by with what is left. */
+function neededFlow({ clean_flow_l_h, due_flow_l_h }: FlowNeed): string {
+  const clean = figures(clean_flow_l_h, 3)
+  return due_flow_l_h > 0
+    ? `${clean} and ${figures(due_flow_l_h, 3)} are needed`
+    : `${clean} is needed while it is clean`
 }
 
 function judgeReactor(item: ReactorItem, job: MatchJob): Judgement | null {

@@ -61,7 +61,7 @@ describe("a catalogue's CSV", () => {
   it("tells of a sku that stands twice, and keeps the first", () => {
     const { items, errors } = readCsv(`${header}\nreducer,One,A,,,,,,,,,\nreducer,Two,A,,,,,,,,,\n`)
     expect(items).toHaveLength(1)
-    expect(errors).toEqual([{ row: 3, column: "sku", detail: "Row 2 has the same sku." }])
+    expect(errors).toEqual([{ row: 3, column: "sku", value: "A", detail: "Row 2 has the same sku." }])
   })
 
   it("refuses unknown columns, too many rows, and what is no CSV", () => {

@@ -72,6 +72,13 @@ describe("matchCatalog", () => {
     expect(same.margin).toBeCloseTo(Math.min(...shares) - 1, 9)
   })
 
+  test("says nothing of a flow that is needed when due where the method needs none", () => {
+    const reasonFor = (method: "inline_reactor" | "diffuser") =>
+      matchesOf({ ...usual, equipment: { method } }).find(({ kind }) => kind === "filter")?.reason
+    expect(reasonFor("inline_reactor")).toMatch(/; \d+ and \d+ are needed\.$/)
+    expect(reasonFor("diffuser")).toMatch(/; \d+ is needed while it is clean\.$/)
+  })
+
   test("offers reactors that hold their bubbles, and none for a filter that cannot run one", () => {
     expect(ids("reactor")).toEqual(expect.arrayContaining(["slim", "wide"]))
     expect(ids("reactor")).not.toContain("straw")

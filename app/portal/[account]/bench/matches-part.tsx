@@ -49,7 +49,7 @@ export function MatchesPart({
           {mayStock ? (
             <>
               Filters, reactors, cylinders and diffusers of{" "}
-              <Link className="link" href={`/portal/${account}/catalogue`}>
+              <Link className="link" href={`/portal/${account}/catalog`}>
                 your catalogue
               </Link>{" "}
               are solved in this very loop and ranked here.

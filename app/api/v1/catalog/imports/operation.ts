@@ -47,7 +47,8 @@ export const importCatalog = defineOperation({
     },
     response: { rows: 1, created: 1, changed: 0, imported: false, errors: [] },
   },
-  run({ input, caller: { ctx } }) {
-    return importItems({ ctx, input })
+  async run({ input, caller: { ctx } }) {
+    const { good: _, errors, ...outcome } = await importItems({ ctx, input })
+    return { ...outcome, errors: errors.map(({ row, column, detail }) => ({ row, column, detail })) }
   },
 })
