@@ -3,7 +3,7 @@ export default {
   poweredByHeader: false,
   reactStrictMode: true,
   // Loaded by Node from node_modules: native code, or a pool that must be one for all bundles of the process.
-  serverExternalPackages: ["@node-rs/argon2", "pg", "nodemailer", "pino", "graphile-worker"],
+  serverExternalPackages: ["@node-rs/argon2", "pg", "nodemailer", "pino", "graphile-worker", "@react-pdf/renderer"],
   // `forbidden()` gives a role that may not see a page a real 403.
   experimental: { authInterrupts: true },
   // `npm run check` looks at the types of the whole project; a start need not do it again.

@@ -161,7 +161,7 @@ function webhookOf(type: string, event: (typeof webhookEvents)[keyof typeof webh
 
 function requestOf(operation: AnyOperation) {
   const names = new Set([...operation.path.matchAll(/\{(\w+)\}/g)].map(([, name]) => name))
-  const params = pick(operation.request, (name) => names.has(name))
+  const params = names.size === 0 ? undefined : pick(operation.request, (name) => names.has(name))
   if (operation.method === "GET" || operation.method === "DELETE") {
     return { params, query: pick(operation.request, (name) => !names.has(name)) }
   }
@@ -193,6 +193,9 @@ async function successOf(operation: AnyOperation): Promise<Record<string, Respon
   const description =
     operation.status === 201 ? "It was made." : operation.status === 204 ? "Done." : "The answer."
   if (operation.status === 204) return { 204: { description } }
+  // OpenAPI 3.1: bytes have no schema, their media type says it all.
+  if (operation.pdf)
+    return { [operation.status]: { description, content: { "application/pdf": { schema: {} } } } }
   return {
     [operation.status]: {
       description,

@@ -373,6 +373,106 @@ export interface paths {
         patch?: never;
         trace?: never;
     };
+    "/reports": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        /**
+         * Your reports, newest first
+         * @description Needs a key with the scope `reports`. Costs nothing.
+         */
+        get: operations["listReports"];
+        put?: never;
+        /**
+         * Calculate and keep the result
+         * @description The result stays as it was calculated, with the engine's version, its cautions and its sources. Read it as JSON or as a PDF, or share a page of it that needs no key. The units cover the calculation.
+         *
+         *     Needs a key with the scope `reports`. Costs 10 units.
+         */
+        post: operations["createReport"];
+        delete?: never;
+        options?: never;
+        head?: never;
+        patch?: never;
+        trace?: never;
+    };
+    "/reports/{report_id}": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        /**
+         * A report
+         * @description Needs a key with the scope `reports`. Costs nothing.
+         */
+        get: operations["readReport"];
+        put?: never;
+        post?: never;
+        /**
+         * Delete a report
+         * @description Its shared page is gone with it.
+         *
+         *     Needs a key with the scope `reports`. Costs nothing.
+         */
+        delete: operations["deleteReport"];
+        options?: never;
+        head?: never;
+        patch?: never;
+        trace?: never;
+    };
+    "/reports/{report_id}/pdf": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        /**
+         * A report as a PDF
+         * @description Needs a key with the scope `reports`. Costs nothing.
+         */
+        get: operations["readReportPdf"];
+        put?: never;
+        post?: never;
+        delete?: never;
+        options?: never;
+        head?: never;
+        patch?: never;
+        trace?: never;
+    };
+    "/reports/{report_id}/share": {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        get?: never;
+        put?: never;
+        /**
+         * Share a report
+         * @description Gives it a page that needs no key, at an address that nobody can guess. A report that is shared keeps its address.
+         *
+         *     Needs a key with the scope `reports`. Costs nothing.
+         */
+        post: operations["shareReport"];
+        /**
+         * End the sharing of a report
+         * @description Its page is gone at once. Shared again, it gets another address.
+         *
+         *     Needs a key with the scope `reports`. Costs nothing.
+         */
+        delete: operations["unshareReport"];
+        options?: never;
+        head?: never;
+        patch?: never;
+        trace?: never;
+    };
     "/catalog/items": {
         parameters: {
             query?: never;
@@ -1165,6 +1265,54 @@ export interface components {
             /** @description In the unit of its quantity */
             value: number;
             of?: string;
+        };
+        Report: {
+            /** @description Id of the report */
+            id: string;
+            /**
+             * @description What was calculated
+             * @enum {string}
+             */
+            kind: "plan" | "carbonate_co2" | "carbonate_ph" | "gas_lead_time" | "gas_cylinder" | "gas_room_safety" | "flow_operating_point" | "flow_reactor";
+            title: string;
+            shopper: string | null;
+            /** @description Version of the engine that calculated it */
+            engine_version: string;
+            /** Format: date-time */
+            created_at: string;
+            /**
+             * Format: uri
+             * @description Page that needs no key; null while it is not shared
+             */
+            shared_url: string | null;
+        };
+        ReportWithAnswer: {
+            /** @description Id of the report */
+            id: string;
+            /**
+             * @description What was calculated
+             * @enum {string}
+             */
+            kind: "plan" | "carbonate_co2" | "carbonate_ph" | "gas_lead_time" | "gas_cylinder" | "gas_room_safety" | "flow_operating_point" | "flow_reactor";
+            title: string;
+            shopper: string | null;
+            /** @description Version of the engine that calculated it */
+            engine_version: string;
+            /** Format: date-time */
+            created_at: string;
+            /**
+             * Format: uri
+             * @description Page that needs no key; null while it is not shared
+             */
+            shared_url: string | null;
+            /** @description The question as it was asked */
+            input: {
+                [key: string]: unknown;
+            };
+            /** @description What the calculation answered, unchanged */
+            answer: {
+                [key: string]: unknown;
+            };
         };
         /** @description A part that you sell */
         CatalogItem: {
@@ -13209,6 +13357,1782 @@ export interface operations {
             };
             /** @description `media_type_unsupported`: The media type is not JSON. */
             415: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `validation_failed`: The input is not valid. */
+            422: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `rate_limited`: Too many calls. */
+            429: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `internal`: Something failed on our side. */
+            500: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `unavailable`: The service is resting for a moment. */
+            503: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+        };
+    };
+    listReports: {
+        parameters: {
+            query?: {
+                /** @description Most items of a page */
+                limit?: number;
+                /** @description `next_cursor` of the page before; absent for the first page */
+                cursor?: string;
+            };
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        requestBody?: never;
+        responses: {
+            /** @description The answer. */
+            200: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    /**
+                     * @example {
+                     *       "data": [
+                     *         {
+                     *           "id": "rep_01kbc0x7qzf0ra2w6v8n4m3h5t",
+                     *           "kind": "carbonate_co2",
+                     *           "title": "90 cm tank, first reading",
+                     *           "shopper": null,
+                     *           "engine_version": "2026.12.1",
+                     *           "created_at": "2026-12-01T09:30:00.000Z",
+                     *           "shared_url": null
+                     *         }
+                     *       ],
+                     *       "next_cursor": null
+                     *     }
+                     */
+                    "application/json": {
+                        data: components["schemas"]["Report"][];
+                        /** @description For the next page; null on the last */
+                        next_cursor: string | null;
+                    };
+                };
+            };
+            /** @description `key_in_url`: A key stands in the address. */
+            400: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `key_missing`: No key was sent. `key_unknown`: The key is not known. `key_revoked`: The key was revoked. `key_expired`: The key has expired. */
+            401: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `server_key_in_browser`: A server key was used from a browser. `origin_not_allowed`: The origin is not on the list. `address_not_allowed`: The network address is not on the list. `scope_missing`: The key lacks the scope. `account_suspended`: The account is suspended. */
+            403: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `not_found`: There is nothing here. */
+            404: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `method_not_allowed`: The method is not offered here. */
+            405: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `validation_failed`: The input is not valid. */
+            422: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `rate_limited`: Too many calls. */
+            429: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `internal`: Something failed on our side. */
+            500: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `unavailable`: The service is resting for a moment. */
+            503: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+        };
+    };
+    createReport: {
+        parameters: {
+            query?: never;
+            header?: never;
+            path?: never;
+            cookie?: never;
+        };
+        requestBody: {
+            content: {
+                /**
+                 * @example {
+                 *       "kind": "carbonate_co2",
+                 *       "input": {
+                 *         "ph": 6.8,
+                 *         "kh_dkh": 4
+                 *       },
+                 *       "title": "90 cm tank, first reading"
+                 *     }
+                 */
+                "application/json": {
+                    /** @enum {string} */
+                    kind: "plan";
+                    /** @description Body of `POST /plan` */
+                    input: {
+                        /** @description Volume of the water, in L */
+                        volume_l?: number;
+                        /** @description Open water surface, in m² */
+                        surface_area_m2?: number;
+                        /** @description Inner length of the tank, in cm */
+                        length_cm?: number;
+                        /** @description Inner width of the tank, front to back, in cm */
+                        width_cm?: number;
+                        /** @description Height of the water in the tank, in cm */
+                        height_cm?: number;
+                        /** @description Carbonate hardness in German degrees: the alkalinity that a KH test titrates, in dKH */
+                        kh_dkh: number;
+                        /**
+                         * @description Water temperature, in °C
+                         * @default 25
+                         */
+                        temperature_c?: number;
+                        /**
+                         * @description CO2 in the room's dry air; outdoors 425, occupied rooms 600 to 1,500, in ppm
+                         * @default 425
+                         */
+                        air_co2_ppm?: number;
+                        /**
+                         * @description Height above the sea, in m
+                         * @default 0
+                         */
+                        altitude_m?: number;
+                        /** @description Ionic strength of the water, in mol/L */
+                        ionic_strength_mol_l?: number;
+                        /** @description Electric conductivity, referred to 25 °C, in µS/cm */
+                        conductivity_us_cm?: number;
+                        /** @description Dissolved solids, as a meter shows them or weighed, in mg/L */
+                        tds_mg_l?: number;
+                        /** @description What the TDS meter multiplies its conductivity with, commonly 0.5 to 0.7 */
+                        tds_factor?: number;
+                        /** @description Total hardness (calcium and magnesium) in German degrees, in dGH */
+                        gh_dgh?: number;
+                        /** @description Phosphate as PO4, in mg/L */
+                        phosphate_mg_l?: number;
+                        /**
+                         * @description CO2 that the tank should hold while the lights are on; 20 to 30 is usual, in mg/L
+                         * @default 30
+                         */
+                        target_co2_mg_l?: number;
+                        /**
+                         * @description How the surface moves; two pH readings of a night (`overnight`) replace the guess
+                         * @default rippled
+                         * @enum {string}
+                         */
+                        agitation?: "calm" | "rippled" | "agitated" | "strong";
+                        /** @description Two pH readings of one night with gas and light off */
+                        overnight?: {
+                            /** @description pH when the light and the gas went off, in pH */
+                            start_ph: number;
+                            /** @description pH later in the same night, gas still off, in pH */
+                            end_ph: number;
+                            /** @description Hours between the two readings, in h */
+                            elapsed_h: number;
+                        };
+                        /** @description Share of the gas fed that dissolves in the water */
+                        dissolution_efficiency?: number;
+                        /** @description Diameter of the diffuser's bubbles, in mm */
+                        bubble_diameter_mm?: number;
+                        /** @description CO2 that the tank rests at without gas; commonly 2 to 4 with fish and soil, in mg/L */
+                        rest_co2_mg_l?: number;
+                        /**
+                         * @description Standard error of the pH reading: 0.02 bench meter, 0.1 pen or probe, 0.2 liquid test, in pH
+                         * @default 0.1
+                         */
+                        ph_error?: number;
+                        /**
+                         * @description Standard error of the KH reading; a drop test's step over 2 is on the safe side, in dKH
+                         * @default 0.5
+                         */
+                        kh_error_dkh?: number;
+                        /**
+                         * @description Standard error of the temperature, in °C
+                         * @default 0.5
+                         */
+                        temperature_error_c?: number;
+                        /** @description Dissolved organic carbon: tannins of peat, leaves and driftwood, in mg/L */
+                        doc_mg_l?: number;
+                        /** @description Depth of soil or gravel, in cm */
+                        substrate_depth_cm?: number;
+                        /** @description Soil or gravel as poured, in L */
+                        substrate_l?: number;
+                        /** @description Stones and wood under water, in L */
+                        hardscape_l?: number;
+                        /**
+                         * @description How much CO2 the plants want
+                         * @default usual
+                         * @enum {string}
+                         */
+                        plant_demand?: "sparse" | "usual" | "dense";
+                        /** @description CO2 that the plants take in light: 0.3 sparse, 1 usual, 2 dense and bright, in mg/(L·h) */
+                        plant_uptake_mg_l_h?: number;
+                        /**
+                         * @description Hours of light a day, in h
+                         * @default 8
+                         */
+                        photoperiod_h?: number;
+                        /**
+                         * @description Hour of the day when the lights come on, in h
+                         * @default 10
+                         */
+                        lights_on_h?: number;
+                        /**
+                         * @description Minutes before the lights go off that the gas closes, in min
+                         * @default 60
+                         */
+                        close_before_lights_off_min?: number;
+                        /** @description Minutes before the lights that the gas should open, in min */
+                        wished_lead_min?: number;
+                        /**
+                         * @description Share of the target that counts as reached when the lights come on
+                         * @default 0.95
+                         */
+                        reach_fraction?: number;
+                        pump: {
+                            /** @description Pump flow at no head, in L/h */
+                            max_flow_l_h: number;
+                            /** @description Pump head at no flow, in m */
+                            max_head_m: number;
+                            /**
+                             * @description Pump speed over its full speed
+                             * @default 1
+                             */
+                            speed_ratio?: number;
+                        } | {
+                            points: {
+                                /** @description Flow of water, in L/h */
+                                flow_l_h: number;
+                                /** @description Head of water, in m */
+                                head_m: number;
+                            }[];
+                            /**
+                             * @description Pump speed over its full speed
+                             * @default 1
+                             */
+                            speed_ratio?: number;
+                        };
+                        hose: {
+                            /** @description Inner diameter, in mm */
+                            inner_diameter_mm: number;
+                            /** @description Length of hose, in m */
+                            length_m: number;
+                            /**
+                             * @description Roughness of the hose's inner wall, in mm
+                             * @default 0.0015
+                             */
+                            roughness_mm?: number;
+                            /**
+                             * @description Friction of the hose over that of a smooth one: 1 smooth, about 2.5 corrugated
+                             * @default 1
+                             */
+                            corrugation_factor?: number;
+                        };
+                        /** @description The return side, where its bore differs */
+                        return_hose?: {
+                            /** @description Inner diameter, in mm */
+                            inner_diameter_mm: number;
+                            /** @description Length of hose, in m */
+                            length_m: number;
+                            /**
+                             * @description Roughness of the hose's inner wall, in mm
+                             * @default 0.0015
+                             */
+                            roughness_mm?: number;
+                            /**
+                             * @description Friction of the hose over that of a smooth one: 1 smooth, about 2.5 corrugated
+                             * @default 1
+                             */
+                            corrugation_factor?: number;
+                        };
+                        /**
+                         * @default [
+                         *       {
+                         *         "kind": "intake_strainer"
+                         *       },
+                         *       {
+                         *         "kind": "barb",
+                         *         "count": 4
+                         *       },
+                         *       {
+                         *         "kind": "quick_release"
+                         *       },
+                         *       {
+                         *         "kind": "bend",
+                         *         "count": 4
+                         *       },
+                         *       {
+                         *         "kind": "lily_outflow"
+                         *       }
+                         *     ]
+                         */
+                        elements?: {
+                            /** @enum {string} */
+                            kind: "intake_strainer" | "intake_pipe" | "intake_flush" | "intake_rounded" | "barb" | "expansion" | "contraction" | "elbow" | "bend" | "quick_release" | "lily_outflow" | "spray_bar" | "exit" | "heater" | "uv" | "inline_diffuser" | "reactor" | "reactor_with_internals" | "other";
+                            /** @description Loss coefficient K in h = K v²/2g */
+                            k?: number;
+                            /** @description Inner diameter, in mm */
+                            inner_diameter_mm?: number;
+                            /** @description Whether it sits in the return hose */
+                            in_return?: boolean;
+                            /** @description How many of them */
+                            count?: number;
+                            /** @description Holes of a spray bar */
+                            hole_count?: number;
+                            /** @description Diameter of a spray bar's hole, in mm */
+                            hole_diameter_mm?: number;
+                        }[];
+                        /**
+                         * @description State of the filter media: 0 clean, 0.3 loaded, 0.7 due for cleaning, 1 blocked
+                         * @default 0
+                         */
+                        clogging?: number;
+                        /**
+                         * @description Height of the outflow above the water, in m
+                         * @default 0
+                         */
+                        lift_m?: number;
+                        /**
+                         * @description Share of the advertised flow with clean media and no hose; 1 if advertised with media
+                         * @default 0.8
+                         */
+                        clean_media_fraction?: number;
+                        /**
+                         * @description Depth of water above where the gas goes in, in m
+                         * @default 0.4
+                         */
+                        depth_m?: number;
+                        /**
+                         * @description Cracking pressure of the check valve, 0.05 to 0.35, in bar
+                         * @default 0.15
+                         */
+                        check_valve_bar?: number;
+                        /**
+                         * @description Length of the gas line, in m
+                         * @default 2
+                         */
+                        line_length_m?: number;
+                        /**
+                         * @description Inner diameter of the gas line, in mm
+                         * @default 2.5
+                         */
+                        line_diameter_mm?: number;
+                        /**
+                         * @description Inner diameter of the tube in the bubble counter, in mm
+                         * @default 2.5
+                         */
+                        outlet_diameter_mm?: number;
+                        /** @description CO2 in a full cylinder, in g */
+                        cylinder_mass_g?: number;
+                        /** @description Several to compare */
+                        cylinders?: {
+                            name?: string;
+                            /** @description CO2 in a full cylinder, in g */
+                            cylinder_mass_g: number;
+                            /** @description CO2 still in the cylinder, by weighing, in g */
+                            remaining_g?: number;
+                            /** @description CO2 in the full cylinder over its water capacity, 0.66 to 0.76, in kg/L */
+                            fill_ratio_kg_l?: number;
+                            /** @description Test pressure stamped on the cylinder, 190 or 250, in bar */
+                            test_pressure_bar?: number;
+                            /** @description Price of the cylinder with its first charge */
+                            price?: number;
+                            /** @description Price of a refill */
+                            refill_price?: number;
+                        }[];
+                        /** @description Price of a refill */
+                        refill_price?: number;
+                        /**
+                         * @description Share of the charge that reaches the tank; the rest is leaks, purging and the last gas
+                         * @default 0.95
+                         */
+                        usable_fraction?: number;
+                        /**
+                         * @description Temperature of the cylinder, in °C
+                         * @default 22
+                         */
+                        ambient_c?: number;
+                        /**
+                         * @description Pressure below which the reducer no longer regulates, in bar
+                         * @default 6
+                         */
+                        cut_off_bar_abs?: number;
+                        /** @description Volume of the room, in m³ */
+                        room_volume_m3?: number;
+                        /** @description Length of the room, in m */
+                        room_length_m?: number;
+                        /** @description Width of the room, in m */
+                        room_width_m?: number;
+                        /** @description Height of the room, in m */
+                        room_height_m?: number;
+                        /**
+                         * @description How often the room's air changes an hour: 0.2 tight, 0.5 usual, 2 open window, in 1/h
+                         * @default 0.5
+                         */
+                        air_changes_per_h?: number;
+                        /**
+                         * @description Temperature of the room, in °C
+                         * @default 20
+                         */
+                        room_c?: number;
+                        /**
+                         * @description CO2 in the room before the release, in ppm
+                         * @default 425
+                         */
+                        background_ppm?: number;
+                        /** @description What is owned already or insisted on */
+                        equipment?: {
+                            /** @enum {string} */
+                            method?: "inline_reactor" | "diffuser" | "inline_diffuser";
+                            reactor?: {
+                                /** @description Bore of the reactor's body, in mm */
+                                body_diameter_mm: number;
+                                /** @description Free length of the body, in mm */
+                                body_length_mm: number;
+                                /** @description Loss coefficient K in h = K v²/2g */
+                                k?: number;
+                                /** @description Bore of the reactor's inlet, in mm */
+                                nozzle_diameter_mm?: number;
+                                /**
+                                 * @description Absolute pressure of the water in the reactor, in bar
+                                 * @default 1.12
+                                 */
+                                water_pressure_bar_abs?: number;
+                                /**
+                                 * @description Share of the loop's flow that goes around the reactor
+                                 * @default 0
+                                 */
+                                bypass_fraction?: number;
+                                /**
+                                 * @description Largest bubble that the inlet jet makes, in mm
+                                 * @default 3
+                                 */
+                                feed_bubble_diameter_mm?: number;
+                            };
+                            /** @enum {string} */
+                            control?: "controller" | "timer";
+                            /** @description Largest pores of the ceramic or membrane, in µm */
+                            pore_diameter_um?: number;
+                        };
+                        /**
+                         * @description Match the parts of your catalogue
+                         * @default false
+                         */
+                        use_catalog?: boolean;
+                    };
+                    /** @description Heading of the sheet */
+                    title?: string;
+                    /** @description Whom it is for, as you write it; never on the shared page */
+                    shopper?: string;
+                } | {
+                    /** @enum {string} */
+                    kind: "carbonate_co2";
+                    /** @description Body of `POST /carbonate/co2` */
+                    input: {
+                        /** @description pH at the water's own temperature, in pH */
+                        ph: number;
+                        /** @description Carbonate hardness in German degrees: the alkalinity that a KH test titrates, in dKH */
+                        kh_dkh: number;
+                        /**
+                         * @description Water temperature, in °C
+                         * @default 25
+                         */
+                        temperature_c?: number;
+                        /** @description Ionic strength of the water, in mol/L */
+                        ionic_strength_mol_l?: number;
+                        /** @description Electric conductivity, referred to 25 °C, in µS/cm */
+                        conductivity_us_cm?: number;
+                        /** @description Dissolved solids, as a meter shows them or weighed, in mg/L */
+                        tds_mg_l?: number;
+                        /** @description What the TDS meter multiplies its conductivity with, commonly 0.5 to 0.7 */
+                        tds_factor?: number;
+                        /** @description Total hardness (calcium and magnesium) in German degrees, in dGH */
+                        gh_dgh?: number;
+                        /** @description Phosphate as PO4, in mg/L */
+                        phosphate_mg_l?: number;
+                        /** @description Dissolved organic carbon: tannins of peat, leaves and driftwood, in mg/L */
+                        doc_mg_l?: number;
+                        /**
+                         * @description CO2 in the room's dry air; outdoors 425, occupied rooms 600 to 1,500, in ppm
+                         * @default 425
+                         */
+                        air_co2_ppm?: number;
+                        /**
+                         * @description Height above the sea, in m
+                         * @default 0
+                         */
+                        altitude_m?: number;
+                        /**
+                         * @description Standard error of the temperature, in °C
+                         * @default 0.5
+                         */
+                        temperature_error_c?: number;
+                        /**
+                         * @description Standard error of the pH reading: 0.02 bench meter, 0.1 pen or probe, 0.2 liquid test, in pH
+                         * @default 0.1
+                         */
+                        ph_error?: number;
+                        /**
+                         * @description Standard error of the KH reading; a drop test's step over 2 is on the safe side, in dKH
+                         * @default 0.5
+                         */
+                        kh_error_dkh?: number;
+                    };
+                    /** @description Heading of the sheet */
+                    title?: string;
+                    /** @description Whom it is for, as you write it; never on the shared page */
+                    shopper?: string;
+                } | {
+                    /** @enum {string} */
+                    kind: "carbonate_ph";
+                    /** @description Body of `POST /carbonate/ph` */
+                    input: {
+                        /** @description Free CO2 dissolved in the water, in mg/L */
+                        co2_mg_l: number;
+                        /** @description Carbonate hardness in German degrees: the alkalinity that a KH test titrates, in dKH */
+                        kh_dkh: number;
+                        /**
+                         * @description Water temperature, in °C
+                         * @default 25
+                         */
+                        temperature_c?: number;
+                        /** @description Ionic strength of the water, in mol/L */
+                        ionic_strength_mol_l?: number;
+                        /** @description Electric conductivity, referred to 25 °C, in µS/cm */
+                        conductivity_us_cm?: number;
+                        /** @description Dissolved solids, as a meter shows them or weighed, in mg/L */
+                        tds_mg_l?: number;
+                        /** @description What the TDS meter multiplies its conductivity with, commonly 0.5 to 0.7 */
+                        tds_factor?: number;
+                        /** @description Total hardness (calcium and magnesium) in German degrees, in dGH */
+                        gh_dgh?: number;
+                        /** @description Phosphate as PO4, in mg/L */
+                        phosphate_mg_l?: number;
+                        /** @description Dissolved organic carbon: tannins of peat, leaves and driftwood, in mg/L */
+                        doc_mg_l?: number;
+                        /**
+                         * @description CO2 in the room's dry air; outdoors 425, occupied rooms 600 to 1,500, in ppm
+                         * @default 425
+                         */
+                        air_co2_ppm?: number;
+                        /**
+                         * @description Height above the sea, in m
+                         * @default 0
+                         */
+                        altitude_m?: number;
+                        /**
+                         * @description Standard error of the temperature, in °C
+                         * @default 0.5
+                         */
+                        temperature_error_c?: number;
+                        /**
+                         * @description Standard error of the pH reading: 0.02 bench meter, 0.1 pen or probe, 0.2 liquid test, in pH
+                         * @default 0.1
+                         */
+                        ph_error?: number;
+                        /**
+                         * @description Standard error of the KH reading; a drop test's step over 2 is on the safe side, in dKH
+                         * @default 0.5
+                         */
+                        kh_error_dkh?: number;
+                    };
+                    /** @description Heading of the sheet */
+                    title?: string;
+                    /** @description Whom it is for, as you write it; never on the shared page */
+                    shopper?: string;
+                } | {
+                    /** @enum {string} */
+                    kind: "gas_lead_time";
+                    /** @description Body of `POST /gas/lead-time` */
+                    input: {
+                        /** @description Volume of the water, in L */
+                        volume_l?: number;
+                        /** @description Open water surface, in m² */
+                        surface_area_m2?: number;
+                        /** @description Inner length of the tank, in cm */
+                        length_cm?: number;
+                        /** @description Inner width of the tank, front to back, in cm */
+                        width_cm?: number;
+                        /** @description Height of the water in the tank, in cm */
+                        height_cm?: number;
+                        /** @description Carbonate hardness in German degrees: the alkalinity that a KH test titrates, in dKH */
+                        kh_dkh: number;
+                        /**
+                         * @description Water temperature, in °C
+                         * @default 25
+                         */
+                        temperature_c?: number;
+                        /**
+                         * @description CO2 in the room's dry air; outdoors 425, occupied rooms 600 to 1,500, in ppm
+                         * @default 425
+                         */
+                        air_co2_ppm?: number;
+                        /**
+                         * @description Height above the sea, in m
+                         * @default 0
+                         */
+                        altitude_m?: number;
+                        /** @description Ionic strength of the water, in mol/L */
+                        ionic_strength_mol_l?: number;
+                        /** @description Electric conductivity, referred to 25 °C, in µS/cm */
+                        conductivity_us_cm?: number;
+                        /** @description Dissolved solids, as a meter shows them or weighed, in mg/L */
+                        tds_mg_l?: number;
+                        /** @description What the TDS meter multiplies its conductivity with, commonly 0.5 to 0.7 */
+                        tds_factor?: number;
+                        /** @description Total hardness (calcium and magnesium) in German degrees, in dGH */
+                        gh_dgh?: number;
+                        /** @description Phosphate as PO4, in mg/L */
+                        phosphate_mg_l?: number;
+                        /**
+                         * @description CO2 that the tank should hold while the lights are on; 20 to 30 is usual, in mg/L
+                         * @default 30
+                         */
+                        target_co2_mg_l?: number;
+                        /**
+                         * @description How the surface moves; two pH readings of a night (`overnight`) replace the guess
+                         * @default rippled
+                         * @enum {string}
+                         */
+                        agitation?: "calm" | "rippled" | "agitated" | "strong";
+                        /** @description Two pH readings of one night with gas and light off */
+                        overnight?: {
+                            /** @description pH when the light and the gas went off, in pH */
+                            start_ph: number;
+                            /** @description pH later in the same night, gas still off, in pH */
+                            end_ph: number;
+                            /** @description Hours between the two readings, in h */
+                            elapsed_h: number;
+                        };
+                        /**
+                         * @description How the gas gets into the water
+                         * @default inline_reactor
+                         * @enum {string}
+                         */
+                        method?: "inline_reactor" | "diffuser" | "inline_diffuser";
+                        /** @description Share of the gas fed that dissolves in the water */
+                        dissolution_efficiency?: number;
+                        /** @description Diameter of the diffuser's bubbles, in mm */
+                        bubble_diameter_mm?: number;
+                        /** @description Depth of water above where the gas goes in, in m */
+                        depth_m?: number;
+                        /**
+                         * @description CO2 that the plants take in light: 0.3 sparse, 1 usual, 2 dense and bright, in mg/(L·h)
+                         * @default 1
+                         */
+                        plant_uptake_mg_l_h?: number;
+                        /** @description CO2 that the tank rests at without gas; commonly 2 to 4 with fish and soil, in mg/L */
+                        rest_co2_mg_l?: number;
+                        /**
+                         * @description Hours of light a day, in h
+                         * @default 8
+                         */
+                        photoperiod_h?: number;
+                        /**
+                         * @description Minutes before the lights go off that the gas closes, in min
+                         * @default 60
+                         */
+                        close_before_lights_off_min?: number;
+                        /**
+                         * @description Share of the target that counts as reached when the lights come on
+                         * @default 0.95
+                         */
+                        reach_fraction?: number;
+                        /** @description CO2 fed, in mg/min */
+                        feed_mg_min?: number;
+                        /** @description CO2 fed, as gas at 1 atm and the water's temperature, in mL/min */
+                        feed_ml_min?: number;
+                        /**
+                         * @description Feed over the hold feed
+                         * @default 4.5
+                         */
+                        feed_ratio?: number;
+                    };
+                    /** @description Heading of the sheet */
+                    title?: string;
+                    /** @description Whom it is for, as you write it; never on the shared page */
+                    shopper?: string;
+                } | {
+                    /** @enum {string} */
+                    kind: "gas_cylinder";
+                    /** @description Body of `POST /gas/cylinder` */
+                    input: {
+                        /** @description CO2 used a day, in g/day */
+                        daily_use_g_day: number;
+                        /** @description CO2 in a full cylinder, in g */
+                        cylinder_mass_g?: number;
+                        name?: string;
+                        /** @description CO2 still in the cylinder, by weighing, in g */
+                        remaining_g?: number;
+                        /** @description CO2 in the full cylinder over its water capacity, 0.66 to 0.76, in kg/L */
+                        fill_ratio_kg_l?: number;
+                        /** @description Test pressure stamped on the cylinder, 190 or 250, in bar */
+                        test_pressure_bar?: number;
+                        /** @description Price of the cylinder with its first charge */
+                        price?: number;
+                        /** @description Price of a refill */
+                        refill_price?: number;
+                        /** @description Several to compare, in place of `cylinder_mass_g` */
+                        cylinders?: {
+                            /** @description CO2 in a full cylinder, in g */
+                            cylinder_mass_g: number;
+                            name?: string;
+                            /** @description CO2 still in the cylinder, by weighing, in g */
+                            remaining_g?: number;
+                            /** @description CO2 in the full cylinder over its water capacity, 0.66 to 0.76, in kg/L */
+                            fill_ratio_kg_l?: number;
+                            /** @description Test pressure stamped on the cylinder, 190 or 250, in bar */
+                            test_pressure_bar?: number;
+                            /** @description Price of the cylinder with its first charge */
+                            price?: number;
+                            /** @description Price of a refill */
+                            refill_price?: number;
+                        }[];
+                        /**
+                         * @description Share of the charge that reaches the tank; the rest is leaks, purging and the last gas
+                         * @default 0.95
+                         */
+                        usable_fraction?: number;
+                        /**
+                         * @description Temperature of the cylinder, in °C
+                         * @default 22
+                         */
+                        ambient_c?: number;
+                        /**
+                         * @description Pressure below which the reducer no longer regulates, in bar
+                         * @default 6
+                         */
+                        cut_off_bar_abs?: number;
+                    };
+                    /** @description Heading of the sheet */
+                    title?: string;
+                    /** @description Whom it is for, as you write it; never on the shared page */
+                    shopper?: string;
+                } | {
+                    /** @enum {string} */
+                    kind: "gas_room_safety";
+                    /** @description Body of `POST /gas/room-safety` */
+                    input: {
+                        /** @description CO2 in a full cylinder, in g */
+                        cylinder_mass_g: number;
+                        /** @description Volume of the room, in m³ */
+                        room_volume_m3?: number;
+                        /** @description Length of the room, in m */
+                        room_length_m?: number;
+                        /** @description Width of the room, in m */
+                        room_width_m?: number;
+                        /** @description Height of the room, in m */
+                        room_height_m?: number;
+                        /**
+                         * @description How often the room's air changes an hour: 0.2 tight, 0.5 usual, 2 open window, in 1/h
+                         * @default 0.5
+                         */
+                        air_changes_per_h?: number;
+                        /**
+                         * @description Temperature of the room, in °C
+                         * @default 20
+                         */
+                        room_c?: number;
+                        /**
+                         * @description CO2 in the room before the release, in ppm
+                         * @default 425
+                         */
+                        background_ppm?: number;
+                        /** @description CO2 leaking into the room, in g/h */
+                        leak_g_h?: number;
+                        /** @description CO2 used a day, in g/day */
+                        daily_use_g_day?: number;
+                    };
+                    /** @description Heading of the sheet */
+                    title?: string;
+                    /** @description Whom it is for, as you write it; never on the shared page */
+                    shopper?: string;
+                } | {
+                    /** @enum {string} */
+                    kind: "flow_operating_point";
+                    /** @description Body of `POST /flow/operating-point` */
+                    input: {
+                        pump: {
+                            /** @description Pump flow at no head, in L/h */
+                            max_flow_l_h: number;
+                            /** @description Pump head at no flow, in m */
+                            max_head_m: number;
+                            /**
+                             * @description Pump speed over its full speed
+                             * @default 1
+                             */
+                            speed_ratio?: number;
+                        } | {
+                            points: {
+                                /** @description Flow of water, in L/h */
+                                flow_l_h: number;
+                                /** @description Head of water, in m */
+                                head_m: number;
+                            }[];
+                            /**
+                             * @description Pump speed over its full speed
+                             * @default 1
+                             */
+                            speed_ratio?: number;
+                        };
+                        hose: {
+                            /** @description Inner diameter, in mm */
+                            inner_diameter_mm: number;
+                            /** @description Length of hose, in m */
+                            length_m: number;
+                            /**
+                             * @description Roughness of the hose's inner wall, in mm
+                             * @default 0.0015
+                             */
+                            roughness_mm?: number;
+                            /**
+                             * @description Friction of the hose over that of a smooth one: 1 smooth, about 2.5 corrugated
+                             * @default 1
+                             */
+                            corrugation_factor?: number;
+                        };
+                        /** @description The return side, where its bore differs */
+                        return_hose?: {
+                            /** @description Inner diameter, in mm */
+                            inner_diameter_mm: number;
+                            /** @description Length of hose, in m */
+                            length_m: number;
+                            /**
+                             * @description Roughness of the hose's inner wall, in mm
+                             * @default 0.0015
+                             */
+                            roughness_mm?: number;
+                            /**
+                             * @description Friction of the hose over that of a smooth one: 1 smooth, about 2.5 corrugated
+                             * @default 1
+                             */
+                            corrugation_factor?: number;
+                        };
+                        elements: {
+                            /** @enum {string} */
+                            kind: "intake_strainer" | "intake_pipe" | "intake_flush" | "intake_rounded" | "barb" | "expansion" | "contraction" | "elbow" | "bend" | "quick_release" | "lily_outflow" | "spray_bar" | "exit" | "heater" | "uv" | "inline_diffuser" | "reactor" | "reactor_with_internals" | "other";
+                            /** @description Loss coefficient K in h = K v²/2g */
+                            k?: number;
+                            /** @description Inner diameter, in mm */
+                            inner_diameter_mm?: number;
+                            /** @description Whether it sits in the return hose */
+                            in_return?: boolean;
+                            /** @description How many of them */
+                            count?: number;
+                            /** @description Holes of a spray bar */
+                            hole_count?: number;
+                            /** @description Diameter of a spray bar's hole, in mm */
+                            hole_diameter_mm?: number;
+                        }[];
+                        /** @description Volume of the water, in L */
+                        volume_l?: number;
+                        /**
+                         * @description Water temperature, in °C
+                         * @default 25
+                         */
+                        temperature_c?: number;
+                        /**
+                         * @description State of the filter media: 0 clean, 0.3 loaded, 0.7 due for cleaning, 1 blocked
+                         * @default 0
+                         */
+                        clogging?: number;
+                        /**
+                         * @description Height of the outflow above the water, in m
+                         * @default 0
+                         */
+                        lift_m?: number;
+                        /**
+                         * @description Share of the advertised flow with clean media and no hose; 1 if advertised with media
+                         * @default 0.8
+                         */
+                        clean_media_fraction?: number;
+                    };
+                    /** @description Heading of the sheet */
+                    title?: string;
+                    /** @description Whom it is for, as you write it; never on the shared page */
+                    shopper?: string;
+                } | {
+                    /** @enum {string} */
+                    kind: "flow_reactor";
+                    /** @description Body of `POST /flow/reactor` */
+                    input: {
+                        pump: {
+                            /** @description Pump flow at no head, in L/h */
+                            max_flow_l_h: number;
+                            /** @description Pump head at no flow, in m */
+                            max_head_m: number;
+                            /**
+                             * @description Pump speed over its full speed
+                             * @default 1
+                             */
+                            speed_ratio?: number;
+                        } | {
+                            points: {
+                                /** @description Flow of water, in L/h */
+                                flow_l_h: number;
+                                /** @description Head of water, in m */
+                                head_m: number;
+                            }[];
+                            /**
+                             * @description Pump speed over its full speed
+                             * @default 1
+                             */
+                            speed_ratio?: number;
+                        };
+                        hose: {
+                            /** @description Inner diameter, in mm */
+                            inner_diameter_mm: number;
+                            /** @description Length of hose, in m */
+                            length_m: number;
+                            /**
+                             * @description Roughness of the hose's inner wall, in mm
+                             * @default 0.0015
+                             */
+                            roughness_mm?: number;
+                            /**
+                             * @description Friction of the hose over that of a smooth one: 1 smooth, about 2.5 corrugated
+                             * @default 1
+                             */
+                            corrugation_factor?: number;
+                        };
+                        /** @description The return side, where its bore differs */
+                        return_hose?: {
+                            /** @description Inner diameter, in mm */
+                            inner_diameter_mm: number;
+                            /** @description Length of hose, in m */
+                            length_m: number;
+                            /**
+                             * @description Roughness of the hose's inner wall, in mm
+                             * @default 0.0015
+                             */
+                            roughness_mm?: number;
+                            /**
+                             * @description Friction of the hose over that of a smooth one: 1 smooth, about 2.5 corrugated
+                             * @default 1
+                             */
+                            corrugation_factor?: number;
+                        };
+                        elements: {
+                            /** @enum {string} */
+                            kind: "intake_strainer" | "intake_pipe" | "intake_flush" | "intake_rounded" | "barb" | "expansion" | "contraction" | "elbow" | "bend" | "quick_release" | "lily_outflow" | "spray_bar" | "exit" | "heater" | "uv" | "inline_diffuser" | "reactor" | "reactor_with_internals" | "other";
+                            /** @description Loss coefficient K in h = K v²/2g */
+                            k?: number;
+                            /** @description Inner diameter, in mm */
+                            inner_diameter_mm?: number;
+                            /** @description Whether it sits in the return hose */
+                            in_return?: boolean;
+                            /** @description How many of them */
+                            count?: number;
+                            /** @description Holes of a spray bar */
+                            hole_count?: number;
+                            /** @description Diameter of a spray bar's hole, in mm */
+                            hole_diameter_mm?: number;
+                        }[];
+                        /** @description Volume of the water, in L */
+                        volume_l?: number;
+                        /**
+                         * @description Water temperature, in °C
+                         * @default 25
+                         */
+                        temperature_c?: number;
+                        /**
+                         * @description State of the filter media: 0 clean, 0.3 loaded, 0.7 due for cleaning, 1 blocked
+                         * @default 0
+                         */
+                        clogging?: number;
+                        /**
+                         * @description Height of the outflow above the water, in m
+                         * @default 0
+                         */
+                        lift_m?: number;
+                        /**
+                         * @description Share of the advertised flow with clean media and no hose; 1 if advertised with media
+                         * @default 0.8
+                         */
+                        clean_media_fraction?: number;
+                        reactor: {
+                            /** @description Bore of the reactor's body, in mm */
+                            body_diameter_mm: number;
+                            /** @description Free length of the body, in mm */
+                            body_length_mm: number;
+                            /** @description Loss coefficient K in h = K v²/2g */
+                            k?: number;
+                            /** @description Bore of the reactor's inlet, in mm */
+                            nozzle_diameter_mm?: number;
+                            /**
+                             * @description Absolute pressure of the water in the reactor, in bar
+                             * @default 1.12
+                             */
+                            water_pressure_bar_abs?: number;
+                            /**
+                             * @description Share of the loop's flow that goes around the reactor
+                             * @default 0
+                             */
+                            bypass_fraction?: number;
+                            /**
+                             * @description Largest bubble that the inlet jet makes, in mm
+                             * @default 3
+                             */
+                            feed_bubble_diameter_mm?: number;
+                        };
+                        /** @description CO2 fed, in mg/min */
+                        feed_mg_min: number;
+                        /**
+                         * @description CO2 entering the reactor, in mg/L
+                         * @default 30
+                         */
+                        inlet_co2_mg_l?: number;
+                    };
+                    /** @description Heading of the sheet */
+                    title?: string;
+                    /** @description Whom it is for, as you write it; never on the shared page */
+                    shopper?: string;
+                };
+            };
+        };
+        responses: {
+            /** @description It was made. */
+            201: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    /**
+                     * @example {
+                     *       "id": "rep_01kbc0x7qzf0ra2w6v8n4m3h5t",
+                     *       "kind": "carbonate_co2",
+                     *       "title": "90 cm tank, first reading",
+                     *       "shopper": null,
+                     *       "engine_version": "2026.12.1",
+                     *       "created_at": "2026-12-01T09:30:00.000Z",
+                     *       "shared_url": null,
+                     *       "input": {
+                     *         "ph": 6.8,
+                     *         "kh_dkh": 4
+                     *       },
+                     *       "answer": {
+                     *         "result": {
+                     *           "co2_mg_l": 21
+                     *         }
+                     *       }
+                     *     }
+                     */
+                    "application/json": components["schemas"]["ReportWithAnswer"];
+                };
+            };
+            /** @description `key_in_url`: A key stands in the address. `malformed_json`: The body is not JSON. */
+            400: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `key_missing`: No key was sent. `key_unknown`: The key is not known. `key_revoked`: The key was revoked. `key_expired`: The key has expired. */
+            401: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `quota_reached`: The units of this period are used up. */
+            402: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `server_key_in_browser`: A server key was used from a browser. `origin_not_allowed`: The origin is not on the list. `address_not_allowed`: The network address is not on the list. `scope_missing`: The key lacks the scope. `account_suspended`: The account is suspended. */
+            403: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `not_found`: There is nothing here. */
+            404: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `method_not_allowed`: The method is not offered here. */
+            405: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `body_too_large`: The body is too large. */
+            413: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `media_type_unsupported`: The media type is not JSON. */
+            415: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `validation_failed`: The input is not valid. `out_of_domain`: The input is physically impossible or outside the method. */
+            422: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `rate_limited`: Too many calls. */
+            429: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `internal`: Something failed on our side. */
+            500: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `unavailable`: The service is resting for a moment. */
+            503: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+        };
+    };
+    readReport: {
+        parameters: {
+            query?: never;
+            header?: never;
+            path: {
+                /** @description Id of the report */
+                report_id: string;
+            };
+            cookie?: never;
+        };
+        requestBody?: never;
+        responses: {
+            /** @description The answer. */
+            200: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    /**
+                     * @example {
+                     *       "id": "rep_01kbc0x7qzf0ra2w6v8n4m3h5t",
+                     *       "kind": "carbonate_co2",
+                     *       "title": "90 cm tank, first reading",
+                     *       "shopper": null,
+                     *       "engine_version": "2026.12.1",
+                     *       "created_at": "2026-12-01T09:30:00.000Z",
+                     *       "shared_url": null,
+                     *       "input": {
+                     *         "ph": 6.8,
+                     *         "kh_dkh": 4
+                     *       },
+                     *       "answer": {
+                     *         "result": {
+                     *           "co2_mg_l": 21
+                     *         }
+                     *       }
+                     *     }
+                     */
+                    "application/json": components["schemas"]["ReportWithAnswer"];
+                };
+            };
+            /** @description `key_in_url`: A key stands in the address. */
+            400: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `key_missing`: No key was sent. `key_unknown`: The key is not known. `key_revoked`: The key was revoked. `key_expired`: The key has expired. */
+            401: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `server_key_in_browser`: A server key was used from a browser. `origin_not_allowed`: The origin is not on the list. `address_not_allowed`: The network address is not on the list. `scope_missing`: The key lacks the scope. `account_suspended`: The account is suspended. */
+            403: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `not_found`: There is nothing here. */
+            404: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `method_not_allowed`: The method is not offered here. */
+            405: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `validation_failed`: The input is not valid. */
+            422: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `rate_limited`: Too many calls. */
+            429: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `internal`: Something failed on our side. */
+            500: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `unavailable`: The service is resting for a moment. */
+            503: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+        };
+    };
+    deleteReport: {
+        parameters: {
+            query?: never;
+            header?: never;
+            path: {
+                /** @description Id of the report */
+                report_id: string;
+            };
+            cookie?: never;
+        };
+        requestBody?: never;
+        responses: {
+            /** @description Done. */
+            204: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content?: never;
+            };
+            /** @description `key_in_url`: A key stands in the address. */
+            400: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `key_missing`: No key was sent. `key_unknown`: The key is not known. `key_revoked`: The key was revoked. `key_expired`: The key has expired. */
+            401: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `server_key_in_browser`: A server key was used from a browser. `origin_not_allowed`: The origin is not on the list. `address_not_allowed`: The network address is not on the list. `scope_missing`: The key lacks the scope. `account_suspended`: The account is suspended. */
+            403: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `not_found`: There is nothing here. */
+            404: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `method_not_allowed`: The method is not offered here. */
+            405: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `validation_failed`: The input is not valid. */
+            422: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `rate_limited`: Too many calls. */
+            429: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `internal`: Something failed on our side. */
+            500: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `unavailable`: The service is resting for a moment. */
+            503: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+        };
+    };
+    readReportPdf: {
+        parameters: {
+            query?: never;
+            header?: never;
+            path: {
+                /** @description Id of the report */
+                report_id: string;
+            };
+            cookie?: never;
+        };
+        requestBody?: never;
+        responses: {
+            /** @description The answer. */
+            200: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/pdf": unknown;
+                };
+            };
+            /** @description `key_in_url`: A key stands in the address. */
+            400: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `key_missing`: No key was sent. `key_unknown`: The key is not known. `key_revoked`: The key was revoked. `key_expired`: The key has expired. */
+            401: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `server_key_in_browser`: A server key was used from a browser. `origin_not_allowed`: The origin is not on the list. `address_not_allowed`: The network address is not on the list. `scope_missing`: The key lacks the scope. `account_suspended`: The account is suspended. */
+            403: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `not_found`: There is nothing here. */
+            404: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `method_not_allowed`: The method is not offered here. */
+            405: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `validation_failed`: The input is not valid. */
+            422: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `rate_limited`: Too many calls. */
+            429: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `internal`: Something failed on our side. */
+            500: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `unavailable`: The service is resting for a moment. */
+            503: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+        };
+    };
+    shareReport: {
+        parameters: {
+            query?: never;
+            header?: never;
+            path: {
+                /** @description Id of the report */
+                report_id: string;
+            };
+            cookie?: never;
+        };
+        requestBody: {
+            content: {
+                /** @example {} */
+                "application/json": unknown;
+            };
+        };
+        responses: {
+            /** @description The answer. */
+            200: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    /**
+                     * @example {
+                     *       "shared_url": "https://tarnwright.example/r/8mFqv2Jc0RrYw1xkT5uLhZ3a"
+                     *     }
+                     */
+                    "application/json": {
+                        /** Format: uri */
+                        shared_url: string;
+                    };
+                };
+            };
+            /** @description `key_in_url`: A key stands in the address. `malformed_json`: The body is not JSON. */
+            400: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `key_missing`: No key was sent. `key_unknown`: The key is not known. `key_revoked`: The key was revoked. `key_expired`: The key has expired. */
+            401: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `server_key_in_browser`: A server key was used from a browser. `origin_not_allowed`: The origin is not on the list. `address_not_allowed`: The network address is not on the list. `scope_missing`: The key lacks the scope. `account_suspended`: The account is suspended. */
+            403: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `not_found`: There is nothing here. */
+            404: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `method_not_allowed`: The method is not offered here. */
+            405: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `body_too_large`: The body is too large. */
+            413: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `media_type_unsupported`: The media type is not JSON. */
+            415: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `validation_failed`: The input is not valid. */
+            422: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `rate_limited`: Too many calls. */
+            429: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `internal`: Something failed on our side. */
+            500: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `unavailable`: The service is resting for a moment. */
+            503: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+        };
+    };
+    unshareReport: {
+        parameters: {
+            query?: never;
+            header?: never;
+            path: {
+                /** @description Id of the report */
+                report_id: string;
+            };
+            cookie?: never;
+        };
+        requestBody?: never;
+        responses: {
+            /** @description Done. */
+            204: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content?: never;
+            };
+            /** @description `key_in_url`: A key stands in the address. */
+            400: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `key_missing`: No key was sent. `key_unknown`: The key is not known. `key_revoked`: The key was revoked. `key_expired`: The key has expired. */
+            401: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `server_key_in_browser`: A server key was used from a browser. `origin_not_allowed`: The origin is not on the list. `address_not_allowed`: The network address is not on the list. `scope_missing`: The key lacks the scope. `account_suspended`: The account is suspended. */
+            403: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `not_found`: There is nothing here. */
+            404: {
+                headers: {
+                    [name: string]: unknown;
+                };
+                content: {
+                    "application/problem+json": components["schemas"]["Problem"];
+                };
+            };
+            /** @description `method_not_allowed`: The method is not offered here. */
+            405: {
                 headers: {
                     [name: string]: unknown;
                 };

@@ -41,7 +41,8 @@ const rooms: { room: RegExp; ours: RegExp; packages: RegExp | "any" }[] = [
   },
   {
     room: /^app\/api\/v1\/.*operation\.ts$/,
-    ours: /^(lib|openapi\/openapi\.json|app\/api\/v1\/)/,
+    // The one that sets a report on paper asks a thread for it.
+    ours: /^(lib|openapi\/openapi\.json|app\/api\/v1\/|app\/report\/pdf\/render)/,
     packages: /^zod$/,
   },
   {

@@ -68,6 +68,8 @@ export interface Operation<Request extends z.ZodType = z.ZodType, Response exten
   readonly perAddress?: { readonly points: number; readonly window_s: number }
   /** A body of CSV instead of JSON: its text is the input's `csv`, beside the query; and its largest size. */
   readonly csv?: { readonly limit_bytes: number }
+  /** A success is a PDF file, for which `run` gives the bytes, instead of JSON. */
+  readonly pdf?: true
   /** Whether a success stores something, so that an `Idempotency-Key` guards against storing it twice. */
   readonly stores: boolean
   /** Refusals of its own, beyond those that every operation with its access shares. */

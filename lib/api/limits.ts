@@ -2,7 +2,7 @@ import ipaddr from "ipaddr.js"
 import { planOf } from "@/lib/billing/plans"
 import { TarnwrightError } from "@/lib/errors"
 import type { Access } from "@/lib/keys"
-import { commitUsage, rateLimiter, SANDBOX_UNITS_A_DAY, type UsageReceipt } from "@/lib/usage"
+import { commitUsage, quotaReached, rateLimiter, SANDBOX_UNITS_A_DAY, type UsageReceipt } from "@/lib/usage"
 import type { AnyOperation } from "./define-operation"
 import type { Progress } from "./progress"
 
@@ -110,20 +110,12 @@ async function chargeRun(operation: AnyOperation, calls: number, progress: Progr
   return { admitted: receipt.admitted, refused: capReached(access, receipt) }
 }
 
-function capReached(access: Access, { cap, resets_at }: UsageReceipt): TarnwrightError {
-  const until = resets_at.toISOString()
-  if (access.mode === "sandbox") {
-    return new TarnwrightError(
-      "rate_limited",
-      `The sandbox gives ${SANDBOX_UNITS_A_DAY} units a day, until ${until}.`,
-      {
-        retryAfterS: Math.max(1, Math.ceil((resets_at.getTime() - Date.now()) / 1000)),
-      },
-    )
-  }
+function capReached(access: Access, receipt: UsageReceipt): TarnwrightError {
+  if (access.mode === "live") return quotaReached(receipt)
+  const { resets_at } = receipt
   return new TarnwrightError(
-    "quota_reached",
-    `This call does not fit into the ${cap} units of the period that ends at ${until}. The account's owner can ` +
-      "choose a larger plan, or allow spending beyond it, on the billing page of the portal.",
+    "rate_limited",
+    `The sandbox gives ${SANDBOX_UNITS_A_DAY} units a day, until ${resets_at.toISOString()}.`,
+    { retryAfterS: Math.max(1, Math.ceil((resets_at.getTime() - Date.now()) / 1000)) },
   )
 }

@@ -13,7 +13,7 @@ export function nextMount(registry: readonly AnyOperation[]) {
   const handle: Handler = async (request) => {
     serve ??= createServe({ registry, publicUrl: env().PUBLIC_URL })
     const { status, headers, body } = await serve(requestOf(request))
-    return new Response(body, { status, headers })
+    return new Response(body as BodyInit | null, { status, headers })
   }
   return { GET: handle, POST: handle, PATCH: handle, DELETE: handle, OPTIONS: handle }
 }

@@ -37,9 +37,8 @@ export async function once(
   })
   // What is done and paid for is answered, even if the answer cannot be kept: a repeated call then waits in vain
   // for a minute and not a moment longer.
-  await keepAnswer({ ctx, input: { ...call, status: response.status, body: response.body ?? "" } }).catch(
-    () => {},
-  )
+  const kept_body = typeof response.body === "string" ? response.body : ""
+  await keepAnswer({ ctx, input: { ...call, status: response.status, body: kept_body } }).catch(() => {})
   return response
 }
 

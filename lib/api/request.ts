@@ -23,5 +23,6 @@ export interface ApiRequest {
 export interface ApiResponse {
   readonly status: number
   readonly headers: Readonly<Record<string, string>>
-  readonly body: string | null
+  /** Text, or the bytes of a file. */
+  readonly body: string | Uint8Array | null
 }

@@ -16,10 +16,10 @@ export function success(
   request: ApiRequest,
   progress: Progress,
 ): ApiResponse {
-  const body = operation.status === 204 ? null : JSON.stringify(output)
+  const body = bodyOf(operation, output)
   const headers = {
     ...commonHeaders(progress),
-    "content-type": "application/json",
+    "content-type": operation.pdf ? "application/pdf" : "application/json",
     ...(progress.access && { "tarnwright-units": String(progress.charged) }),
     ...linkHeaders(operation, output, request),
     ...deprecationHeaders(operation),
@@ -34,6 +34,11 @@ export function success(
     headers: { ...headers, etag, "cache-control": "no-cache" },
     body: unchanged ? null : body,
   }
+}
+
+function bodyOf({ status, pdf }: AnyOperation, output: unknown): string | Uint8Array | null {
+  if (status === 204) return null
+  return pdf ? (output as Uint8Array) : JSON.stringify(output)
 }
 
 /** The answer that an earlier call with the same idempotency key got. */

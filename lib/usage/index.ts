@@ -22,4 +22,5 @@ export {
 export { type Drift, describeDrift, reconcileUsage } from "./reconcile"
 export { deleteExpired, ENQUIRY_DAYS } from "./retention"
 export { type RolledHours, rollUpUsage } from "./roll-up"
+export { PORTAL_KEY_ID, quotaReached, spendUnits } from "./spend"
 export { type UsageQuery, type UsageRow, usageBy } from "./usage-by"

@@ -61,7 +61,7 @@ function requests(operation: AnyOperation): fc.Arbitrary<Sent> {
   const params = [...operation.path.matchAll(/\{(\w+)\}/g)].map(([, name]) => name ?? "")
   const segment = fc.oneof(
     fc.constantFrom("..", "%00", "%E0%A4%A", "a".repeat(300), "key_01kbc0x7qzf0ra2w6v8n4m3h5t"),
-    fc.string({ minLength: 1, maxLength: 40 }).map((text) => encodeURIComponent(text.toWellFormed())),
+    fc.string({ minLength: 1, maxLength: 40 }).map((text) => encodeURIComponent(text)),
   )
   const drawn: fc.Arbitrary<Record<string, unknown>> = fc.record(
     Object.fromEntries(

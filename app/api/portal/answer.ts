@@ -5,8 +5,9 @@ import { TarnwrightError } from "@/lib/errors"
 
 const bodyLimit_bytes = 256 * 1024
 
-/** The JSON answer of a route for pages. Never cached: it belongs to the one who is signed in. */
+/** The answer of a route for pages: JSON, or a file as it is. Never cached: it belongs to the one who is signed in. */
 export function answer(value: unknown, requestId: string, status = 200): Response {
+  if (value instanceof Response) return value
   return Response.json(value ?? null, { status, headers: headersOf(requestId) })
 }
 
@@ -44,9 +45,10 @@ export async function inputOf<Schema extends z.ZodType>(
   schema: Schema,
   request: Request,
   pathParams: Record<string, string>,
+  limit_bytes = bodyLimit_bytes,
 ): Promise<z.output<Schema>> {
   const given =
-    request.method === "GET" ? Object.fromEntries(new URL(request.url).searchParams) : await bodyOf(request)
+    request.method === "GET" ? Object.fromEntries(new URL(request.url).searchParams) : await bodyOf(request, limit_bytes)
   const parsed = schema.safeParse(isRecord(given) ? { ...given, ...pathParams } : given)
   if (parsed.success) return parsed.data
   const errors = parsed.error.issues.map((issue) => ({
@@ -56,11 +58,11 @@ export async function inputOf<Schema extends z.ZodType>(
   throw new TarnwrightError("validation_failed", "Some of what was sent is not valid.", { errors })
 }
 
-async function bodyOf(request: Request): Promise<unknown> {
+async function bodyOf(request: Request, limit_bytes: number): Promise<unknown> {
   const tooLarge = new TarnwrightError("body_too_large", "This is more than a form of ours can hold.")
-  if (Number(request.headers.get("content-length") ?? 0) > bodyLimit_bytes) throw tooLarge
+  if (Number(request.headers.get("content-length") ?? 0) > limit_bytes) throw tooLarge
   const text = await request.text()
-  if (text.length > bodyLimit_bytes) throw tooLarge
+  if (text.length > limit_bytes) throw tooLarge
   if (text === "") return {}
   try {
     return JSON.parse(text)

@@ -75,4 +75,10 @@ export const checkoutInput = z.strictObject({ plan: z.enum(["storefront", "brand
 
 export const spendingCapInput = z.strictObject({ overage_cap_minor: z.number().int() })
 
+export const ofReport = z.strictObject({ report_id: z.string() })
+
+export const reportLetterInput = ofReport.extend({
+  email: z.string().trim().max(254).pipe(z.email("Write the address as name@shop.example.")),
+})
+
 export const nothing = z.strictObject({})

@@ -27,6 +27,10 @@ import { health } from "./health/operation"
 import { tankInsightsOperation } from "./insights/tanks/operation"
 import { openapi } from "./openapi.json/operation"
 import { plan } from "./plan/operation"
+import { deleteReportOperation, readReport } from "./reports/[report_id]/operation"
+import { readReportPdf } from "./reports/[report_id]/pdf/operation"
+import { shareReportOperation, unshareReportOperation } from "./reports/[report_id]/share/operation"
+import { createReportOperation, listReportsOperation } from "./reports/operation"
 import { usage } from "./usage/operation"
 import { readWebhookDelivery } from "./webhooks/[endpoint_id]/deliveries/[delivery_id]/operation"
 import { replayWebhookDelivery } from "./webhooks/[endpoint_id]/deliveries/[delivery_id]/replay/operation"
@@ -62,6 +66,13 @@ export const registry: readonly AnyOperation[] = [
   flowClogging,
   plan,
   batch,
+  listReportsOperation,
+  createReportOperation,
+  readReport,
+  deleteReportOperation,
+  readReportPdf,
+  shareReportOperation,
+  unshareReportOperation,
   listCatalogItems,
   createCatalogItem,
   readCatalogItem,
