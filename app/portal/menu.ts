@@ -22,6 +22,7 @@ export const menu: readonly { readonly group: string; readonly items: readonly M
     items: [
       { path: "/bench", label: "Bench", right: "bench.use" },
       { path: "/reports", label: "Reports", right: "report.read" },
+      { path: "/catalog", label: "Catalogue", right: "catalog.read" },
       { path: "/enquiries", label: "Enquiries", right: "enquiry.read" },
       { path: "/insights", label: "Insights", right: "insight.read" },
     ],

@@ -55,6 +55,7 @@ export function DataTable<Row extends { readonly id: string }>({
   toolbar,
   empty,
   sortedBy,
+  stacked = false,
 }: {
   caption: string
   columns: readonly Column<Row>[]
@@ -64,6 +65,8 @@ export function DataTable<Row extends { readonly id: string }>({
   toolbar?: ReactNode
   empty: ReactNode
   sortedBy?: { id: string; desc: boolean }
+  /** On a phone each row stands as a block of lines, each with its column's name, in place of a table that scrolls. */
+  stacked?: boolean
 }) {
   const definitions = useMemo(
     () =>
@@ -126,7 +129,7 @@ export function DataTable<Row extends { readonly id: string }>({
       <section aria-label={caption} tabIndex={0} className="relative overflow-x-auto border-y border-line">
         <table className="w-full text-left text-sm">
           <caption className="sr-only">{caption}</caption>
-          <thead>
+          <thead className={classNames(stacked && "max-sm:hidden")}>
             <tr>
               {table.getFlatHeaders().map((header, index) => {
                 const sorted = header.column.getIsSorted()
@@ -161,19 +164,43 @@ export function DataTable<Row extends { readonly id: string }>({
           </thead>
           <tbody>
             {shown.map(({ id, original }) => (
-              <tr key={id} className="border-t border-line align-top">
+              <tr
+                key={id}
+                className={classNames(
+                  "border-t border-line align-top",
+                  stacked && "max-sm:block max-sm:py-3 max-sm:first:border-t-0",
+                )}
+              >
                 {columns.map((column) => (
                   <td
                     key={column.id}
                     className={classNames(
                       "py-2.5 pr-6",
                       column.numeric && "text-right font-mono text-[0.8125rem]",
+                      stacked && "max-sm:flex max-sm:gap-3 max-sm:py-1 max-sm:pr-0 max-sm:text-left",
                     )}
                   >
+                    {stacked && (
+                      <span
+                        aria-hidden="true"
+                        className="w-20 shrink-0 font-sans text-sm text-soft sm:hidden"
+                      >
+                        {column.header}
+                      </span>
+                    )}
                     {column.cell ? column.cell(original) : column.value(original)}
                   </td>
                 ))}
-                {actions && <td className="py-1.5 text-right whitespace-nowrap">{actions(original)}</td>}
+                {actions && (
+                  <td
+                    className={classNames(
+                      "py-1.5 text-right whitespace-nowrap",
+                      stacked && "max-sm:block max-sm:text-left",
+                    )}
+                  >
+                    {actions(original)}
+                  </td>
+                )}
               </tr>
             ))}
           </tbody>

@@ -91,6 +91,7 @@ function itemFrom(record: Record<string, string>): { item?: NewItem; errors: Cel
   const unread = errors.length > 0
   for (const { pointer, detail } of itemErrors(item)) {
     if (unread && pointer.startsWith("/attributes")) continue
+    if (pointer === "/price_minor" && record.price) continue
     errors.push({ column: pointer.split("/").at(-1)?.replace("price_minor", "price") ?? "", detail })
   }
   return { item, errors }

@@ -28,6 +28,7 @@ const account = [
   "/explorer",
   "/bench",
   "/usage",
+  "/catalog",
   "/enquiries",
   "/insights",
   "/team",

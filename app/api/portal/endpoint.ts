@@ -24,6 +24,8 @@ interface Endpoint<Schema extends z.ZodType, Asked> {
   readonly input: Schema
   /** Whether it takes a password or a code that was shown in the last ten minutes. */
   readonly fresh?: boolean | ((input: z.output<Schema>) => boolean)
+  /** Most that its body may hold; absent, what a form can. */
+  readonly limit_bytes?: number
   /** What it gives back is the JSON of the answer, or, for a file, the answer itself. */
   run(asked: Asked & { readonly input: z.output<Schema> }): Promise<unknown>
 }
@@ -55,7 +57,7 @@ export function accountEndpoint<Schema extends z.ZodType>(
       request_id,
     }
     authorize(ctx.actor, endpoint.right)
-    const input = await inputOf(endpoint.input, request, rest)
+    const input = await inputOf(endpoint.input, request, rest, endpoint.limit_bytes)
     if (needsFresh(endpoint, input)) requireFresh(session, now)
     return endpoint.run({ ctx, person, input })
   })
