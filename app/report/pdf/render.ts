@@ -3,7 +3,8 @@ import { Worker } from "node:worker_threads"
 import type { PrintedReport } from "./document"
 import type { Delivery, Order } from "./worker"
 
-const script = path.join(process.cwd(), "app/report/pdf/thread.mjs")
+// Read by Node as it lies there: the bundler has to leave it alone.
+const script = path.join(/* turbopackIgnore: true */ process.cwd(), "app/report/pdf/thread.mjs")
 
 interface Waiting {
   readonly resolve: (file: Uint8Array) => void
@@ -28,7 +29,7 @@ export function renderReport(report: PrintedReport): Promise<Uint8Array> {
 }
 
 function startPrinter(): Worker {
-  const worker = new Worker(script)
+  const worker = new Worker(/* turbopackIgnore: true */ script)
   worker.on("message", (delivery: Delivery) => {
     const order = waiting.get(delivery.id)
     waiting.delete(delivery.id)
