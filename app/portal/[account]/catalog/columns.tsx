@@ -43,7 +43,7 @@ export function columnsFor(kinds: readonly KindInfo[], change?: Change): readonl
       header: "SKU",
       value: ({ sku }) => sku,
       cell: (part) => (
-        <span className="font-mono text-[0.8125rem]">
+        <span className="font-mono text-[0.8125rem] whitespace-nowrap">
           {cell(part, "SKU", part.sku ?? "", readSku, (sku) => ({ sku }))}
         </span>
       ),

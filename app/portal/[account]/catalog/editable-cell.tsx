@@ -66,7 +66,7 @@ export function EditableCell<Value>({
         type="button"
         aria-label={`${label}: ${text ? `${text}${unit && ` ${unit}`}` : "empty"}. Edit`}
         onClick={() => setDraft(text)}
-        className="-mx-1.5 min-h-7 max-w-full rounded border border-transparent px-1.5 text-left break-words hover:border-edge"
+        className={`-mx-1.5 min-h-7 rounded border border-transparent px-1.5 text-left hover:border-edge ${numeric ? "whitespace-nowrap" : ""}`}
       >
         {text ? (
           <>
