@@ -19,6 +19,7 @@ export type ErrorCode =
   | "quota_reached"
   | "not_found"
   | "method_not_allowed"
+  | "gone"
   | "conflict"
   | "idempotency_conflict"
   | "body_too_large"

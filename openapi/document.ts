@@ -113,6 +113,7 @@ export function codesOf(operation: AnyOperation): ErrorCode[] {
     ...(access.kind === "key" ? ofKeys : access.kind === "widget" ? ofWidgets : []),
     ...(method === "POST" || method === "PATCH" ? ofBodies : []),
     ...(units > 0 ? (["quota_reached", "rate_limited"] as const) : []),
+    ...(operation.deprecation ? (["gone"] as const) : []),
     ...operation.problems,
   ]
 }

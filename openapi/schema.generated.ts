@@ -1194,7 +1194,7 @@ export interface components {
              * @description Stable code to switch over
              * @enum {string}
              */
-            code: "malformed_json" | "key_in_url" | "session_missing" | "second_factor_required" | "key_missing" | "key_unknown" | "key_revoked" | "key_expired" | "quota_reached" | "server_key_in_browser" | "origin_not_allowed" | "address_not_allowed" | "scope_missing" | "account_suspended" | "step_up_required" | "forbidden" | "plan_limit_reached" | "not_found" | "method_not_allowed" | "conflict" | "idempotency_conflict" | "body_too_large" | "media_type_unsupported" | "validation_failed" | "out_of_domain" | "rate_limited" | "internal" | "unavailable";
+            code: "malformed_json" | "key_in_url" | "session_missing" | "second_factor_required" | "key_missing" | "key_unknown" | "key_revoked" | "key_expired" | "quota_reached" | "server_key_in_browser" | "origin_not_allowed" | "address_not_allowed" | "scope_missing" | "account_suspended" | "step_up_required" | "forbidden" | "plan_limit_reached" | "not_found" | "method_not_allowed" | "gone" | "conflict" | "idempotency_conflict" | "body_too_large" | "media_type_unsupported" | "validation_failed" | "out_of_domain" | "rate_limited" | "internal" | "unavailable";
             errors?: {
                 /** @description JSON Pointer into the body */
                 pointer: string;

@@ -24,10 +24,13 @@ import {
   deleteExpired,
   describeDrift,
   dropOldPartitions,
+  type ExposedKey,
   makePartitions,
   type ReachedThreshold,
   reconcileUsage,
   rollUpUsage,
+  WARN_OF_EXPOSED_KEY,
+  warnOfExposedKey,
 } from "@/lib/usage"
 import { DELIVER_WEBHOOK, deliverWebhook, recoverDeliveries } from "@/lib/webhooks"
 import { loadLocalEnv } from "./stack/local-env"
@@ -48,6 +51,7 @@ const taskList: TaskList = {
     }
   },
   [ANNOUNCE_THRESHOLD]: (payload) => announceThreshold(payload as ReachedThreshold),
+  [WARN_OF_EXPOSED_KEY]: (payload) => warnOfExposedKey(payload as ExposedKey),
   roll_up_usage: async () => void (await rollUpUsage()),
   async reconcile_usage() {
     for (const drift of await reconcileUsage()) console.error(describeDrift(drift))

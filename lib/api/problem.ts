@@ -22,6 +22,7 @@ export const problems: Record<ErrorCode, { status: number; title: string }> = {
   plan_limit_reached: { status: 403, title: "The plan does not include more of these" },
   not_found: { status: 404, title: "There is nothing here" },
   method_not_allowed: { status: 405, title: "The method is not offered here" },
+  gone: { status: 410, title: "This operation was retired" },
   conflict: { status: 409, title: "The change conflicts with what is stored" },
   idempotency_conflict: { status: 409, title: "The idempotency key was used for another request" },
   body_too_large: { status: 413, title: "The body is too large" },

@@ -1,5 +1,6 @@
 import type { Access } from "@/lib/keys"
 import type { UsageReceipt } from "@/lib/usage"
+import type { AnyOperation } from "./define-operation"
 import type { LimitState } from "./rate-headers"
 
 /** What is learned on the way through a call, so that a refusal half-way can say it too. */
@@ -10,4 +11,6 @@ export interface Progress {
   corsOrigin?: string
   charged: number
   receipt?: UsageReceipt
+  /** Where the operation is to be retired. */
+  deprecation?: AnyOperation["deprecation"]
 }

@@ -21,8 +21,7 @@ export function success(
     ...commonHeaders(progress),
     "content-type": operation.pdf ? "application/pdf" : "application/json",
     ...(progress.access && { "tarnwright-units": String(progress.charged) }),
-    ...linkHeaders(operation, output, request),
-    ...deprecationHeaders(operation),
+    ...linkHeaders(progress, output, request),
   }
   if (operation.access.kind !== "public" || body === null) {
     return { status: operation.status, headers: { ...headers, "cache-control": "no-store" }, body }
@@ -72,17 +71,11 @@ export function refusal(refused: TarnwrightError, publicUrl: string, progress: P
   }
 }
 
-/** Links to the next page of a list and to what is to be known of a deprecation. @source RFC 8288 */
-function linkHeaders(
-  { deprecation }: AnyOperation,
-  output: unknown,
-  request: ApiRequest,
-): Record<string, string> {
-  const links = [
-    ...(deprecation ? [`<${deprecation.page}>; rel="deprecation"; type="text/html"`] : []),
-    ...(isPage(output) ? [`<${nextPage(request, output.next_cursor)}>; rel="next"`] : []),
-  ]
-  return links.length > 0 ? { link: links.join(", ") } : {}
+/** Links to the next page of a list, beside the one to a deprecation. @source RFC 8288 */
+function linkHeaders(progress: Progress, output: unknown, request: ApiRequest): Record<string, string> {
+  if (!isPage(output)) return {}
+  const next = `<${nextPage(request, output.next_cursor)}>; rel="next"`
+  return { link: [deprecationLink(progress), next].filter(Boolean).join(", ") }
 }
 
 function isPage(output: unknown): output is { next_cursor: string } {
@@ -97,13 +90,19 @@ function nextPage({ path, query }: ApiRequest, cursor: string): string {
   return `${API_PREFIX}${path}?${next}`
 }
 
-/** @source RFC 9745 section 2.1 (a structured-field date) and RFC 8594 section 3 (an HTTP date). */
-function deprecationHeaders({ deprecation }: AnyOperation): Record<string, string> {
+/** @source RFC 9745 section 2.1 (a structured-field date) and section 3; RFC 8594 section 3 (an HTTP date). */
+function deprecationHeaders(progress: Progress): Record<string, string> {
+  const { deprecation } = progress
   if (!deprecation) return {}
   return {
     deprecation: `@${Math.floor(deprecation.since.getTime() / 1000)}`,
     sunset: deprecation.sunset.toUTCString(),
+    link: deprecationLink(progress) ?? "",
   }
+}
+
+function deprecationLink({ deprecation }: Progress): string | undefined {
+  return deprecation && `<${deprecation.page}>; rel="deprecation"; type="text/html"`
 }
 
 function commonHeaders(progress: Progress): Record<string, string> {
@@ -126,6 +125,7 @@ function commonHeaders(progress: Progress): Record<string, string> {
     "tarnwright-method": ENGINE_VERSION,
     ...(receipt && { "tarnwright-units-remaining": String(Math.max(0, receipt.cap - receipt.used)) }),
     ...rateHeaders(limits),
+    ...deprecationHeaders(progress),
     ...corsHeaders(progress.corsOrigin),
   }
 }

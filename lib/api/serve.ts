@@ -38,6 +38,8 @@ export function createServe({ registry, publicUrl, onFault }: ServeOptions): Ser
     try {
       const match = routeOf(request)
       const { operation } = match
+      progress.deprecation = operation.deprecation
+      refuseRetired(operation)
       const ctx = await admitCaller(match, request, progress)
       const body = await bodyOf(operation, request)
       const input = parseInput(operation, match, request, body)
@@ -168,6 +170,16 @@ type Calculated = { readonly operation: AnyOperation; readonly output: unknown }
 // A calculation stores nothing, so it charges nothing by itself; and no batch is part of another.
 const nothing = () => Promise.resolve()
 const noBatch = () => Promise.reject(new TarnwrightError("not_found", "A batch cannot be part of a batch."))
+
+/** @source RFC 8594: after its Sunset date an operation is gone. */
+function refuseRetired({ path, deprecation }: AnyOperation): void {
+  if (deprecation && deprecation.sunset.getTime() <= Date.now()) {
+    throw new TarnwrightError(
+      "gone",
+      `${path} was retired. ${deprecation.page} says what to use in its place.`,
+    )
+  }
+}
 
 /** Puts a refusal into the request log of the account whose key it was. */
 function logRefused(

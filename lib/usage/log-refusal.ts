@@ -1,6 +1,7 @@
-import { type KeyMode, statement } from "@/db"
+import { enqueueJob, type KeyMode, statement, withTenant } from "@/db"
 import type { ErrorCode, FieldError } from "@/lib/errors"
 import { GroupCommit } from "./group-commit"
+import { WARN_OF_EXPOSED_KEY } from "./warn-of-exposed-key"
 
 /** A call of a known key that was refused, as the account's request log keeps it. */
 export interface Refusal {
@@ -34,5 +35,22 @@ async function flush(refusals: Refusal[]): Promise<undefined[]> {
     text: "select log_refusals($1)",
     values: [JSON.stringify(refusals)],
   })
+  await warnOfExposed(refusals)
   return refusals.map(() => undefined)
+}
+
+/** Keys that this process had a warning sent of, by the day. The job makes sure that there is one for all processes. */
+const warned = new Set<string>()
+
+/** @source PLATFORM 1.19 */
+async function warnOfExposed(refusals: readonly Refusal[]): Promise<void> {
+  const today = new Date().toISOString().slice(0, 10)
+  for (const { account_id, key_id, id, code } of refusals) {
+    const mark = `${today} ${key_id}`
+    if (code !== "server_key_in_browser" || warned.has(mark)) continue
+    if (warned.size > 10_000) warned.clear()
+    warned.add(mark)
+    const payload = { account_id, key_id, refusal_id: id }
+    await withTenant(account_id, (trx) => enqueueJob(trx, { task: WARN_OF_EXPOSED_KEY, payload }))
+  }
 }

@@ -5,6 +5,7 @@ import { enquiryReceived } from "./enquiry-received"
 import { exportReady } from "./export-ready"
 import { invitation } from "./invitation"
 import { keyExpiring } from "./key-expiring"
+import { keyExposed } from "./key-exposed"
 import { keyRevoked } from "./key-revoked"
 import { membershipChanged } from "./membership-changed"
 import { passwordChanged } from "./password-changed"
@@ -31,6 +32,7 @@ export const letters = {
   membership_changed: membershipChanged,
   key_revoked: keyRevoked,
   key_expiring: keyExpiring,
+  key_exposed: keyExposed,
   usage_threshold: usageThreshold,
   payment_failed: paymentFailed,
   webhook_disabled: webhookDisabled,

@@ -78,6 +78,10 @@ export const errorWords: Record<ErrorCode, { readonly why: string; readonly mend
     why: "The path exists, but not with this method.",
     mend: "Use one of the methods named in the detail. Calculations are POST.",
   },
+  gone: {
+    why: "The operation was retired at the date that its Sunset header had told before.",
+    mend: "Use what the detail names in its place. The changelog says what changes with it.",
+  },
   conflict: {
     why: "The change does not fit what is stored now.",
     mend: "Read the current state, then decide again.",
