@@ -3,7 +3,7 @@ import type { Call } from "@/lib/context"
 import { TarnwrightError } from "@/lib/errors"
 import { enqueueMail } from "@/lib/mail"
 import { rateLimiter } from "@/lib/usage"
-import { findReport } from "./find"
+import { findReport, showReport } from "./find"
 import { authorizeOn } from "./may-manage"
 import { shareReport } from "./share"
 import { sheetOf } from "./sheet"
@@ -22,11 +22,11 @@ export async function sendReport({
   ctx,
   input,
 }: Call<{ readonly report_id: string; readonly email: string }>): Promise<{ url: string; email: string }> {
+  authorizeOn(ctx, await showReport({ ctx, input }))
   await refuseFlood(ctx.account_id, input.email)
   const { url } = await shareReport({ ctx, input })
   await withTenant(ctx.account_id, async (trx) => {
     const report = await findReport(trx, ctx, input.report_id)
-    authorizeOn(ctx, report)
     const { name } = await trx
       .selectFrom("account")
       .select("name")
