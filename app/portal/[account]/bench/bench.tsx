@@ -20,6 +20,8 @@ import { type Problems, type Worked, workOut } from "./work-out"
 export interface BenchProps {
   readonly account: string
   readonly shop: string
+  /** What saving a plan costs. */
+  readonly reportUnits: number
   readonly may: { readonly save: boolean; readonly stock: boolean }
 }
 
@@ -35,7 +37,7 @@ export function Bench(props: BenchProps) {
 
 const noProblems: Problems = {}
 
-function OpenBench({ account, shop, may }: BenchProps) {
+function OpenBench({ account, shop, may, reportUnits }: BenchProps) {
   const [first] = useState(() => keptSheet(account))
   const [{ exact, units }, setRest] = useState<Omit<Sheet, "form">>(first)
   const [isWide] = useState(() => window.matchMedia("(min-width: 64rem)").matches)
@@ -91,6 +93,7 @@ function OpenBench({ account, shop, may }: BenchProps) {
           account={account}
           worked={isStale ? undefined : worked}
           maySave={may.save}
+          reportUnits={reportUnits}
           onNew={() => write(startSheet(units))}
         />
         {worked && <SummaryLine worked={worked} />}

@@ -12,12 +12,14 @@ export function BenchHead({
   account,
   worked,
   maySave,
+  reportUnits,
   onNew,
 }: {
   account: string
   /** Absent while something has to be mended: a sheet in doubt is not handed over. */
   worked: Worked | undefined
   maySave: boolean
+  reportUnits: number
   onNew: () => void
 }) {
   const [asks, setAsks] = useState(false)
@@ -32,7 +34,7 @@ export function BenchHead({
             <Button disabled={!worked} onClick={() => window.print()}>
               Print
             </Button>
-            {maySave && <SaveReport account={account} worked={worked} />}
+            {maySave && <SaveReport account={account} worked={worked} units={reportUnits} />}
           </>
         }
       />

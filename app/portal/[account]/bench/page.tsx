@@ -1,4 +1,5 @@
 import type { Metadata } from "next"
+import { REPORT_UNITS } from "@/app/api/v1/reports/new-report"
 import type { OfAccount } from "@/app/page-props"
 import { openAccountFor } from "@/app/session"
 import { can } from "@/lib/accounts"
@@ -13,6 +14,7 @@ export default async function BenchPage({ params }: OfAccount) {
       account={account.slug}
       shop={account.name}
       may={{ save: can(actor, "report.create"), stock: can(actor, "catalog.manage") }}
+      reportUnits={REPORT_UNITS}
     />
   )
 }

@@ -8,11 +8,17 @@ import { Dialog } from "@/app/ui/dialog"
 import { FieldError, Input } from "@/app/ui/field"
 import type { Worked } from "./work-out"
 
-/** What a stored report costs, by the plan's table of units. */
-const REPORT_UNITS = 10
-
 /** Keeps the plan as a report: a page of its own to print, to send, to open again. */
-export function SaveReport({ account, worked }: { account: string; worked: Worked | undefined }) {
+export function SaveReport({
+  account,
+  worked,
+  units,
+}: {
+  account: string
+  worked: Worked | undefined
+  /** What it costs. */
+  units: number
+}) {
   const [open, setOpen] = useState(false)
   const [title, setTitle] = useState("")
   const [shopper, setShopper] = useState("")
@@ -34,7 +40,7 @@ export function SaveReport({ account, worked }: { account: string; worked: Worke
   return (
     <>
       <Button look="primary" disabled={!worked} onClick={() => setOpen(true)}>
-        Save as a report ({REPORT_UNITS} units)
+        Save as a report ({units} units)
       </Button>
       <Dialog
         open={open}
@@ -43,7 +49,7 @@ export function SaveReport({ account, worked }: { account: string; worked: Worke
         lead={
           save.data
             ? "Open it to send it by mail, to print it, or to give the customer its link."
-            : `The plan is kept as it stands, with its inputs and sources. This costs ${REPORT_UNITS} units.`
+            : `The plan is kept as it stands, with its inputs and sources. This costs ${units} units.`
         }
       >
         {save.data ? (
@@ -80,7 +86,7 @@ export function SaveReport({ account, worked }: { account: string; worked: Worke
             <FieldError message={save.error ? detailOf(save.error) : undefined} />
             <div className="mt-6 flex flex-wrap gap-3">
               <Button look="primary" type="submit" busy={save.isPending}>
-                {save.isPending ? "Saving" : `Save for ${REPORT_UNITS} units`}
+                {save.isPending ? "Saving" : `Save for ${units} units`}
               </Button>
               <Button onClick={close}>Not now</Button>
             </div>
