@@ -14,7 +14,9 @@ export const menu: readonly { readonly group: string; readonly items: readonly M
       { path: "", label: "Overview", right: "account.read" },
       { path: "/keys", label: "Keys", right: "key.read" },
       { path: "/explorer", label: "Explorer", right: "explorer.use" },
+      { path: "/requests", label: "Requests", right: "request.read" },
       { path: "/usage", label: "Usage", right: "usage.read" },
+      { path: "/webhooks", label: "Webhooks", right: "webhook.read" },
     ],
   },
   {

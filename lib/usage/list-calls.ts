@@ -12,6 +12,8 @@ export interface LoggedCall {
   /** Operation of a success; method and path of a refusal. */
   readonly what: string
   readonly status: number
+  /** How many calls the row stands for: a run of one operation in a batch is one row. */
+  readonly calls: number
   readonly units: number
   readonly code: ErrorCode | null
   readonly detail: string | null
@@ -29,22 +31,26 @@ export interface LogQuery {
 /** Days that the request log reaches back. */
 export const LOG_DAYS = 30
 
-/** The account's calls, newest first. Bodies are not kept, so they cannot be shown. */
+/**
+ * The account's calls, newest first. Bodies are not kept, so they cannot be shown. An instant loses what is below the
+ * millisecond in JSON, so a page may begin with calls of the one before that were made in the same millisecond.
+ */
 export function listCalls({ ctx, input }: { ctx: Ctx; input: LogQuery }): Promise<LoggedCall[]> {
   const { limit, before, outcome, key_id } = input
   return withTenant(ctx.account_id, async (trx) => {
     const { rows } = await sql<LoggedCall>`
       select * from (
-        select at, request_id, key_id, mode, operation as what, 200 as status, units, null as code, null as detail,
+        select at, request_id, key_id, mode, operation as what, 200 as status, calls, units, null as code, null as detail,
                '[]'::jsonb as errors
           from usage_event where account_id = ${ctx.account_id} and ${outcome !== "refused"}
         union all
-        select at, id, key_id, mode, method || ' ' || path, status, 0, code, detail, errors
+        select at, id, key_id, mode, method || ' ' || path, status, 1, 0, code, detail, errors
           from refused_call where account_id = ${ctx.account_id} and ${outcome !== "success"}
       ) call
       where at > now() - make_interval(days => ${LOG_DAYS})
         and (${before?.at ?? null}::timestamptz is null
-             or (at, request_id) < (${before?.at ?? null}::timestamptz, ${before?.request_id ?? null}::text))
+             or (at < ${before?.at ?? null}::timestamptz + interval '1 millisecond'
+                 and request_id <> ${before?.request_id ?? null}::text))
         and (${key_id ?? null}::text is null or key_id = ${key_id ?? null})
       order by at desc, request_id desc
       limit ${limit}`.execute(trx)

@@ -75,6 +75,14 @@ export const checkoutInput = z.strictObject({ plan: z.enum(["storefront", "brand
 
 export const spendingCapInput = z.strictObject({ overage_cap_minor: z.number().int() })
 
+export const requestsInput = z.strictObject({
+  outcome: z.enum(["success", "refused"]).optional(),
+  key_id: z.string().max(64).optional(),
+  /** Instant and request of the last call of the page before. */
+  before_at: z.iso.datetime({ offset: true }).optional(),
+  before_id: z.string().max(64).optional(),
+})
+
 export const ofReport = z.strictObject({ report_id: z.string() })
 
 export const reportLetterInput = ofReport.extend({
