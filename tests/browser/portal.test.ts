@@ -173,7 +173,7 @@ describe("a role", () => {
     const menu = page.getByRole("navigation", { name: "Pages of this account" })
     await expect
       .poll(() => menu.getByRole("link").allTextContents(), patient)
-      .toEqual(["Overview", "Usage", "Team", "Billing"])
+      .toEqual(["Overview", "Usage", "Bench", "Reports", "Catalogue", "Insights", "Team", "Billing"])
     const answer = await page.goto("/portal/fernhollow/keys")
     expect(answer?.status()).toBe(403)
     await page.getByRole("heading", { name: "Not for your role" }).waitFor()

@@ -102,6 +102,7 @@ describe("the widget by keyboard", () => {
       "SUMMARY",
       "SUMMARY",
       "SUMMARY",
+      "BUTTON button",
     ])
     await shop.widget.getByRole("slider").first().press("ArrowRight")
     expect(await number(shop).inputValue()).toBe("6.85")

@@ -48,7 +48,9 @@ export async function inputOf<Schema extends z.ZodType>(
   limit_bytes = bodyLimit_bytes,
 ): Promise<z.output<Schema>> {
   const given =
-    request.method === "GET" ? Object.fromEntries(new URL(request.url).searchParams) : await bodyOf(request, limit_bytes)
+    request.method === "GET"
+      ? Object.fromEntries(new URL(request.url).searchParams)
+      : await bodyOf(request, limit_bytes)
   const parsed = schema.safeParse(isRecord(given) ? { ...given, ...pathParams } : given)
   if (parsed.success) return parsed.data
   const errors = parsed.error.issues.map((issue) => ({
