@@ -1,5 +1,5 @@
 import { prepare } from "./stack/prepare.mjs"
 
-await prepare(["postgresql", "chromium", "redis"])
+await prepare(["postgresql", "chromium", "redis", "poppler"])
 const { test } = await import("./test/main.ts")
 await test(process.argv.slice(2))

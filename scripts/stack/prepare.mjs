@@ -12,6 +12,7 @@ const programs = {
   postgresql: { package: "postgresql", isThere: hasPostgres },
   chromium: { package: "chromium", isThere: () => existsSync("/usr/bin/chromium") },
   redis: { package: "redis-server", isThere: () => existsSync("/usr/bin/redis-server") },
+  poppler: { package: "poppler-utils", isThere: () => existsSync("/usr/bin/pdftotext") },
 }
 
 /**
