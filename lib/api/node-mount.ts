@@ -14,7 +14,8 @@ export function nodeMount(serve: Serve, { behindProxy = false }: NodeMountOption
   return async (incoming, outgoing) => {
     const response = await serve(requestOf(incoming, behindProxy))
     const drained = drain(incoming)
-    const bytes = response.body === null ? undefined : Buffer.from(response.body)
+    const bytes =
+      typeof response.body === "string" ? Buffer.from(response.body) : (response.body ?? undefined)
     outgoing.writeHead(response.status, {
       ...response.headers,
       ...(bytes && { "content-length": bytes.byteLength }),

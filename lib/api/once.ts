@@ -37,7 +37,7 @@ export async function once(
   })
   // What is done and paid for is answered, even if the answer cannot be kept: a repeated call then waits in vain
   // for a minute and not a moment longer.
-  const kept_body = typeof response.body === "string" ? response.body : ""
+  const kept_body = response.body === null ? "" : Buffer.from(response.body).toString()
   await keepAnswer({ ctx, input: { ...call, status: response.status, body: kept_body } }).catch(() => {})
   return response
 }

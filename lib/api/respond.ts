@@ -4,6 +4,7 @@ import type { TarnwrightError } from "@/lib/errors"
 import type { KeptAnswer } from "@/lib/usage"
 import { corsHeaders } from "./cors"
 import type { AnyOperation } from "./define-operation"
+import { jsonOf } from "./json-bytes"
 import { problemOf } from "./problem"
 import type { Progress } from "./progress"
 import { rateHeaders } from "./rate-headers"
@@ -37,7 +38,7 @@ export function success(
 
 function bodyOf({ status, pdf }: AnyOperation, output: unknown): string | Uint8Array | null {
   if (status === 204) return null
-  return pdf ? (output as Uint8Array) : JSON.stringify(output)
+  return pdf ? (output as Uint8Array) : jsonOf(output)
 }
 
 /** The answer that an earlier call with the same idempotency key got. */

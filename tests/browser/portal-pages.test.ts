@@ -55,7 +55,7 @@ describe.each(screens)("in the $colorScheme theme, $viewport.width pixels wide",
     "every page for $who is accessible, fits and has no error",
     { timeout: 300_000 },
     async ({ who, pages }) => {
-      const { page, complaints, close } = await (who ? signInAs(who, "/portal", screen) : visit("/", screen))
+      const { page, complaints, close } = await (who ? signInAs(who, pages[0], screen) : visit("/", screen))
       for (const path of pages) {
         const answer = await page.goto(path)
         expect(answer?.status(), path).toBe(200)
