@@ -185,6 +185,38 @@ describe("what is past its time", () => {
         count: "account_id = $1",
         values: [account_id],
       },
+      account_export: {
+        days: 0,
+        insert: `(account_id, id, requested_by, expires_at)
+          values ($2, gen_random_uuid()::text, 'u', now() - $1::interval)`,
+        count: "account_id = $1",
+        values: [account_id],
+      },
+      invitation: {
+        days: 30,
+        insert: `(account_id, id, email, role, token_digest, invited_by, expires_at)
+          values ($2, gen_random_uuid()::text, gen_random_uuid()::text, 'viewer',
+            sha256(gen_random_uuid()::text::bytea), 'u', now() - $1::interval)`,
+        count: "account_id = $1",
+        values: [account_id],
+      },
+      enquiry: {
+        days: 180,
+        insert: `(account_id, id, widget_id, page_origin, language, email, message, consent_version, consent_wording,
+            consented_at, created_at)
+          values ($2, gen_random_uuid()::text, 'w', 'o', 'en', 'e', 'm', 'v', 'w', now(), now() - $1::interval)`,
+        count: "account_id = $1",
+        values: [account_id],
+      },
+      tank_event: {
+        days: 400,
+        // Kept by whole days.
+        insert: `(account_id, session_id, widget_id, day)
+          values ($2, gen_random_uuid()::text, 'w',
+            current_date - case when $1::interval > interval '400 days' then 401 else 400 end)`,
+        count: "account_id = $1",
+        values: [account_id],
+      },
       key_reminder: {
         days: 30,
         insert: `(account_id, key_id, expires_at, days_before) values ($2, $2, now() - $1::interval, 1)`,
