@@ -53,7 +53,7 @@ export function Co2Field({
       viewBox={`0 0 ${size.width} ${size.height}`}
       role="img"
       aria-label={`pH ${water.ph} and KH ${water.kh_dkh} dKH among lines of equal CO2`}
-      className="w-full max-w-2xl font-mono text-[11px] max-sm:text-[15px]"
+      className="w-full max-w-2xl overflow-visible font-mono text-[11px] max-sm:text-[13px]"
     >
       <clipPath id={clip}>
         <rect x={box.left} y={box.top} width={box.width} height={box.height} />
