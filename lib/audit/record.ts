@@ -55,6 +55,7 @@ export const actionNames = {
   "report.created": "Report made",
   "report.deleted": "Report deleted",
   "report.shared": "Report shared",
+  "report.sent": "Report sent by mail",
   "report.unshared": "Sharing of a report ended",
 } as const
 

@@ -8,6 +8,18 @@ export function showReport({ ctx, input }: Call<{ readonly report_id: string }>)
   return withTenant(ctx.account_id, (trx) => findReport(trx, ctx, input.report_id))
 }
 
+/** The same inside a transaction, which holds the report until it ends. */
+export async function lockReport(trx: Trx, ctx: Ctx, report_id: string): Promise<Report> {
+  await trx
+    .selectFrom("report")
+    .select("id")
+    .where("account_id", "=", ctx.account_id)
+    .where("id", "=", report_id)
+    .forUpdate()
+    .execute()
+  return findReport(trx, ctx, report_id)
+}
+
 export async function findReport(trx: Trx, ctx: Ctx, report_id: string): Promise<Report> {
   const row = await trx
     .selectFrom("report")

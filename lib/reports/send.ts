@@ -1,10 +1,12 @@
 import { withTenant } from "@/db"
+import { recordAct } from "@/lib/audit"
 import type { Call } from "@/lib/context"
 import { TarnwrightError } from "@/lib/errors"
 import { enqueueMail } from "@/lib/mail"
 import { rateLimiter } from "@/lib/usage"
 import { findReport, showReport } from "./find"
 import { authorizeOn } from "./may-manage"
+import type { Report } from "./report"
 import { shareReport } from "./share"
 import { sheetOf } from "./sheet"
 
@@ -40,14 +42,21 @@ export async function sendReport({
         account_name: name,
         title: report.title,
         summary: sheet.answer.map(({ name, metric }) => `${name}: ${metric}`),
-        cautions: report.answer.cautions
-          .filter(({ severity }) => severity === "danger")
-          .map(({ message }) => `Danger: ${message}`),
+        cautions: [
+          ...cautionsOf(report, "danger").map((message) => `Danger: ${message}`),
+          ...cautionsOf(report, "warning").map((message) => `Caution: ${message}`),
+        ],
         url,
       },
     })
+    // Not to whom: the address is kept nowhere.
+    await recordAct(trx, ctx, { action: "report.sent", target: report.id, detail: { title: report.title } })
   })
   return { url, email: input.email }
+}
+
+function cautionsOf({ answer }: Report, wanted: string): string[] {
+  return answer.cautions.filter(({ severity }) => severity === wanted).map(({ message }) => message)
 }
 
 async function refuseFlood(account_id: string, email: string): Promise<void> {

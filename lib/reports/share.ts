@@ -5,7 +5,7 @@ import { recordAct } from "@/lib/audit"
 import type { Call, Ctx } from "@/lib/context"
 import { env } from "@/lib/env"
 import { TarnwrightError } from "@/lib/errors"
-import { findReport } from "./find"
+import { lockReport } from "./find"
 import { authorizeOn } from "./may-manage"
 import type { Report } from "./report"
 
@@ -23,7 +23,7 @@ export function sharedUrl(slug: string): string {
  */
 export function shareReport({ ctx, input }: Call<OfReport>): Promise<{ share_slug: string; url: string }> {
   return withTenant(ctx.account_id, async (trx) => {
-    const report = await findReport(trx, ctx, input.report_id)
+    const report = await lockReport(trx, ctx, input.report_id)
     authorizeOn(ctx, report)
     const share_slug = report.share_slug ?? (await startSharing(trx, ctx, report))
     return { share_slug, url: sharedUrl(share_slug) }
@@ -40,7 +40,7 @@ async function startSharing(trx: Trx, ctx: Ctx, { id, title }: Report): Promise<
 /** Ends the sharing of a report: its page is gone at once, and a new one has a new address. */
 export function unshareReport({ ctx, input }: Call<OfReport>): Promise<void> {
   return withTenant(ctx.account_id, async (trx) => {
-    const report = await findReport(trx, ctx, input.report_id)
+    const report = await lockReport(trx, ctx, input.report_id)
     authorizeOn(ctx, report)
     if (report.share_slug === null) return
     await setSlug(trx, ctx, report.id, null)

@@ -5,8 +5,12 @@ import request from "supertest"
 import { afterAll, beforeAll, describe, expect, it } from "vitest"
 import { renderReport } from "@/app/report/pdf/render"
 import { closePools, withTenant } from "@/db"
+import { listActs } from "@/lib/audit"
+import { sendReport } from "@/lib/reports"
 import { createTestAccount, type TestAccount } from "../support/account"
+import { waitForMail } from "../support/mailbox"
 import { stack, takeSettings } from "../support/stack"
+import { createSubscriber } from "../support/subscriber"
 
 const water = { ph: 6.8, kh_dkh: 4 }
 const tank = {
@@ -198,6 +202,42 @@ describe("a shared report", () => {
     await expect(readSharedReport(slug)).rejects.toThrow("not shared")
     const { body: anew } = await call("post", `/${id}/share`).send({}).expect(200)
     expect(anew.shared_url).not.toBe(body.shared_url)
+  })
+})
+
+describe("a report that is sent", () => {
+  it("carries its answer, its dangers, its cautions and its link, and leaves the address in no table", async () => {
+    const shop = await createSubscriber({ plan: "brand" })
+    const ctx = shop.as("owner")
+    const key = (await shop.key({ scopes: ["reports"] })).secret
+    const { body: made } = await call("post", "", key)
+      .send({ kind: "plan", input: tank, title: "Sent" })
+      .expect(201)
+    const email = `${randomUUID()}@fernhollow.test`
+    const { url } = await sendReport({ ctx, input: { report_id: made.id, email } })
+    const { text } = await waitForMail(email, "Sent")
+    expect(text).toContain(`Hold the pH at: ${made.answer.result.ph.ph.toFixed(2)}`)
+    expect(text).toContain("Danger: This feed is")
+    expect(text).toContain("Caution: ")
+    expect(text).toContain(url)
+    const acts = await listActs({ ctx, input: { limit: 10 } })
+    expect(JSON.stringify(acts)).toContain("report.sent")
+    expect(JSON.stringify(acts)).not.toContain(email)
+  })
+
+  it("has one address, whoever shares it at the same time", async () => {
+    const shop = await createSubscriber({ plan: "brand" })
+    const key = (await shop.key({ scopes: ["reports"] })).secret
+    const { body: made } = await call("post", "", key)
+      .send({ kind: "carbonate_co2", input: water })
+      .expect(201)
+    const urls = await Promise.all(
+      Array.from(
+        { length: 8 },
+        async () => (await call("post", `/${made.id}/share`, key).send({})).body.shared_url,
+      ),
+    )
+    expect(new Set(urls).size).toBe(1)
   })
 })
 

@@ -47,6 +47,12 @@ async function startOwn(): Promise<Owned> {
   const base = path.resolve(import.meta.dirname, "../../.data")
   mkdirSync(base, { recursive: true })
   const dataDir = mkdtempSync(path.join(base, "test-"))
-  const stack = await startStack({ dataDir, port: 0, withNext: process.env.TARN_TEST_API_ONLY !== "1" })
-  return { stack, dataDir }
+  try {
+    const stack = await startStack({ dataDir, port: 0, withNext: process.env.TARN_TEST_API_ONLY !== "1" })
+    return { stack, dataDir }
+  } catch (error) {
+    removeCluster(dataDir)
+    rmSync(dataDir, { recursive: true, force: true })
+    throw error
+  }
 }

@@ -16,7 +16,7 @@ const waiting = new Map<number, Waiting>()
 let orders = 0
 
 /**
- * A report as the bytes of a PDF file. Setting a plan takes about half a second of a processor, so it is done by one
+ * A report as the bytes of a PDF file. Setting a plan takes a second or so of a processor, so it is done by one
  * thread beside the server's own, a report after the other; it is started with the first and keeps nobody from ending.
  */
 export function renderReport(report: PrintedReport): Promise<Uint8Array> {
