@@ -42,7 +42,7 @@ it("a report is opened, shared, read without a sign-in, saved as a PDF, and gone
   await page.getByRole("button", { name: "Delete" }).click()
   await page.getByRole("button", { name: "Delete the report" }).click()
   await page.waitForURL(/\/reports$/)
-  expect(await page.getByRole("link", { name: title }).count()).toBe(0)
+  await page.getByRole("link", { name: title }).waitFor({ state: "detached" })
   expect(complaints).toEqual([])
   await close()
 })

@@ -1,6 +1,6 @@
 "use client"
 
-import { useMutation } from "@tanstack/react-query"
+import { useMutation, useQueryClient } from "@tanstack/react-query"
 import { useRouter } from "next/navigation"
 import { useState } from "react"
 import { ask, detailOf } from "@/app/ui/api"
@@ -28,6 +28,7 @@ export function HandOver({
 }) {
   const path = `/api/portal/${account}/reports/${report.id}`
   const router = useRouter()
+  const cache = useQueryClient()
   const [sharedUrl, setSharedUrl] = useState(report.shared_url)
   const [isDeleting, setDeleting] = useState(false)
   const share = useMutation({
@@ -78,7 +79,11 @@ export function HandOver({
           account={account}
           report={{ ...report, shared_url: sharedUrl }}
           onClose={() => setDeleting(false)}
-          onDone={() => router.push(`/portal/${account}/reports`)}
+          onDone={() => {
+            // The list was read before, and would show it still.
+            cache.removeQueries({ queryKey: [account, "reports"] })
+            router.push(`/portal/${account}/reports`)
+          }}
         />
       )}
     </div>

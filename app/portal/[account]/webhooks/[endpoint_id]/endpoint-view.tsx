@@ -1,6 +1,6 @@
 "use client"
 
-import { useMutation, useQuery } from "@tanstack/react-query"
+import { useMutation, useQuery, useQueryClient } from "@tanstack/react-query"
 import { useRouter } from "next/navigation"
 import { useMemo, useState } from "react"
 import { ask, detailOf } from "@/app/ui/api"
@@ -35,6 +35,7 @@ interface Props {
 export function EndpointView({ account, endpoint, initial, events, failures, manages }: Props) {
   const path = `/api/portal/${account}/webhooks/${endpoint.id}`
   const router = useRouter()
+  const cache = useQueryClient()
   const { data, error, refetch } = useQuery({
     queryKey: [account, "webhooks", endpoint.id],
     queryFn: () => ask<Delivery[]>("GET", `${path}/deliveries`),
@@ -122,7 +123,11 @@ export function EndpointView({ account, endpoint, initial, events, failures, man
         <DeleteEndpoint
           path={path}
           url={endpoint.url}
-          onDone={() => router.push(`/portal/${account}/webhooks`)}
+          onDone={() => {
+            // The list was read before, and would show it still.
+            cache.removeQueries({ queryKey: [account, "webhooks"], exact: true })
+            router.push(`/portal/${account}/webhooks`)
+          }}
           onClose={() => setAct(undefined)}
         />
       )}
