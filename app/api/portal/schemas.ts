@@ -78,7 +78,7 @@ export const spendingCapInput = z.strictObject({ overage_cap_minor: z.number().i
 export const requestsInput = z.strictObject({
   outcome: z.enum(["success", "refused"]).optional(),
   key_id: z.string().max(64).optional(),
-  /** Instant and request of the last call of the page before. */
+  /** Exact instant and id of the last row of the page before. */
   before_at: z.iso.datetime({ offset: true }).optional(),
   before_id: z.string().max(64).optional(),
 })

@@ -42,16 +42,7 @@ export function Requests({ account, initial, keyNames, days }: Props) {
       getNextPageParam: (page: Logged[]) => (page.length === REQUESTS_A_PAGE ? page.at(-1) : undefined),
       ...(isFirst && { initialData: { pages: [initial], pageParams: [undefined] } }),
     })
-  const rows = useMemo(
-    () =>
-      once(
-        (data?.pages.flat() ?? []).map((call) => ({
-          ...call,
-          id: `${call.request_id} ${call.what} ${call.at}`,
-        })),
-      ),
-    [data],
-  )
+  const rows = useMemo(() => data?.pages.flat() ?? [], [data])
   const columns = useMemo(() => columnsOf(keyNames, setOpened), [keyNames])
   return (
     <>
@@ -116,23 +107,18 @@ export function Requests({ account, initial, keyNames, days }: Props) {
   )
 }
 
-/** A page may begin with calls that the one before showed. */
-function once<Row extends { readonly id: string }>(rows: readonly Row[]): Row[] {
-  return [...new Map(rows.map((row) => [row.id, row])).values()]
-}
-
 function queryOf(outcome: Outcome, key_id: string, last: Logged | undefined): URLSearchParams {
   return new URLSearchParams({
     ...(outcome && { outcome }),
     ...(key_id && { key_id }),
-    ...(last && { before_at: last.at, before_id: last.request_id }),
+    ...(last && { before_at: last.exact_at, before_id: last.id }),
   })
 }
 
 function columnsOf(
   keyNames: Readonly<Record<string, string>>,
   onOpen: (call: Logged) => void,
-): readonly Column<Logged & { id: string }>[] {
+): readonly Column<Logged>[] {
   return [
     { id: "at", header: "When", value: ({ at }) => at, cell: ({ at }) => <Minute at={at} /> },
     {
