@@ -30,12 +30,16 @@ export function logRefusal(refusal: Refusal): void {
 }
 
 async function flush(refusals: Refusal[]): Promise<undefined[]> {
+  // A client may send one request id on all its calls: of those in one flush one is kept, or the whole would fail.
+  const distinct = [
+    ...new Map(refusals.map((refusal) => [`${refusal.account_id} ${refusal.id}`, refusal])).values(),
+  ]
   await statement("app", {
     name: "log_refusals",
     text: "select log_refusals($1)",
-    values: [JSON.stringify(refusals)],
+    values: [JSON.stringify(distinct)],
   })
-  await warnOfExposed(refusals)
+  await warnOfExposed(distinct)
   return refusals.map(() => undefined)
 }
 

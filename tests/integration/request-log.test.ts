@@ -39,3 +39,20 @@ it("the request log gives each call once, page by page, also where a client send
   const instants = seen.map(({ exact_at }) => exact_at)
   expect(instants).toEqual([...instants].sort().reverse())
 })
+
+it("refusals under one client id at the same time do not keep each other, or anybody else's, out of the log", async () => {
+  const [one, other] = [await createTestAccount(), await createTestAccount()]
+  const refuse = async (account: typeof one, id: string) => {
+    const { secret } = await account.key()
+    return request(stack().appUrl)
+      .post("/api/v1/carbonate/co2")
+      .set("authorization", `Bearer ${secret}`)
+      .set("x-request-id", id)
+      .send({ ph: 66, kh_dkh: 4 })
+      .expect(422)
+  }
+  await Promise.all([...Array.from({ length: 8 }, () => refuse(one, "the-same")), refuse(other, "another")])
+  const loggedOf = ({ ctx }: typeof one) => listCalls({ ctx, input: { limit: 20, outcome: "refused" } })
+  await expect.poll(async () => (await loggedOf(other)).length, { timeout: 5_000 }).toBe(1)
+  expect((await loggedOf(one)).length).toBeGreaterThan(0)
+})
