@@ -15,7 +15,7 @@ import { mkdirSync, readFileSync, writeFileSync } from "node:fs"
 import path from "node:path"
 import { gzipSync } from "node:zlib"
 import { type BuildOptions, build } from "esbuild"
-import { bareQuantities } from "./bare-quantities"
+import { bareTables } from "./bare-tables"
 import { cssAsText } from "./css-as-text"
 import { languages } from "./shared/locale"
 import type { Address } from "./shared/mount"
@@ -67,12 +67,11 @@ if (isTooLarge) {
   process.exitCode = 1
 }
 
-async function bundle(entry: string, options: BuildOptions = {}): Promise<string> {
-  const { outputFiles } = await build({
+async function bundle(entry: string, more: BuildOptions = {}): Promise<string> {
+  const options: BuildOptions = {
     absWorkingDir: root,
     entryPoints: [entry],
     bundle: true,
-    write: false,
     format: "esm",
     target: "es2022",
     minify: true,
@@ -83,9 +82,11 @@ async function bundle(entry: string, options: BuildOptions = {}): Promise<string
       "react-dom/client": "preact/compat/client",
       "react/jsx-runtime": "preact/jsx-runtime",
     },
-    plugins: [cssAsText, bareQuantities],
-    ...options,
-  })
+    plugins: [cssAsText],
+    ...more,
+  }
+  const plugins = [cssAsText, await bareTables(options)]
+  const { outputFiles } = await build({ ...options, plugins, write: false })
   return outputFiles![0]!.text
 }
 
