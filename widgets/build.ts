@@ -15,7 +15,7 @@ import { mkdirSync, readFileSync, writeFileSync } from "node:fs"
 import path from "node:path"
 import { gzipSync } from "node:zlib"
 import { type BuildOptions, build } from "esbuild"
-import { bareTables } from "./bare-tables"
+import { bareQuantities } from "./bare-quantities"
 import { cssAsText } from "./css-as-text"
 import { languages } from "./shared/locale"
 import type { Address } from "./shared/mount"
@@ -67,11 +67,12 @@ if (isTooLarge) {
   process.exitCode = 1
 }
 
-async function bundle(entry: string, more: BuildOptions = {}): Promise<string> {
-  const options: BuildOptions = {
+async function bundle(entry: string, options: BuildOptions = {}): Promise<string> {
+  const { outputFiles } = await build({
     absWorkingDir: root,
     entryPoints: [entry],
     bundle: true,
+    write: false,
     format: "esm",
     target: "es2022",
     minify: true,
@@ -82,11 +83,9 @@ async function bundle(entry: string, more: BuildOptions = {}): Promise<string> {
       "react-dom/client": "preact/compat/client",
       "react/jsx-runtime": "preact/jsx-runtime",
     },
-    plugins: [cssAsText],
-    ...more,
-  }
-  const plugins = [cssAsText, await bareTables(options)]
-  const { outputFiles } = await build({ ...options, plugins, write: false })
+    plugins: [cssAsText, bareQuantities],
+    ...options,
+  })
   return outputFiles![0]!.text
 }
 

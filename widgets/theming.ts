@@ -40,17 +40,5 @@ export const themeProperties: readonly ThemeProperty[] = [
 export const parts = [
   ...["widget", "header", "title", "notice", "button", "footer", "link", "ask"],
   ...["inputs", "field", "label", "slider", "number", "unit", "problem", "measured"],
-  ...[
-    "outcome",
-    "figure",
-    "level",
-    "facts",
-    "ruler",
-    "sentence",
-    "set-point",
-    "cautions",
-    "caution",
-    "map",
-    "method",
-  ],
+  ...["outcome", "figure", "level", "ruler", "sentence", "set-point", "cautions", "caution", "map", "method"],
 ] as const

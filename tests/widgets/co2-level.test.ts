@@ -6,17 +6,17 @@ import { messages as en } from "@/widgets/co2-level/messages/en"
 import { messages as es } from "@/widgets/co2-level/messages/es"
 import { messages as ja } from "@/widgets/co2-level/messages/ja"
 import {
-  co2Level,
   type Event,
   impossibleField,
   khTests,
+  nextState,
   phMeters,
   type State,
+  startState,
 } from "@/widgets/co2-level/state"
 import { cautionWords, setPointWords, wordsOf } from "@/widgets/co2-level/words"
-import { gravestFirst } from "@/widgets/shared/gravest-first"
 import { chooseLocale, numberWriter } from "@/widgets/shared/locale"
-import { isCurrent, nextSheet, startSheet } from "@/widgets/shared/sheet"
+import { isCurrent } from "@/widgets/shared/sheet"
 
 const english = chooseLocale(["en"])
 const write = numberWriter(english)
@@ -24,11 +24,11 @@ const speech = { locale: english, messages: en }
 const catalogues = { en, de, es, ja }
 
 function start(settings = {}): State {
-  return startSheet(co2Level, settings, write)
+  return startState({ settings }, write)
 }
 
 function told(events: Event[], from = start()): State {
-  return events.reduce((state, event) => nextSheet(co2Level, state, event, write), from)
+  return events.reduce((state, event) => nextState(state, event, write), from)
 }
 
 const ph = (text: string): Event => ({ type: "typed", field: "ph", text })
@@ -143,7 +143,7 @@ describe("the words of the answer", () => {
 
   it("write numbers as the shopper's locale does", () => {
     const german = chooseLocale(["de"])
-    const state = startSheet(co2Level, {}, numberWriter(german))
+    const state = startState({ settings: {} }, numberWriter(german))
     const spoken = { locale: german, messages: de }
     expect(wordsOf(state, spoken).ph).toBe("6,8")
     expect(setPointWords(state.answer, spoken)?.advice).toMatch(/pH 6,6\d stellen/)
@@ -202,7 +202,7 @@ describe("the words of the answer", () => {
   })
 
   it("put the gravest caution first", () => {
-    const severities = gravestFirst(told([ph("6.2")]).answer.cautions).map(({ severity }) => severity)
+    const severities = told([ph("6.2")]).answer.cautions.map(({ severity }) => severity)
     expect(severities[0]).toBe("danger")
     expect(severities).toEqual([...severities].sort((a, b) => order.indexOf(a) - order.indexOf(b)))
   })

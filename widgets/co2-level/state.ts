@@ -2,7 +2,17 @@ import type { Caution, Method } from "@/lib/chemistry/answer"
 import { carbonateDefaults } from "@/lib/chemistry/carbonate-water"
 import { type Co2Result, co2FromPh } from "@/lib/chemistry/co2-from-ph"
 import { type PhResult, phForCo2 } from "@/lib/chemistry/ph-for-co2"
-import { type Asked, attempt, type Sheet, type SheetEvent, type SheetKind } from "@/widgets/shared/sheet"
+import type { WriteNumber } from "@/widgets/shared/field"
+import {
+  type Asked,
+  attempt,
+  nextSheet,
+  type Sheet,
+  type SheetEvent,
+  type SheetKind,
+  startSheet,
+} from "@/widgets/shared/sheet"
+import type { ShownWidget } from "@/widgets/shared/shown-widget"
 import { waterFields } from "@/widgets/shared/water-fields"
 
 export const fieldNames = ["ph", "kh_dkh", "temperature_c"] as const
@@ -37,8 +47,7 @@ export interface Reading {
 export type State = Sheet<FieldName, Choices, Reading>
 export type Event = SheetEvent<FieldName, Choices>
 
-/** The calculator, to be shown as a sheet. */
-export const co2Level: SheetKind<FieldName, Choices, Reading> = {
+const co2Level: SheetKind<FieldName, Choices, Reading> = {
   fields: waterFields,
   // What a planted tank that runs well may read; a widget's own settings go before it.
   usual: {
@@ -46,6 +55,21 @@ export const co2Level: SheetKind<FieldName, Choices, Reading> = {
     choices: { phMeter: "pen", khTest: "coarse" },
   },
   work: readingOf,
+}
+
+/** The calculator before anybody has touched it. */
+export function startState({ settings = {} }: Pick<ShownWidget, "settings">, write: WriteNumber): State {
+  const units: Record<FieldName, string | null> = {
+    ph: null,
+    kh_dkh: settings.kh_unit ?? null,
+    temperature_c: settings.temperature_unit ?? null,
+  }
+  return startSheet(co2Level, settings.start ?? {}, (name) => units[name], write)
+}
+
+/** The state after an event. */
+export function nextState(state: State, event: Event, write: WriteNumber): State {
+  return nextSheet(co2Level, state, event, write)
 }
 
 /** Field that has to change because the water cannot be so, though each number alone is good. */
@@ -65,7 +89,7 @@ function readingOf({ values, choices }: Asked<FieldName, Choices>): Reading {
   const setPoint = attempt(() => phForCo2({ ...known, co2_mg_l: TARGET_CO2_MG_L }))
   return {
     result,
-    cautions: [...cautions, ...setPointCautions(cautions, setPoint?.cautions ?? [])],
+    cautions: [...cautions, ...setPointCautions(cautions, setPoint?.cautions ?? [])].sort(bySeverity),
     method,
     setPoint: setPoint?.result ?? null,
   }
@@ -75,4 +99,10 @@ function readingOf({ values, choices }: Asked<FieldName, Choices>): Reading {
 function setPointCautions(said: readonly Caution[], more: readonly Caution[]): Caution[] {
   const codes = new Set([...said.map(({ code }) => code), "livestock", "raise_slowly"])
   return more.filter(({ code }) => !codes.has(code))
+}
+
+const severities = ["danger", "warning", "info"]
+
+function bySeverity(a: Caution, b: Caution): number {
+  return severities.indexOf(a.severity) - severities.indexOf(b.severity)
 }

@@ -1,5 +1,4 @@
 import type { Caution } from "@/lib/chemistry/answer"
-import { gravestFirst } from "./gravest-first"
 import type { SharedMessages } from "./messages/shared-messages"
 
 interface CautionsProps {
@@ -13,7 +12,7 @@ interface CautionsProps {
 export function Cautions({ cautions, messages, say }: CautionsProps) {
   return (
     <ul className="cautions" part="cautions" aria-label={messages.cautionsTitle}>
-      {gravestFirst(cautions).map((caution) => {
+      {cautions.map((caution) => {
         const text = say(caution)
         return (
           <li key={caution.code} className={`caution ${caution.severity}`} part="caution">

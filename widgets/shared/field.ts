@@ -1,12 +1,4 @@
-import {
-  type BaseUnit,
-  differenceToBase,
-  fromBase,
-  systems,
-  toBase,
-  type UnitId,
-  units,
-} from "@/lib/units/convert"
+import { differenceToBase, fromBase, toBase, type UnitId, units } from "@/lib/units/convert"
 import { parseDecimal } from "./decimal"
 
 /** A unit in which a person may give a quantity, with what the slider spans and its step in that unit. */
@@ -44,21 +36,6 @@ export type WriteNumber = (value: number, decimals: number) => string
 export function fieldOf(kind: FieldKind, value: number, unitId: string | null, write: WriteNumber): Field {
   const unit = kind.units.find(({ id }) => id === unitId) ?? kind.units[0]
   return { value, unit, text: write(shownValue(value, unit), unit.decimals), problem: null }
-}
-
-/** Which units a retailer prefers. */
-export interface Preference {
-  readonly units?: string
-  readonly kh_unit?: string
-  readonly temperature_unit?: string
-}
-
-/** The unit of a kind that is preferred; null: its first. Hardness and temperature are chosen apart from the system. */
-export function preferredUnit(kind: FieldKind, { units: system, ...apart }: Preference): string | null {
-  const own = kind.units.find(({ id }) => id === apart.kh_unit || id === apart.temperature_unit)
-  if (own) return own.id
-  const [{ id }] = kind.units
-  return (system === "us" && id && systems.us[units[id].base as BaseUnit]) || null
 }
 
 /** The field after a person typed into it. What cannot be used leaves the last value that could. */

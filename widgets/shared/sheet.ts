@@ -1,6 +1,5 @@
 import { OutOfDomain } from "@/lib/units/out-of-domain"
-import { type Field, type FieldKind, fieldOf, preferredUnit, slid, typed, type WriteNumber } from "./field"
-import type { ShownWidget } from "./shown-widget"
+import { type Field, type FieldKind, fieldOf, slid, typed, type WriteNumber } from "./field"
 
 /** What a calculator is asked: a value for each field, in the engine's units, and what was chosen beside them. */
 export interface Asked<Name extends string, Choices extends object> {
@@ -12,8 +11,6 @@ export interface Asked<Name extends string, Choices extends object> {
 export interface SheetKind<Name extends string, Choices extends object, Answer> {
   readonly fields: Readonly<Record<Name, FieldKind>>
   readonly usual: Asked<Name, Choices>
-  /** Whether a field is asked for with these choices; absent: every field always is. */
-  isAsked?(name: Name, choices: Choices): boolean
   /** Throws `OutOfDomain` where the values cannot be so together. */
   work(asked: Asked<Name, Choices>): Answer
 }
@@ -41,18 +38,16 @@ export type SheetEvent<Name extends string, Choices extends object> =
 /** The calculator before anybody has touched it. A start that cannot be gives way to the usual one. */
 export function startSheet<Name extends string, Choices extends object, Answer>(
   kind: SheetKind<Name, Choices, Answer>,
-  settings: NonNullable<ShownWidget["settings"]>,
+  start: Readonly<Record<string, number>>,
+  unitOf: (field: Name) => string | null,
   write: WriteNumber,
 ): Sheet<Name, Choices, Answer> {
-  const { start = {} } = settings
   const wanted = eachField(kind, (name) => start[name] ?? kind.usual.values[name])
   const asked = { values: wanted, choices: kind.usual.choices }
   const answer = attempt(() => kind.work(asked))
   const { values } = answer === null ? kind.usual : asked
   return {
-    fields: eachField(kind, (name) =>
-      fieldOf(kind.fields[name], values[name], preferredUnit(kind.fields[name], settings), write),
-    ),
+    fields: eachField(kind, (name) => fieldOf(kind.fields[name], values[name], unitOf(name), write)),
     choices: kind.usual.choices,
     answer: answer ?? kind.work(kind.usual),
     asked: { values, choices: kind.usual.choices },
@@ -91,14 +86,6 @@ export function nextSheet<Name extends string, Choices extends object, Answer>(
   }
 }
 
-/** The fields that count with these choices, in their order. */
-export function askedFor<Name extends string, Choices extends object, Answer>(
-  kind: SheetKind<Name, Choices, Answer>,
-  choices: Choices,
-): Name[] {
-  return namesOf(kind.fields).filter((name) => kind.isAsked?.(name, choices) ?? true)
-}
-
 /** Whether the answer shown is of what stands in the fields. */
 export function isCurrent<Name extends string, Choices extends object, Answer>({
   fields,
@@ -119,8 +106,7 @@ function workedOut<Name extends string, Choices extends object, Answer>(
   sheet: Sheet<Name, Choices, Answer>,
 ): Sheet<Name, Choices, Answer> {
   const { fields, choices, isPaused } = sheet
-  if (isPaused || askedFor(kind, choices).some((name) => fields[name].problem))
-    return { ...sheet, refused: null }
+  if (isPaused || namesOf(fields).some((name) => fields[name].problem)) return { ...sheet, refused: null }
   const asked = { values: eachField(kind, (name) => fields[name].value), choices }
   try {
     return { ...sheet, asked, answer: kind.work(asked), refused: null }

@@ -1,5 +1,3 @@
-import type { CatalogItem } from "@/lib/plan/match"
-
 /** What the service says about a widget. Everything but the calculator may be missing: an older answer lacks it. */
 export interface ShownWidget {
   readonly calculator: string
@@ -8,7 +6,6 @@ export interface ShownWidget {
     readonly theme?: string
     readonly kh_unit?: string
     readonly temperature_unit?: string
-    readonly units?: string
     readonly start?: Readonly<Record<string, number>>
     /** The page that says how the shop treats personal data; null: it takes no questions. */
     readonly enquiries?: { readonly privacy_url: string } | null
@@ -17,6 +14,4 @@ export interface ShownWidget {
     readonly link?: { readonly label: string; readonly url: string } | null
   }
   readonly credit_line?: boolean
-  /** Parts of the shop's own that it wants to be considered. */
-  readonly parts?: readonly CatalogItem[]
 }
